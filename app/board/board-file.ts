@@ -1,0 +1,202 @@
+import { z } from 'zod';
+
+/**
+ * The board file (`*.board.json`) and the sources file, exactly as on disk: millimetres, megahertz, nanoseconds,
+ * volts. Unknown keys are refused by name. Conversion to SI happens once, in `board.ts`.
+ */
+
+const finite = z.number();
+const positive = z.number().positive();
+const notNegative = z.number().nonnegative();
+const pointMm = z.tuple([finite, finite]);
+const point3Mm = z.tuple([finite, finite, finite]);
+const name = z.string().min(1).max(1000);
+
+const polygonMm = z.array(pointMm).min(3);
+
+const copperLayer = z.strictObject({ name, kind: z.literal('copper'), thicknessMm: notNegative });
+const dielectricLayer = z.strictObject({
+  name,
+  kind: z.literal('dielectric'),
+  thicknessMm: notNegative,
+  epsilonR: z.number().min(1),
+  lossTangent: notNegative.optional(),
+  /** True when the importer had to guess the permittivity: said in every result. */
+  guessed: z.boolean().optional(),
+});
+
+const trace = z.strictObject({ layer: name, widthMm: positive, pointsMm: z.array(pointMm).min(2) });
+const via = z.strictObject({ atMm: pointMm, fromLayer: name, toLayer: name, drillMm: positive });
+const pin = z.strictObject({ name, atMm: pointMm, layer: name });
+
+const net = z.strictObject({
+  name,
+  traces: z.array(trace).optional(),
+  vias: z.array(via).optional(),
+  pins: z.array(pin).optional(),
+  z0Ohm: positive.optional(),
+  epsilonEff: z.number().min(1).optional(),
+  returnPath: z.strictObject({ layer: name, pointsMm: z.array(pointMm).min(2) }).optional(),
+});
+
+const plane = z.strictObject({
+  layer: name,
+  net: name,
+  pointsMm: polygonMm.optional(),
+  cutoutsMm: z.array(polygonMm).optional(),
+});
+
+const waveformBase = { name, clockDomain: name.optional() };
+
+const trapezoidV = z.strictObject({
+  ...waveformBase,
+  kind: z.literal('trapezoid'),
+  frequencyMhz: positive,
+  lowV: finite.optional(),
+  highV: finite.optional(),
+  lowA: finite.optional(),
+  highA: finite.optional(),
+  dutyPercent: z.number().gt(0).lt(100).default(50),
+  riseNs: notNegative,
+  fallNs: notNegative,
+});
+
+const randomData = z.strictObject({
+  ...waveformBase,
+  kind: z.literal('random-data'),
+  bitRateMbps: positive,
+  lowV: finite.optional(),
+  highV: finite.optional(),
+  lowA: finite.optional(),
+  highA: finite.optional(),
+  riseNs: notNegative,
+  fallNs: notNegative,
+  sequenceBits: z.int().min(3).max(32767).default(127),
+});
+
+const samples = z.strictObject({
+  ...waveformBase,
+  kind: z.literal('samples'),
+  file: z.string().min(1),
+  periodNs: positive,
+});
+
+const piecewise = z.strictObject({
+  ...waveformBase,
+  kind: z.literal('piecewise'),
+  periodNs: positive,
+  pointsNsV: z
+    .array(z.tuple([finite, finite]))
+    .min(2)
+    .optional(),
+  pointsNsA: z
+    .array(z.tuple([finite, finite]))
+    .min(2)
+    .optional(),
+});
+
+const lines = z.strictObject({
+  ...waveformBase,
+  kind: z.literal('lines'),
+  lines: z
+    .array(
+      z.strictObject({
+        frequencyMhz: positive,
+        amplitudeV: finite.optional(),
+        amplitudeA: finite.optional(),
+        phaseDeg: finite.default(0),
+      }),
+    )
+    .min(1),
+});
+
+const waveform = z.discriminatedUnion('kind', [trapezoidV, randomData, samples, piecewise, lines]);
+
+const drive = z.strictObject({
+  net: name,
+  pin: name.optional(),
+  waveform: name,
+  sourceOhm: notNegative.default(0),
+  seriesOhm: notNegative.default(0),
+  delayNs: finite.default(0),
+  inverted: z.boolean().default(false),
+});
+
+const load = z.strictObject({
+  net: name,
+  pin: name.optional(),
+  resistanceOhm: notNegative.optional(),
+  capacitancePf: notNegative.optional(),
+});
+
+const loop = z.strictObject({
+  name,
+  pointsMm: z.array(point3Mm).min(3),
+  waveform: name,
+  delayNs: finite.default(0),
+  inverted: z.boolean().default(false),
+});
+
+const cable = z.strictObject({
+  name,
+  pointsMm: z.array(point3Mm).min(2),
+  radiusMm: positive.default(1),
+  farEnd: z
+    .union([z.literal('open'), z.literal('ground'), z.strictObject({ resistanceOhm: notNegative })])
+    .default('open'),
+  seriesOhm: notNegative.optional(),
+  /** Impedance at the connector: [MHz, R ohm, X ohm] rows, rising in frequency. */
+  seriesImpedance: z
+    .array(z.tuple([positive, notNegative, finite]))
+    .min(1)
+    .optional(),
+  /** Stated common-mode current: [MHz, µA rms] rows; then the cable is not solved for. */
+  commonModeUa: z
+    .array(z.tuple([positive, notNegative]))
+    .min(1)
+    .optional(),
+});
+
+const structure = z.strictObject({
+  planes: z.enum(['solved', 'pair-only']).optional(),
+  cellMm: positive.optional(),
+});
+
+const sourcesShape = {
+  waveforms: z.array(waveform).optional(),
+  drives: z.array(drive).optional(),
+  loads: z.array(load).optional(),
+  loops: z.array(loop).optional(),
+  cables: z.array(cable).optional(),
+};
+
+export const boardFileSchema = z.strictObject({
+  format: z.literal('quietboard-board'),
+  version: z.literal(1),
+  name: z.string(),
+  revision: z.string().default(''),
+  notes: z.string().optional(),
+  outline: z
+    .array(z.strictObject({ pointsMm: polygonMm }))
+    .min(1)
+    .optional(),
+  stackup: z.array(z.discriminatedUnion('kind', [copperLayer, dielectricLayer])).min(1),
+  planes: z.array(plane).optional(),
+  nets: z.array(net),
+  ...sourcesShape,
+  structure: structure.optional(),
+});
+
+export const sourcesFileSchema = z.strictObject({
+  format: z.literal('quietboard-sources'),
+  version: z.literal(1),
+  notes: z.string().optional(),
+  ...sourcesShape,
+});
+
+/** Board file after parsing (defaults filled in). */
+export type BoardFile = z.output<typeof boardFileSchema>;
+/** Board file as a writer may give it (defaults may be absent). */
+export type BoardFileInput = z.input<typeof boardFileSchema>;
+export type SourcesFile = z.output<typeof sourcesFileSchema>;
+export type WaveformFile = z.output<typeof waveform>;
