@@ -1,0 +1,58 @@
+/**
+ * How finely a field on the antenna's cylinder must be sampled. With e^(−jkR0)/R0 taken out, the field of sources within
+ * radius a is band-limited in angle and smooth in height.
+ * Source: O. M. Bucci, G. Franceschetti, On the degrees of freedom of scattered fields, IEEE Trans. AP 37(7), 1989.
+ */
+
+/** Highest angular harmonic that matters: ka + max(5, 9/ln(D/a)), sources within radius a seen from distance D. */
+export function angularOrder(kPerM: number, radiusM: number, distanceM: number): number {
+  if (radiusM <= 0) return 2;
+  return Math.ceil(kPerM * radiusM + 1.2 * Math.cbrt(kPerM * radiusM) + Math.max(5, 9 / Math.log(distanceM / radiusM)));
+}
+
+/** Chebyshev heights over the travel (1–4 m); found by comparison with the direct scan (see its property test). */
+export function heightCount(kPerM: number, radiusM: number, distanceM: number): number {
+  return Math.ceil(7 + 0.9 * kPerM * radiusM + (12 * radiusM) / distanceM);
+}
+
+/** Chebyshev points of the first kind on [low, high]. */
+export function chebyshevNodes(count: number, low: number, high: number): Float64Array {
+  return Float64Array.from(
+    { length: count },
+    (_, i) => (low + high) / 2 - ((high - low) / 2) * Math.cos((Math.PI * (i + 0.5)) / count),
+  );
+}
+
+/**
+ * Barycentric Lagrange weights at `x` for Chebyshev points of the first kind: value(x) = Σ out[i]·value(node i).
+ * Source: J.-P. Berrut, L. N. Trefethen, Barycentric Lagrange interpolation, SIAM Review 46(3), 2004, eq. 5.3.
+ */
+export function chebyshevWeights(nodes: Float64Array, x: number, out: Float64Array, offset = 0): void {
+  const count = nodes.length;
+  let sum = 0;
+  for (let i = 0; i < count; i++) {
+    const difference = x - nodes[i]!;
+    if (difference === 0) {
+      out.fill(0, offset, offset + count);
+      out[offset + i] = 1;
+      return;
+    }
+    const weight = ((i % 2 === 0 ? 1 : -1) * Math.sin((Math.PI * (i + 0.5)) / count)) / difference;
+    out[offset + i] = weight;
+    sum += weight;
+  }
+  for (let i = 0; i < count; i++) out[offset + i]! /= sum;
+}
+
+/**
+ * Trigonometric interpolation weights at `angleRad` for 2·order + 1 equally spaced angles from 0:
+ * the Dirichlet kernel sin((2N+1)x/2) / ((2N+1) sin(x/2)). Source: A. Zygmund, Trigonometric Series, chapter X.
+ */
+export function trigonometricWeights(order: number, angleRad: number, out: Float64Array, offset = 0): void {
+  const count = 2 * order + 1;
+  for (let i = 0; i < count; i++) {
+    const half = (angleRad - (2 * Math.PI * i) / count) / 2;
+    const denominator = count * Math.sin(half);
+    out[offset + i] = Math.abs(denominator) < 1e-12 ? Math.cos(count * half) / Math.cos(half) : Math.sin(count * half) / denominator;
+  }
+}
