@@ -53,6 +53,7 @@ export function trigonometricWeights(order: number, angleRad: number, out: Float
   for (let i = 0; i < count; i++) {
     const half = (angleRad - (2 * Math.PI * i) / count) / 2;
     const denominator = count * Math.sin(half);
-    out[offset + i] = Math.abs(denominator) < 1e-12 ? Math.cos(count * half) / Math.cos(half) : Math.sin(count * half) / denominator;
+    out[offset + i] =
+      Math.abs(denominator) < 1e-12 ? Math.cos(count * half) / Math.cos(half) : Math.sin(count * half) / denominator;
   }
 }

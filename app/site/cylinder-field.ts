@@ -1,0 +1,227 @@
+import type { FieldTerms } from '../fields/element-field.ts';
+import type { Radiator } from '../fields/element-set.ts';
+import { ETA0_OHM } from '../units/constants.ts';
+import { type Box, boxOf, MomentGrid } from './moment-grid.ts';
+import { angularOrder, chebyshevNodes, heightCount } from './sampling.ts';
+import { ANTENNA_HIGHEST_M, ANTENNA_LOWEST_M, type SiteKind } from './site.ts';
+
+/** Where the cylinder is sampled at one frequency. */
+export interface CylinderPlan {
+  readonly kPerM: number;
+  readonly radiusM: number;
+  /** Angular order N: 2N + 1 equally spaced angles from 0. */
+  readonly order: number;
+  /** Chebyshev heights on the antenna's travel, m. */
+  readonly heightsM: Float64Array;
+  /** Height the distance R0 counts from, m. */
+  readonly centreZM: number;
+  /** 1: direct part only (free space); 2: direct part and the part seen from the mirrored heights. */
+  readonly partCount: 1 | 2;
+}
+
+/** Plan for sources within a radius about the turntable axis, at one frequency. */
+export function cylinderPlan(
+  kPerM: number,
+  scanRadiusM: number,
+  radiators: readonly Radiator[],
+  site: SiteKind,
+): CylinderPlan {
+  const box = boxOf(radiators);
+  const centreZM = box ? (box.lowM[2] + box.highM[2]) / 2 : 0;
+  let sourceRadiusM = 0;
+  for (const { elements } of radiators) {
+    const { positionsM } = elements;
+    for (let e = 0; e < elements.count; e++) {
+      sourceRadiusM = Math.max(
+        sourceRadiusM,
+        Math.hypot(positionsM[3 * e]!, positionsM[3 * e + 1]!, positionsM[3 * e + 2]! - centreZM),
+      );
+    }
+  }
+  return {
+    kPerM,
+    radiusM: scanRadiusM,
+    order: angularOrder(kPerM, sourceRadiusM, scanRadiusM),
+    heightsM: chebyshevNodes(heightCount(kPerM, sourceRadiusM, scanRadiusM), ANTENNA_LOWEST_M, ANTENNA_HIGHEST_M),
+    centreZM,
+    partCount: site === 'ground-plane' ? 2 : 1,
+  };
+}
+
+/** Distance from the sources' centre to a point of the cylinder, m. */
+export const centreDistanceM = (plan: CylinderPlan, heightM: number): number =>
+  Math.hypot(plan.radiusM, heightM - plan.centreZM);
+
+/** Floats per sample: φ component and z component, each re then im. */
+export const SAMPLE_STRIDE = 4;
+
+/**
+ * Field of each domain's sources on the cylinder's sample points with e^(−jkR0)/R0 taken out.
+ *
+ * Returns per domain [part][angle][height][φ re, φ im, z re, z im] in V (V/m times m). Part 0 is seen at height h, part
+ * 1 at −h: by image theory the reflected field is E_φ(h) = −E_φ,direct(−h), E_z(h) = +E_z,direct(−h).
+ * Formula of the element: `addElementField`. Sources in the common box are first gathered on a Chebyshev grid when that
+ * grid has fewer points than there are elements.
+ */
+export function fieldOnCylinder(
+  domains: readonly (readonly Radiator[])[],
+  plan: CylinderPlan,
+  box: Box | null,
+  terms: FieldTerms = 'all',
+): Float64Array[] {
+  const shared = gatherSources(domains, plan.kPerM, box);
+  const angleCount = 2 * plan.order + 1;
+  const perDomain = plan.partCount * angleCount * plan.heightsM.length * SAMPLE_STRIDE;
+  const out = domains.map(() => new Float64Array(perDomain));
+  let at = 0;
+  for (let part = 0; part < plan.partCount; part++) {
+    for (let a = 0; a < angleCount; a++) {
+      const angleRad = (2 * Math.PI * a) / angleCount;
+      for (const heightM of plan.heightsM) {
+        const z = part === 0 ? heightM : -heightM;
+        for (const group of shared) addSample(group, plan, angleRad, z, terms, out, at);
+        at += SAMPLE_STRIDE;
+      }
+    }
+  }
+  return out;
+}
+
+/** Points that several domains may share, with the moments (6 floats a point) of each domain that has some there. */
+interface SourceGroup {
+  readonly positionsM: Float64Array;
+  readonly shares: readonly { readonly domain: number; readonly moments: Float64Array }[];
+}
+
+function gatherSources(
+  domains: readonly (readonly Radiator[])[],
+  kPerM: number,
+  box: Box | null,
+): readonly SourceGroup[] {
+  const boxed: Radiator[][] = [];
+  const loose: Radiator[][] = [];
+  let boxedCount = 0;
+  for (const radiators of domains) {
+    const inside: Radiator[] = [];
+    const outside: Radiator[] = [];
+    for (const radiator of radiators) {
+      if (box && isInside(radiator, box)) {
+        inside.push(radiator);
+        boxedCount += radiator.elements.count;
+      } else outside.push(radiator);
+    }
+    boxed.push(inside);
+    loose.push(outside);
+  }
+  const groups: SourceGroup[] = [];
+  if (box && boxedCount > 0 && MomentGrid.pointCount(box, kPerM) < boxedCount) {
+    const grid = new MomentGrid(box, kPerM);
+    groups.push({
+      positionsM: grid.positionsM,
+      shares: boxed.flatMap((radiators, domain) =>
+        radiators.length > 0 ? [{ domain, moments: grid.moments(radiators) }] : [],
+      ),
+    });
+  } else {
+    for (const [d, radiators] of boxed.entries()) loose[d]!.push(...radiators);
+  }
+  for (const [domain, radiators] of loose.entries()) {
+    for (const radiator of radiators) {
+      groups.push({
+        positionsM: radiator.elements.positionsM,
+        shares: [{ domain, moments: momentsOf(radiator) }],
+      });
+    }
+  }
+  return groups;
+}
+
+function isInside({ elements }: Radiator, box: Box): boolean {
+  const { positionsM } = elements;
+  for (let i = 0; i < positionsM.length; i++) {
+    const axis = i % 3;
+    if (positionsM[i]! < box.lowM[axis]! - 1e-9 || positionsM[i]! > box.highM[axis]! + 1e-9) return false;
+  }
+  return true;
+}
+
+function momentsOf({ elements, currentsA }: Radiator): Float64Array {
+  const moments = new Float64Array(6 * elements.count);
+  for (let e = 0; e < elements.count; e++) {
+    for (let axis = 0; axis < 3; axis++) {
+      moments[6 * e + 2 * axis] = currentsA[2 * e]! * elements.vectorsM[3 * e + axis]!;
+      moments[6 * e + 2 * axis + 1] = currentsA[2 * e + 1]! * elements.vectorsM[3 * e + axis]!;
+    }
+  }
+  return moments;
+}
+
+/** Adds one sample (an observer at angle and z) of every domain's field, with R0·e^(+jkR0) multiplied in. */
+function addSample(
+  { positionsM, shares }: SourceGroup,
+  plan: CylinderPlan,
+  angleRad: number,
+  zM: number,
+  terms: FieldTerms,
+  out: readonly Float64Array[],
+  at: number,
+): void {
+  const { kPerM, radiusM } = plan;
+  const cosA = Math.cos(angleRad);
+  const sinA = Math.sin(angleRad);
+  const ox = radiusM * cosA;
+  const oy = radiusM * sinA;
+  const r0M = centreDistanceM(plan, zM);
+  const isAll = terms === 'all';
+  const shareCount = shares.length;
+  for (let p = 0; p < positionsM.length / 3; p++) {
+    const rx = ox - positionsM[3 * p]!;
+    const ry = oy - positionsM[3 * p + 1]!;
+    const rz = zM - positionsM[3 * p + 2]!;
+    const inverse = 1 / Math.sqrt(rx * rx + ry * ry + rz * rz);
+    const rM = 1 / inverse;
+    const nx = rx * inverse;
+    const ny = ry * inverse;
+    const nz = rz * inverse;
+    const nPhi = ny * cosA - nx * sinA;
+    const phase = kPerM * (rM - r0M);
+    const scale = (ETA0_OHM / (4 * Math.PI)) * r0M * inverse;
+    const gRe = scale * Math.cos(phase);
+    const gIm = -scale * Math.sin(phase);
+    // far = g·jk, near = g·(1/R − j/(kR²)); E = (far + 3 near) n (n·m) − (far + near) m
+    const farRe = -gIm * kPerM;
+    const farIm = gRe * kPerM;
+    let nearRe = 0;
+    let nearIm = 0;
+    if (isAll) {
+      const second = (inverse * inverse) / kPerM;
+      nearRe = gRe * inverse + gIm * second;
+      nearIm = gIm * inverse - gRe * second;
+    }
+    const pRe = farRe + 3 * nearRe;
+    const pIm = farIm + 3 * nearIm;
+    const qRe = farRe + nearRe;
+    const qIm = farIm + nearIm;
+    for (let share = 0; share < shareCount; share++) {
+      const { domain, moments } = shares[share]!;
+      const m = 6 * p;
+      const xRe = moments[m]!;
+      const xIm = moments[m + 1]!;
+      const yRe = moments[m + 2]!;
+      const yIm = moments[m + 3]!;
+      const zRe = moments[m + 4]!;
+      const zIm = moments[m + 5]!;
+      const dotRe = nx * xRe + ny * yRe + nz * zRe;
+      const dotIm = nx * xIm + ny * yIm + nz * zIm;
+      const lRe = pRe * dotRe - pIm * dotIm;
+      const lIm = pRe * dotIm + pIm * dotRe;
+      const phiRe = yRe * cosA - xRe * sinA;
+      const phiIm = yIm * cosA - xIm * sinA;
+      const target = out[domain]!;
+      target[at]! += nPhi * lRe - (qRe * phiRe - qIm * phiIm);
+      target[at + 1]! += nPhi * lIm - (qRe * phiIm + qIm * phiRe);
+      target[at + 2]! += nz * lRe - (qRe * zRe - qIm * zIm);
+      target[at + 3]! += nz * lIm - (qRe * zIm + qIm * zRe);
+    }
+  }
+}

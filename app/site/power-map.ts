@@ -1,0 +1,158 @@
+import { type CylinderPlan, centreDistanceM, SAMPLE_STRIDE } from './cylinder-field.ts';
+import { chebyshevNodes, chebyshevWeights, trigonometricWeights } from './sampling.ts';
+import { ANTENNA_HIGHEST_M, ANTENNA_LOWEST_M } from './site.ts';
+
+/** Horizontal (φ) or vertical (z) component. */
+export type Component = 'horizontal' | 'vertical';
+
+/**
+ * Power of all domains on the antenna's cylinder, exact between its samples.
+ *
+ * The total of a direct part d and a mirrored part i with the phase factors R0 put back is
+ *   P = Σ|d|²/Rd² + Σ|i|²/Ri² ± 2 Re(Σ d i* e^(−jk(Rd − Ri)))/(Rd Ri),
+ * and each of the three sums over domains is a trigonometric polynomial of twice the field's order in angle and of twice
+ * its degree in height: it is sampled on 4N + 1 angles and 2H − 1 heights, so any number of domains costs one search.
+ */
+export class PowerMap {
+  readonly plan: CylinderPlan;
+  readonly component: Component;
+  readonly order: number;
+  readonly heightsM: Float64Array;
+  /** [angle][height][direct power, mirrored power, cross re, cross im]. */
+  readonly #sums: Float64Array;
+  readonly #toFine: FineWeights;
+
+  constructor(plan: CylinderPlan, component: Component) {
+    this.plan = plan;
+    this.component = component;
+    this.order = 2 * plan.order;
+    this.heightsM = chebyshevNodes(2 * plan.heightsM.length - 1, ANTENNA_LOWEST_M, ANTENNA_HIGHEST_M);
+    this.#sums = new Float64Array((2 * this.order + 1) * this.heightsM.length * 4);
+    this.#toFine = fineWeights(plan);
+  }
+
+  /** Adds one domain's field (as `fieldOnCylinder` returns it). */
+  addDomain(samples: Float64Array): void {
+    const direct = this.#refine(samples, 0);
+    const mirrored = this.plan.partCount === 2 ? this.#refine(samples, 1) : null;
+    const sums = this.#sums;
+    for (let i = 0; i < direct.length / 2; i++) {
+      const dRe = direct[2 * i]!;
+      const dIm = direct[2 * i + 1]!;
+      sums[4 * i]! += dRe * dRe + dIm * dIm;
+      if (!mirrored) continue;
+      const mRe = mirrored[2 * i]!;
+      const mIm = mirrored[2 * i + 1]!;
+      sums[4 * i + 1]! += mRe * mRe + mIm * mIm;
+      sums[4 * i + 2]! += dRe * mRe + dIm * mIm;
+      sums[4 * i + 3]! += dIm * mRe - dRe * mIm;
+    }
+  }
+
+  /** One part of the field on the fine angles and heights: [angle][height][re, im]. */
+  #refine(samples: Float64Array, part: number): Float64Array {
+    const { plan } = this;
+    const coarseAngles = 2 * plan.order + 1;
+    const coarseHeights = plan.heightsM.length;
+    const fineAngles = 2 * this.order + 1;
+    const fineHeights = this.heightsM.length;
+    const { angleWeights, heightWeights } = this.#toFine;
+    const offset = this.component === 'horizontal' ? 0 : 2;
+    const half = new Float64Array(2 * coarseAngles * fineHeights);
+    for (let a = 0; a < coarseAngles; a++) {
+      for (let f = 0; f < fineHeights; f++) {
+        let re = 0;
+        let im = 0;
+        for (let h = 0; h < coarseHeights; h++) {
+          const weight = heightWeights[f * coarseHeights + h]!;
+          const at = ((part * coarseAngles + a) * coarseHeights + h) * SAMPLE_STRIDE + offset;
+          re += weight * samples[at]!;
+          im += weight * samples[at + 1]!;
+        }
+        half[2 * (a * fineHeights + f)] = re;
+        half[2 * (a * fineHeights + f) + 1] = im;
+      }
+    }
+    const out = new Float64Array(2 * fineAngles * fineHeights);
+    for (let fa = 0; fa < fineAngles; fa++) {
+      for (let a = 0; a < coarseAngles; a++) {
+        const weight = angleWeights[fa * coarseAngles + a]!;
+        const from = 2 * a * fineHeights;
+        const to = 2 * fa * fineHeights;
+        for (let i = 0; i < 2 * fineHeights; i++) out[to + i]! += weight * half[from + i]!;
+      }
+    }
+    return out;
+  }
+
+  /** Power (peak phasor squared, V²/m²) at one height on the fine angles, given the height's weights. */
+  rowAt(heightM: number, heightWeights: Float64Array, offset: number, out: Float64Array): void {
+    const { plan } = this;
+    const directM = centreDistanceM(plan, heightM);
+    const mirroredM = centreDistanceM(plan, -heightM);
+    const sign = this.component === 'horizontal' ? -2 : 2;
+    const phase = plan.kPerM * (directM - mirroredM);
+    const crossRe = (sign * Math.cos(phase)) / (directM * mirroredM);
+    const crossIm = (sign * Math.sin(phase)) / (directM * mirroredM);
+    const first = 1 / directM ** 2;
+    const second = 1 / mirroredM ** 2;
+    const count = this.heightsM.length;
+    for (let a = 0; a < out.length; a++) {
+      let direct = 0;
+      let mirrored = 0;
+      let re = 0;
+      let im = 0;
+      for (let h = 0; h < count; h++) {
+        const weight = heightWeights[offset + h]!;
+        const at = 4 * (a * count + h);
+        direct += weight * this.#sums[at]!;
+        mirrored += weight * this.#sums[at + 1]!;
+        re += weight * this.#sums[at + 2]!;
+        im += weight * this.#sums[at + 3]!;
+      }
+      out[a] = direct * first + (plan.partCount === 2 ? mirrored * second + re * crossRe + im * crossIm : 0);
+    }
+  }
+
+  /** Power at any angle and height, V²/m² (peak phasor squared). */
+  powerAt(angleRad: number, heightM: number): number {
+    const heightWeights = new Float64Array(this.heightsM.length);
+    chebyshevWeights(this.heightsM, heightM, heightWeights);
+    const row = new Float64Array(2 * this.order + 1);
+    this.rowAt(heightM, heightWeights, 0, row);
+    const angleWeights = new Float64Array(row.length);
+    trigonometricWeights(this.order, angleRad, angleWeights);
+    let power = 0;
+    for (let a = 0; a < row.length; a++) power += angleWeights[a]! * row[a]!;
+    return power;
+  }
+}
+
+interface FineWeights {
+  readonly angleWeights: Float64Array;
+  readonly heightWeights: Float64Array;
+}
+
+const knownFineWeights = new Map<string, FineWeights>();
+
+/** Interpolation from a plan's samples to its power map's samples; depends on the two counts alone. */
+function fineWeights(plan: CylinderPlan): FineWeights {
+  const coarseAngles = 2 * plan.order + 1;
+  const coarseHeights = plan.heightsM.length;
+  const key = `${coarseAngles} ${coarseHeights}`;
+  const known = knownFineWeights.get(key);
+  if (known) return known;
+  const fineAngles = 4 * plan.order + 1;
+  const angleWeights = new Float64Array(fineAngles * coarseAngles);
+  for (let a = 0; a < fineAngles; a++) {
+    trigonometricWeights(plan.order, (2 * Math.PI * a) / fineAngles, angleWeights, a * coarseAngles);
+  }
+  const fineHeightsM = chebyshevNodes(2 * coarseHeights - 1, ANTENNA_LOWEST_M, ANTENNA_HIGHEST_M);
+  const heightWeights = new Float64Array(fineHeightsM.length * coarseHeights);
+  for (const [i, heightM] of fineHeightsM.entries()) {
+    chebyshevWeights(plan.heightsM, heightM, heightWeights, i * coarseHeights);
+  }
+  const weights = { angleWeights, heightWeights };
+  knownFineWeights.set(key, weights);
+  return weights;
+}
