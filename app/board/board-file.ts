@@ -1,15 +1,18 @@
 import { z } from 'zod';
+import { waveformSchema } from './waveform-file.ts';
 
 /**
  * The board file (`*.board.json`) and the sources file, exactly as on disk: millimetres, megahertz, nanoseconds,
- * volts. Unknown keys are refused by name. Conversion to SI happens once, in `board.ts`.
+ * volts. Unknown keys are refused by name. Conversion to SI happens once, in `to-board.ts`.
  */
 
+/** Coordinates stay within 100 m of the origin: more is a file in another unit. */
 const finite = z.number();
+const coordinateMm = z.number().min(-1e5).max(1e5);
 const positive = z.number().positive();
 const notNegative = z.number().nonnegative();
-const pointMm = z.tuple([finite, finite]);
-const point3Mm = z.tuple([finite, finite, finite]);
+const pointMm = z.tuple([coordinateMm, coordinateMm]);
+const point3Mm = z.tuple([coordinateMm, coordinateMm, coordinateMm]);
 const name = z.string().min(1).max(1000);
 
 const polygonMm = z.array(pointMm).min(3);
@@ -46,72 +49,6 @@ const plane = z.strictObject({
   cutoutsMm: z.array(polygonMm).optional(),
 });
 
-const waveformBase = { name, clockDomain: name.optional() };
-
-const trapezoidV = z.strictObject({
-  ...waveformBase,
-  kind: z.literal('trapezoid'),
-  frequencyMhz: positive,
-  lowV: finite.optional(),
-  highV: finite.optional(),
-  lowA: finite.optional(),
-  highA: finite.optional(),
-  dutyPercent: z.number().gt(0).lt(100).default(50),
-  riseNs: notNegative,
-  fallNs: notNegative,
-});
-
-const randomData = z.strictObject({
-  ...waveformBase,
-  kind: z.literal('random-data'),
-  bitRateMbps: positive,
-  lowV: finite.optional(),
-  highV: finite.optional(),
-  lowA: finite.optional(),
-  highA: finite.optional(),
-  riseNs: notNegative,
-  fallNs: notNegative,
-  sequenceBits: z.int().min(3).max(32767).default(127),
-});
-
-const samples = z.strictObject({
-  ...waveformBase,
-  kind: z.literal('samples'),
-  file: z.string().min(1),
-  periodNs: positive,
-});
-
-const piecewise = z.strictObject({
-  ...waveformBase,
-  kind: z.literal('piecewise'),
-  periodNs: positive,
-  pointsNsV: z
-    .array(z.tuple([finite, finite]))
-    .min(2)
-    .optional(),
-  pointsNsA: z
-    .array(z.tuple([finite, finite]))
-    .min(2)
-    .optional(),
-});
-
-const lines = z.strictObject({
-  ...waveformBase,
-  kind: z.literal('lines'),
-  lines: z
-    .array(
-      z.strictObject({
-        frequencyMhz: positive,
-        amplitudeV: finite.optional(),
-        amplitudeA: finite.optional(),
-        phaseDeg: finite.default(0),
-      }),
-    )
-    .min(1),
-});
-
-const waveform = z.discriminatedUnion('kind', [trapezoidV, randomData, samples, piecewise, lines]);
-
 const drive = z.strictObject({
   net: name,
   pin: name.optional(),
@@ -138,11 +75,16 @@ const loop = z.strictObject({
 });
 
 const cable = z.strictObject({
-  name,
+  /** Results list where a current radiates from: "pair" (trace and return), "plane", or a cable by its name. */
+  name: name.refine((text) => text !== 'pair' && text !== 'plane', {
+    error: 'another name than "pair" and "plane" (results use these two)',
+  }),
   pointsMm: z.array(point3Mm).min(2),
   radiusMm: positive.default(1),
   farEnd: z
-    .union([z.literal('open'), z.literal('ground'), z.strictObject({ resistanceOhm: notNegative })])
+    .union([z.literal('open'), z.literal('ground'), z.strictObject({ resistanceOhm: notNegative })], {
+      error: '"open", "ground" or { "resistanceOhm": a number of at least 0 }',
+    })
     .default('open'),
   seriesOhm: notNegative.optional(),
   /** Impedance at the connector: [MHz, R ohm, X ohm] rows, rising in frequency. */
@@ -163,7 +105,7 @@ const structure = z.strictObject({
 });
 
 const sourcesShape = {
-  waveforms: z.array(waveform).optional(),
+  waveforms: z.array(waveformSchema).optional(),
   drives: z.array(drive).optional(),
   loads: z.array(load).optional(),
   loops: z.array(loop).optional(),
@@ -199,4 +141,3 @@ export type BoardFile = z.output<typeof boardFileSchema>;
 /** Board file as a writer may give it (defaults may be absent). */
 export type BoardFileInput = z.input<typeof boardFileSchema>;
 export type SourcesFile = z.output<typeof sourcesFileSchema>;
-export type WaveformFile = z.output<typeof waveform>;
