@@ -48,7 +48,9 @@ export class PlaneIndex {
     const below = this.#nearest(fromM, toM, layerIndex, ownNet, 1);
     const above = this.#nearest(fromM, toM, layerIndex, ownNet, -1);
     const serving = [below, above].filter((found) => found !== null && found.fraction >= SERVING_FRACTION);
-    const partial = [below, above].filter((found) => found !== null).sort((one, other) => other!.fraction - one!.fraction);
+    const partial = [below, above]
+      .filter((found) => found !== null)
+      .sort((one, other) => other!.fraction - one!.fraction);
     const chosen = (serving.length > 0 ? serving : partial.slice(0, 1)) as Candidate[];
     if (chosen.length === 0) return { planes: [], gaps: [{ from: 0, to: 1 }] };
     const inverse = chosen.map(({ plane }) => 1 / plane.heightM);
@@ -72,7 +74,8 @@ export class PlaneIndex {
         areas.map(({ region }) => region),
       );
       const fraction = covered.reduce((sum, { from, to }) => sum + to - from, 0);
-      if (fraction > (best?.fraction ?? 0)) best = { plane: this.#planeAt(layerIndex, i, areas, fromM, toM), covered, fraction };
+      if (fraction > (best?.fraction ?? 0))
+        best = { plane: this.#planeAt(layerIndex, i, areas, fromM, toM), covered, fraction };
       if (fraction >= SERVING_FRACTION) break;
     }
     return best;

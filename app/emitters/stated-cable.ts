@@ -1,0 +1,110 @@
+import type { Cable } from '../board/board.ts';
+import { inputError } from '../errors.ts';
+import { type SiteFrame, type SiteKind, TABLE_HEIGHT_M, toSitePoint } from '../site/site.ts';
+import { ETA0_OHM, SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
+import { elementsAlong, type StraightElements } from './straight-elements.ts';
+
+/** The last point of a grounded cable must be this close to the site's ground, m. */
+const GROUND_TOLERANCE_M = 1e-3;
+
+/** A cable whose common-mode current is stated (measured by a clamp, or assumed). */
+export interface StatedCable {
+  readonly name: string;
+  readonly along: StraightElements;
+  readonly table: NonNullable<Cable['commonModeRms']>;
+  /** Reflection of the current wave's voltage at the far end: 1 open, −1 grounded. */
+  readonly farReflection: number;
+}
+
+export function buildStatedCable(cable: Cable, frame: SiteFrame, site: SiteKind, maxHz: number): StatedCable {
+  const sitePoints = cable.pointsM.map((point) => toSitePoint(frame, point));
+  const endZM = sitePoints.at(-1)![2];
+  if (site === 'ground-plane') {
+    const lowest = Math.min(...sitePoints.map(([, , z]) => z));
+    if (lowest < -GROUND_TOLERANCE_M) {
+      throw inputError(
+        `cable ${cable.name}`,
+        'above the ground plane',
+        `a point ${(-lowest * 1e3).toFixed(1)} mm below it`,
+      );
+    }
+  }
+  if (cable.farEnd === 'ground') {
+    if (site !== 'ground-plane') {
+      throw inputError(`cable ${cable.name}: farEnd`, 'open in free space, where there is no ground to join', 'ground');
+    }
+    if (Math.abs(endZM) > GROUND_TOLERANCE_M) {
+      throw inputError(
+        `cable ${cable.name}: last point`,
+        `within 1 mm of the ground plane (z = −${TABLE_HEIGHT_M * 1e3} mm on a board lying flat)`,
+        `${(endZM * 1e3).toFixed(1)} mm above it`,
+      );
+    }
+  }
+  const along = elementsAlong(frame, cable.pointsM, maxHz);
+  return {
+    name: cable.name,
+    along,
+    table: cable.commonModeRms ?? [],
+    farReflection: farReflection(cable, endZM),
+  };
+}
+
+/** A wire over ground at height H: Z = (η0/2π)·acosh(H/radius) (Pozar, Microwave Engineering, table 2.1, by imaging). */
+function farReflection({ farEnd, radiusM }: Cable, endZM: number): number {
+  if (farEnd === 'open') return 1;
+  if (farEnd === 'ground') return -1;
+  const waveOhm = (ETA0_OHM / (2 * Math.PI)) * Math.acosh(Math.max(2, endZM / radiusM));
+  return (farEnd.resistanceOhm - waveOhm) / (farEnd.resistanceOhm + waveOhm);
+}
+
+/** Stated current (rms, A) at a frequency, linear over log frequency between the points; 0 outside them. */
+export function statedCurrentRmsA(table: StatedCable['table'], frequencyHz: number): number {
+  const first = table[0];
+  const last = table.at(-1);
+  if (!first || !last) return 0;
+  const slack = 1 + 1e-9;
+  if (frequencyHz < first.frequencyHz / slack || frequencyHz > last.frequencyHz * slack) return 0;
+  for (let i = 1; i < table.length; i++) {
+    const low = table[i - 1]!;
+    const high = table[i]!;
+    if (frequencyHz > high.frequencyHz) continue;
+    const part = Math.log(frequencyHz / low.frequencyHz) / Math.log(high.frequencyHz / low.frequencyHz);
+    return low.currentRmsA + Math.max(0, part) * (high.currentRmsA - low.currentRmsA);
+  }
+  return last.currentRmsA;
+}
+
+/**
+ * Standing wave I(s) ∝ e^(jk(L−s)) − Γ e^(−jk(L−s)) along the cable (open: sin k(L−s), grounded: cos k(L−s)), scaled so
+ * that its largest magnitude along the cable is the stated current. Peak phasors, A, one per element.
+ */
+export function statedCableCurrents(cable: StatedCable, frequencyHz: number): Float64Array {
+  const { alongM, lengthM } = cable.along;
+  const kPerM = (2 * Math.PI * frequencyHz) / SPEED_OF_LIGHT_M_PER_S;
+  const peakA = Math.SQRT2 * statedCurrentRmsA(cable.table, frequencyHz);
+  const shape = (distanceFromEndM: number): [number, number] => {
+    const x = kPerM * distanceFromEndM;
+    return [(1 - cable.farReflection) * Math.cos(x), (1 + cable.farReflection) * Math.sin(x)];
+  };
+  const scale = peakA / largestMagnitude(shape, kPerM, lengthM, cable.farReflection);
+  const currents = new Float64Array(2 * alongM.length);
+  for (let i = 0; i < alongM.length; i++) {
+    const [re, im] = shape(lengthM - alongM[i]!);
+    currents[2 * i] = scale * re;
+    currents[2 * i + 1] = scale * im;
+  }
+  return currents;
+}
+
+/** Largest |shape| on 0…L: at an extremum (every quarter wave from the end) when one lies on the cable, or at an end. */
+function largestMagnitude(
+  shape: (distanceM: number) => [number, number],
+  kPerM: number,
+  lengthM: number,
+  reflection: number,
+): number {
+  const extremumM = reflection > 0 ? Math.PI / 2 / kPerM : 0;
+  const places = extremumM <= lengthM ? [extremumM, 0, lengthM] : [0, lengthM];
+  return Math.max(...places.map((place) => Math.hypot(...shape(place))));
+}
