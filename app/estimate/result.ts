@@ -82,4 +82,6 @@ export interface EstimateResult {
   readonly findings: readonly Finding[];
   /** What the user should know about choices the program made (pins chosen, drives without a net …). */
   readonly notes: readonly string[];
+  /** The standing cautions that go with every estimate. */
+  readonly cautions: readonly string[];
 }

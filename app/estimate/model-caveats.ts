@@ -1,0 +1,180 @@
+import type { Board } from '../board/board.ts';
+import type { Caveat } from '../errors.ts';
+import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
+import { hzToMhz } from '../units/convert.ts';
+import type { EstimateRequest } from './estimate-request.ts';
+import type { Finding } from './result.ts';
+import type { Scene } from './scene.ts';
+
+/** A trace loop counts as small up to a tenth of a wavelength around. */
+const SMALL_LOOP_WAVELENGTHS = 0.1;
+
+/** Everything of the model that does not fit this board, said by name and frequency range (physics 10). */
+export function modelCaveats(
+  scene: Scene,
+  request: EstimateRequest,
+  fromHz: number,
+  toHz: number,
+  findings: readonly Finding[],
+  sharedHz: readonly number[],
+): Caveat[] {
+  const { board } = scene;
+  const everywhere = { fromHz: 0, toHz: 0 };
+  const caveats: Caveat[] = [];
+  if (request.structure === 'pair-only') {
+    caveats.push({
+      code: 'structure-not-solved',
+      message:
+        'traces radiate with their return only: the common-mode current on planes and cables is left out. It rules above a few hundred megahertz and, with a cable attached, from 30 MHz on (tens of dB)',
+      where: '',
+      ...everywhere,
+    });
+  }
+  caveats.push(...sizeCaveats(scene, toHz), ...cableCaveats(board, scene, fromHz, toHz), ...stackupCaveats(board));
+  caveats.push(...lineCaveats(scene, toHz), ...undrivenCaveats(board), ...findingCaveats(findings));
+  if (sharedHz.length > 0) {
+    caveats.push({
+      code: 'several-lines-in-bandwidth',
+      message: `${sharedHz.length} lines share the receiver's bandwidth with others: average is their rms sum, peak and quasi-peak their linear sum (an upper bound)`,
+      where: '',
+      fromHz: sharedHz[0]!,
+      toHz: sharedHz.at(-1)!,
+    });
+  }
+  return caveats;
+}
+
+function sizeCaveats(scene: Scene, toHz: number): Caveat[] {
+  const caveats: Caveat[] = [];
+  const boardM = diagonalM(scene.board);
+  const halfWaveHz = SPEED_OF_LIGHT_M_PER_S / (2 * boardM);
+  if (halfWaveHz < toHz) {
+    caveats.push({
+      code: 'board-larger-than-half-wave',
+      message: `the board's diagonal of ${(boardM * 1e3).toFixed(0)} mm is half a wave at ${hzToMhz(halfWaveHz).toFixed(0)} MHz: plane resonances above are not in the trace pairs`,
+      where: '',
+      fromHz: halfWaveHz,
+      toHz,
+    });
+  }
+  for (const { name, perimeterM } of scene.loops.values()) {
+    const fromHz = (SMALL_LOOP_WAVELENGTHS * SPEED_OF_LIGHT_M_PER_S) / perimeterM;
+    if (fromHz < toHz) {
+      caveats.push({
+        code: 'loop-not-small',
+        message: 'the loop is longer than a tenth of a wave around: one current all the way is no longer right',
+        where: `loop ${name}`,
+        fromHz,
+        toHz,
+      });
+    }
+  }
+  return caveats;
+}
+
+function diagonalM(board: Board): number {
+  const xs = board.outlineM.flatMap((ring) => ring.map(([x]) => x));
+  const ys = board.outlineM.flatMap((ring) => ring.map(([, y]) => y));
+  const span = (values: readonly number[]) => values.reduce((a, b) => Math.max(a, b)) - values.reduce((a, b) => Math.min(a, b));
+  return Math.hypot(span(xs), span(ys));
+}
+
+/** References that name a connector by common practice: J, P, X, CN, CON, K with a number. */
+const CONNECTOR_PIN = /^(J|P|X|CN|CON|USB|K)\d+\b/i;
+
+function cableCaveats(board: Board, scene: Scene, fromHz: number, toHz: number): Caveat[] {
+  const connectors = new Set(
+    board.nets.flatMap(({ pins }) => pins.map(({ name }) => name.split('.')[0]!).filter((ref) => CONNECTOR_PIN.test(ref))),
+  );
+  if (board.cables.length === 0) {
+    if (connectors.size === 0) return [];
+    return [
+      {
+        code: 'no-cable-modelled',
+        message: `the board seems to have connectors (${[...connectors].slice(0, 5).join(', ')}) but no cable is modelled: cables usually decide`,
+        where: '',
+        fromHz: 0,
+        toHz: 0,
+      },
+    ];
+  }
+  const caveats: Caveat[] = board.cables
+    .filter(({ commonModeRms }) => commonModeRms === undefined)
+    .map(({ name }) => ({
+      code: 'cable-not-solved',
+      message: 'no current is stated for this cable and planes and cables are not solved: it radiates nothing here',
+      where: `cable ${name}`,
+      fromHz: 0,
+      toHz: 0,
+    }));
+  for (const { name, table } of scene.cables) {
+    const lowHz = table[0]!.frequencyHz;
+    const highHz = table.at(-1)!.frequencyHz;
+    if (lowHz > fromHz * 1.001 || highHz < toHz / 1.001) {
+      caveats.push({
+        code: 'cable-current-range',
+        message: `its current is stated from ${hzToMhz(lowHz)} to ${hzToMhz(highHz)} MHz only; outside it is taken as none`,
+        where: `cable ${name}`,
+        fromHz,
+        toHz,
+      });
+    }
+  }
+  return caveats;
+}
+
+function stackupCaveats(board: Board): Caveat[] {
+  const guessed = board.stackup.filter(({ isGuessed }) => isGuessed).map(({ name }) => name);
+  if (guessed.length === 0) return [];
+  return [
+    {
+      code: 'permittivity-guessed',
+      message: 'the layout file states no permittivity; a typical value was put in: check it with the board maker',
+      where: guessed.slice(0, 6).join(', '),
+      fromHz: 0,
+      toHz: 0,
+    },
+  ];
+}
+
+/** One row for each kind of line caveat, however many segments share it. */
+function lineCaveats(scene: Scene, toHz: number): Caveat[] {
+  const merged = new Map<string, Caveat>();
+  for (const model of scene.nets.values()) {
+    for (const caveat of model.caveats) {
+      if (caveat.toHz > 0 && caveat.fromHz > toHz) continue;
+      const key = JSON.stringify([caveat.code, model.name]);
+      const known = merged.get(key);
+      merged.set(key, known ? { ...known, fromHz: Math.min(known.fromHz, caveat.fromHz) } : caveat);
+    }
+  }
+  return [...merged.values()];
+}
+
+function undrivenCaveats(board: Board): Caveat[] {
+  const driven = new Set(board.drives.map(({ net }) => net));
+  const open = board.nets.filter(({ name, traces }) => traces.length > 0 && !driven.has(name)).map(({ name }) => name);
+  if (open.length === 0) return [];
+  return [
+    {
+      code: 'nets-without-drive',
+      message: `${open.length} ${open.length === 1 ? 'net has' : 'nets have'} traces but no drive and radiate nothing here`,
+      where: open.slice(0, 6).join(', ') + (open.length > 6 ? ', …' : ''),
+      fromHz: 0,
+      toHz: 0,
+    },
+  ];
+}
+
+const FINDING_CAVEATS: Readonly<Record<string, string>> = {
+  'plane-gap': 'a trace runs where its reference plane is missing; its return is taken straight on, though it must go around',
+  'return-changes-plane': 'a layer change leaves the return no near way between planes; it is taken to cross beside the via',
+};
+
+function findingCaveats(findings: readonly Finding[]): Caveat[] {
+  return Object.entries(FINDING_CAVEATS).flatMap(([code, message]) => {
+    const nets = [...new Set(findings.filter((finding) => finding.code === code).map(({ net }) => net))];
+    if (nets.length === 0) return [];
+    return [{ code, message, where: nets.slice(0, 6).join(', ') + (nets.length > 6 ? ', …' : ''), fromHz: 0, toHz: 0 }];
+  });
+}
