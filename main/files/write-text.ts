@@ -1,0 +1,72 @@
+import { randomBytes } from 'node:crypto';
+import { rmSync } from 'node:fs';
+import { access, constants, type FileHandle, open, realpath, rename, rm, stat, writeFile } from 'node:fs/promises';
+import { basename, dirname, join } from 'node:path';
+import { fileError } from '../../app/errors.ts';
+import { fileFailure } from './file-failure.ts';
+
+/** Temporary files that exist now; a host that is stopped removes them. */
+const temporaryFiles = new Set<string>();
+
+/** Removes temporary files of writes that are under way. For the moment before the process ends. */
+export function removeTemporaryFiles(): void {
+  for (const file of temporaryFiles) rmSync(file, { force: true });
+}
+
+/**
+ * Writes a file whole or not at all: to a temporary file in the same folder, to the disk, then renamed. A failure leaves
+ * the old file as it was. Links are followed; devices and pipes are written directly. Throws `file`.
+ */
+export async function writeText(file: string, text: string): Promise<void> {
+  await requireWritable(file);
+  try {
+    const kind = await stat(file).catch(() => undefined);
+    if (kind !== undefined && !kind.isFile()) {
+      await writeFile(file, text);
+      return;
+    }
+    const target = kind === undefined ? file : await realpath(file);
+    const temporary = join(dirname(target), `.${basename(target).slice(0, 100)}.${randomBytes(6).toString('hex')}.tmp`);
+    temporaryFiles.add(temporary);
+    try {
+      const handle = await open(temporary, 'wx', kind === undefined ? 0o666 : kind.mode & 0o777);
+      await writeAndClose(handle, text);
+      await rename(temporary, target);
+    } catch (error) {
+      await rm(temporary, { force: true });
+      throw error;
+    } finally {
+      temporaryFiles.delete(temporary);
+    }
+  } catch (error) {
+    throw fileFailure(file, 'written', error);
+  }
+}
+
+async function writeAndClose(handle: FileHandle, text: string): Promise<void> {
+  try {
+    await handle.writeFile(text);
+    await handle.sync();
+  } finally {
+    await handle.close();
+  }
+}
+
+/** Throws `file` when the file cannot be created or replaced, so that a long job need not run to find out. */
+export async function requireWritable(file: string): Promise<void> {
+  const folder = dirname(file);
+  const folderStat = await stat(folder).catch((error: unknown) => error as NodeJS.ErrnoException);
+  if (folderStat instanceof Error) {
+    if (folderStat.code === 'ENOENT') throw fileError(file, `cannot be written: the folder ${folder} does not exist`);
+    throw fileFailure(file, 'written', folderStat);
+  }
+  if (!folderStat.isDirectory()) throw fileError(file, `cannot be written: ${folder} is not a folder`);
+  const kind = await stat(file).catch(() => undefined);
+  if (kind?.isDirectory()) throw fileError(file, 'cannot be written: is a folder, not a file');
+  try {
+    if (kind !== undefined) await access(file, constants.W_OK);
+    if (kind === undefined || kind.isFile()) await access(folder, constants.W_OK | constants.X_OK);
+  } catch (error) {
+    throw fileFailure(file, 'written', error);
+  }
+}
