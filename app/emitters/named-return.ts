@@ -1,8 +1,9 @@
 import type { Board, Net, Point3M } from '../board/board.ts';
 import { inputError } from '../errors.ts';
 import { gaussLegendre } from '../fields/quadrature.ts';
-import { effectiveDielectric } from '../lines/effective-dielectric.ts';
-import { type Line, lineOf } from '../lines/line.ts';
+import { effectiveDielectric } from '../lines/dielectric.ts';
+import type { Line } from '../lines/cross-section.ts';
+import { lineOf } from '../lines/line.ts';
 import type { NetGraph } from '../network/net-graph.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
 import { type Chain, chainFrom, PolylineM } from './chain.ts';

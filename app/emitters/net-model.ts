@@ -1,7 +1,7 @@
 import type { Board, Drive, Net } from '../board/board.ts';
 import { type Caveat, inputError } from '../errors.ts';
 import type { Finding } from '../estimate/result.ts';
-import type { Line } from '../lines/line.ts';
+import type { Line } from '../lines/cross-section.ts';
 import { buildNetGraph, type GraphSegment, type NetGraph } from '../network/net-graph.ts';
 import type { Network } from '../network/solve-network.ts';
 import { viaInductanceH } from '../network/via.ts';
@@ -151,7 +151,7 @@ function fillGaps(graph: NetGraph, references: readonly SegmentReference[]): Seg
   });
 }
 
-function closest<T extends { segment: GraphSegment }>(to: GraphSegment, among: readonly T[]): T | null {
+function closest<T extends { readonly segment: GraphSegment }>(to: GraphSegment, among: readonly T[]): T | null {
   let best: T | null = null;
   let leastM = Infinity;
   for (const candidate of among) {

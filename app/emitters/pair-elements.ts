@@ -1,6 +1,6 @@
 import type { Point3M, PointM } from '../board/board.ts';
 import { gaussLegendre, quadraturePoints } from '../fields/quadrature.ts';
-import { effectiveDielectric } from '../lines/effective-dielectric.ts';
+import { effectiveDielectric } from '../lines/dielectric.ts';
 import type { ReferencePlane } from '../returns/reference.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
 import type { RuleCollector } from './rule-collector.ts';

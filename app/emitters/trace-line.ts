@@ -1,7 +1,8 @@
 import type { Board, Net, StackLayer } from '../board/board.ts';
 import { inputError } from '../errors.ts';
-import { effectiveDielectric } from '../lines/effective-dielectric.ts';
-import { type CrossSection, type Line, lineOf } from '../lines/line.ts';
+import { effectiveDielectric } from '../lines/dielectric.ts';
+import type { CrossSection, Line } from '../lines/cross-section.ts';
+import { lineOf } from '../lines/line.ts';
 import type { ReferencePlane } from '../returns/reference.ts';
 
 /** Cross section of a trace over one plane (surface, covered or embedded microstrip) or between two (stripline). */
