@@ -1,0 +1,66 @@
+import type { Contributor, EstimateResult, ResultPoint } from '../estimate/result.ts';
+import { mainContributor } from './contributor-text.ts';
+import { standingOf } from './verdict.ts';
+
+type Cell = string | number;
+
+/** A cell that begins so is a formula to a spreadsheet, whoever wrote it. */
+const FORMULA_START = /^[=+\-@\t\r\n＝＋－＠]/;
+
+/**
+ * The points as a table for a spreadsheet (RFC 4180: comma, CRLF, quotes doubled; UTF-8; point as the decimal sign).
+ * One row a point, worst margin first; after the fixed columns one column a contributor with its level at that point,
+ * empty where it has none. Numbers are unrounded; what is not finite is an empty cell. Text that a spreadsheet would
+ * take for a formula gets a leading apostrophe. Where a contributor radiates from stands in the JSON result.
+ */
+export function csvReport(result: EstimateResult): string {
+  const contributors = contributorColumns(result.points);
+  const rows: Cell[][] = [
+    [...FIXED_COLUMNS.map(([head]) => head), ...contributors.map(({ kind, name }) => `${kind} ${name} (dBuV/m)`)],
+    ...result.points.map((point) => {
+      const levels = new Map(point.contributors.map((each) => [keyOf(each), each.levelDbuvPerM]));
+      return [
+        ...FIXED_COLUMNS.map(([, cell]) => cell(point, result)),
+        ...contributors.map((column) => levels.get(keyOf(column)) ?? ''),
+      ];
+    }),
+  ];
+  return rows.map((row) => `${row.map(cellText).join(',')}\r\n`).join('');
+}
+
+const FIXED_COLUMNS: readonly (readonly [head: string, cell: (point: ResultPoint, result: EstimateResult) => Cell])[] = [
+  ['frequency (Hz)', (point) => point.frequencyHz],
+  ['detector', (point) => point.detector],
+  ['level (dBuV/m)', (point) => point.levelDbuvPerM],
+  ['limit (dBuV/m)', (point) => point.limitDbuvPerM],
+  ['margin (dB)', (point) => point.marginDb],
+  ['standing', (point, { limit }) => standingOf(point, limit.requiredMarginDb)],
+  ['polarization', (point) => point.polarization],
+  ['antenna height (m)', (point) => point.antennaHeightM],
+  ['turntable (deg)', (point) => point.turntableDeg],
+  ['horizontal (dBuV/m)', (point) => point.horizontalDbuvPerM],
+  ['vertical (dBuV/m)', (point) => point.verticalDbuvPerM],
+  ['upper bound (dBuV/m)', (point) => point.upperBoundDbuvPerM],
+  ['main contributor', (point) => mainContributor(point)?.contributor.name ?? ''],
+  ['radiates mainly from', (point) => mainContributor(point)?.path?.name ?? ''],
+];
+
+const keyOf = ({ kind, name }: Contributor): string => JSON.stringify([kind, name]);
+
+/** Every contributor once, in order of first appearance: the ones that matter come first. */
+function contributorColumns(points: readonly ResultPoint[]): Contributor[] {
+  const columns = new Map<string, Contributor>();
+  for (const point of points) {
+    for (const contributor of point.contributors) {
+      const key = keyOf(contributor);
+      if (!columns.has(key)) columns.set(key, contributor);
+    }
+  }
+  return [...columns.values()];
+}
+
+function cellText(cell: Cell): string {
+  if (typeof cell === 'number') return Number.isFinite(cell) ? String(cell) : '';
+  const guarded = FORMULA_START.test(cell) ? `'${cell}` : cell;
+  return /[",\r\n]/.test(guarded) ? `"${guarded.replaceAll('"', '""')}"` : guarded;
+}

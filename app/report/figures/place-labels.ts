@@ -1,0 +1,96 @@
+import type { Xy } from './path.ts';
+
+export interface Box {
+  readonly left: number;
+  readonly top: number;
+  readonly right: number;
+  readonly bottom: number;
+}
+
+export interface LabelRequest {
+  readonly text: string;
+  readonly anchor: Xy;
+}
+
+export interface PlacedLabel extends LabelRequest {
+  /** Start of the text's baseline. */
+  readonly at: Xy;
+  /** Where a leader ends at the text; absent when the text stands beside its anchor. */
+  readonly leaderTo: Xy | undefined;
+}
+
+/** Mean advance of a digit or letter over the font size, on the wide side. */
+const ADVANCE = 0.58;
+
+export const textWidthPx = (text: string, fontPx: number): number => Array.from(text).length * fontPx * ADVANCE;
+
+/** Tried in this order: a ring of places ever farther from the anchor. */
+const DISTANCES_PX = [8, 20, 34, 50, 70];
+const DIRECTIONS: readonly Xy[] = [
+  [0, -1],
+  [0.9, -0.7],
+  [-0.9, -0.7],
+  [1, 0],
+  [-1, 0],
+  [0.9, 0.7],
+  [-0.9, 0.7],
+  [0, 1],
+];
+
+/**
+ * Puts labels near their anchors, first come first served, so that none covers another, an obstacle, or the edge of
+ * `bounds`. A label without a free place is left out: its line is in the table all the same.
+ */
+export function placeLabels(
+  requests: readonly LabelRequest[],
+  options: { readonly bounds: Box; readonly fontPx: number; readonly obstacles?: readonly Box[] },
+): PlacedLabel[] {
+  const { bounds, fontPx } = options;
+  const taken: Box[] = [...(options.obstacles ?? [])];
+  const placed: PlacedLabel[] = [];
+  for (const request of requests) {
+    const width = textWidthPx(request.text, fontPx);
+    const found = candidates(request.anchor, width, fontPx).find(
+      ({ box }) => isWithin(box, bounds) && !taken.some((other) => overlap(box, other)),
+    );
+    if (!found) continue;
+    taken.push(found.box);
+    const { box, distance } = found;
+    placed.push({
+      ...request,
+      at: [box.left, box.bottom - fontPx * 0.25],
+      leaderTo: distance > DISTANCES_PX[0]! ? nearestOnBox(box, request.anchor) : undefined,
+    });
+  }
+  return placed;
+}
+
+function candidates([x, y]: Xy, width: number, height: number): { box: Box; distance: number }[] {
+  return DISTANCES_PX.flatMap((distance) =>
+    DIRECTIONS.map(([dx, dy]) => {
+      // The box touches the ring with the side that faces the anchor.
+      const left = x + dx * distance + (dx > 0.5 ? 0 : dx < -0.5 ? -width : -width / 2);
+      const top = y + dy * distance + (dy > 0.5 ? 0 : dy < -0.5 ? -height : -height / 2);
+      return { box: { left, top, right: left + width, bottom: top + height }, distance };
+    }),
+  );
+}
+
+const isWithin = (box: Box, bounds: Box): boolean =>
+  box.left >= bounds.left && box.right <= bounds.right && box.top >= bounds.top && box.bottom <= bounds.bottom;
+
+const overlap = (one: Box, other: Box): boolean =>
+  one.left < other.right && other.left < one.right && one.top < other.bottom && other.top < one.bottom;
+
+const nearestOnBox = (box: Box, [x, y]: Xy): Xy => [
+  Math.min(box.right, Math.max(box.left, x)),
+  Math.min(box.bottom, Math.max(box.top, y)),
+];
+
+/** A small square about a place that labels must not cover. */
+export const boxAround = ([x, y]: Xy, half: number): Box => ({
+  left: x - half,
+  top: y - half,
+  right: x + half,
+  bottom: y + half,
+});
