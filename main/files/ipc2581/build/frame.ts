@@ -1,0 +1,73 @@
+import type { PointMm } from '../path.ts';
+
+/** Board coordinates are kept to 1 nm: finer digits are only what the shift's subtraction left behind. */
+const STEPS_PER_MM = 1e6;
+
+export const roundMm = (lengthMm: number): number => Math.round(lengthMm * STEPS_PER_MM) / STEPS_PER_MM + 0;
+
+/** Lower-left and upper-right corner of points. */
+export interface BoxMm {
+  readonly minX: number;
+  readonly minY: number;
+  readonly maxX: number;
+  readonly maxY: number;
+}
+
+export function boxOf(points: Iterable<PointMm>): BoxMm | undefined {
+  let [minX, minY, maxX, maxY] = [Infinity, Infinity, -Infinity, -Infinity];
+  for (const [x, y] of points) {
+    minX = Math.min(minX, x);
+    minY = Math.min(minY, y);
+    maxX = Math.max(maxX, x);
+    maxY = Math.max(maxY, y);
+  }
+  return minX === Infinity ? undefined : { minX, minY, maxX, maxY };
+}
+
+/** Moves drawn coordinates so that the board's lower-left corner is the origin. */
+export class BoardFrame {
+  readonly originMm: PointMm;
+
+  constructor(originMm: PointMm) {
+    this.originMm = originMm;
+  }
+
+  point([x, y]: PointMm): PointMm {
+    return [roundMm(x - this.originMm[0]), roundMm(y - this.originMm[1])];
+  }
+
+  /** Points without repeated neighbours; undefined when fewer than two are left. */
+  polyline(points: readonly PointMm[]): PointMm[] | undefined {
+    const kept = this.distinct(points);
+    return kept.length < 2 ? undefined : kept;
+  }
+
+  /** Ring without repeated neighbours and closing point; undefined when fewer than three are left. */
+  ring(points: readonly PointMm[]): PointMm[] | undefined {
+    const kept = this.distinct(points);
+    while (kept.length > 1 && isSame(kept[0]!, kept[kept.length - 1]!)) kept.pop();
+    return kept.length < 3 ? undefined : kept;
+  }
+
+  private distinct(points: readonly PointMm[]): PointMm[] {
+    const kept: PointMm[] = [];
+    for (const point of points) {
+      const moved = this.point(point);
+      if (kept.length === 0 || !isSame(kept[kept.length - 1]!, moved)) kept.push(moved);
+    }
+    return kept;
+  }
+}
+
+const isSame = (p: PointMm, q: PointMm): boolean => p[0] === q[0] && p[1] === q[1];
+
+/** Area inside a ring, always positive (shoelace formula). */
+export function ringAreaMm2(ring: readonly PointMm[]): number {
+  let twice = 0;
+  for (let i = 0; i < ring.length; i++) {
+    const [x0, y0] = ring[i]!;
+    const [x1, y1] = ring[(i + 1) % ring.length]!;
+    twice += x0 * y1 - x1 * y0;
+  }
+  return Math.abs(twice) / 2;
+}
