@@ -1,14 +1,10 @@
 import type { Contributor, EstimateResult, ResultPoint } from '../estimate/result.ts';
 import { mainContributor } from './contributor-text.ts';
+import { type Cell, csvText } from './csv-text.ts';
 import { standingOf } from './verdict.ts';
 
-type Cell = string | number;
-
-/** A cell that begins so is a formula to a spreadsheet, whoever wrote it. */
-const FORMULA_START = /^[=+\-@\t\r\n＝＋－＠]/;
-
 /**
- * The points as a table for a spreadsheet (RFC 4180: comma, CRLF, quotes doubled; UTF-8; point as the decimal sign).
+ * The points as a table for a spreadsheet (`csvText`).
  * One row a point, worst margin first; after the fixed columns one column a contributor with its level at that point,
  * empty where it has none. Numbers are unrounded; what is not finite is an empty cell. Text that a spreadsheet would
  * take for a formula gets a leading apostrophe. Where a contributor radiates from stands in the JSON result.
@@ -25,7 +21,7 @@ export function csvReport(result: EstimateResult): string {
       ];
     }),
   ];
-  return rows.map((row) => `${row.map(cellText).join(',')}\r\n`).join('');
+  return csvText(rows);
 }
 
 const FIXED_COLUMNS: readonly (readonly [head: string, cell: (point: ResultPoint, result: EstimateResult) => Cell])[] = [
@@ -57,10 +53,4 @@ function contributorColumns(points: readonly ResultPoint[]): Contributor[] {
     }
   }
   return [...columns.values()];
-}
-
-function cellText(cell: Cell): string {
-  if (typeof cell === 'number') return Number.isFinite(cell) ? String(cell) : '';
-  const guarded = FORMULA_START.test(cell) ? `'${cell}` : cell;
-  return /[",\r\n]/.test(guarded) ? `"${guarded.replaceAll('"', '""')}"` : guarded;
 }

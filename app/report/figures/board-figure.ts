@@ -77,7 +77,10 @@ function pinMarks(board: Board, frame: BoardFrame): Markup {
 
 function pinPlaces(board: Board, uses: readonly { readonly net: string; readonly pin: string }[]): PointM[] {
   const nets = new Map(board.nets.map((net) => [net.name, net]));
-  return uses.flatMap(({ net, pin }) => nets.get(net)?.pins.find(({ name }) => name === pin)?.atM ?? []);
+  return uses.flatMap(({ net, pin }) => {
+    const found = nets.get(net)?.pins.find(({ name }) => name === pin);
+    return found ? [found.atM] : [];
+  });
 }
 
 /** Findings by their number in the table. */
