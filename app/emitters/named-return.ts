@@ -1,8 +1,8 @@
 import type { Board, Net, Point3M } from '../board/board.ts';
 import { inputError } from '../errors.ts';
 import { gaussLegendre } from '../fields/quadrature.ts';
-import { effectiveDielectric } from '../lines/dielectric.ts';
 import type { Line } from '../lines/cross-section.ts';
+import { effectiveDielectric } from '../lines/dielectric.ts';
 import { lineOf } from '../lines/line.ts';
 import type { NetGraph } from '../network/net-graph.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
@@ -10,6 +10,7 @@ import { type Chain, chainFrom, PolylineM } from './chain.ts';
 import type { EndTerm } from './element-currents.ts';
 import type { NetContext, Terminals } from './net-context.ts';
 import { type PlacedSection, pointsFor } from './pair-elements.ts';
+import { pairEnd, pairEndSection } from './pair-end.ts';
 import type { RuleCollector } from './rule-collector.ts';
 import { statedLine } from './trace-line.ts';
 
@@ -19,6 +20,15 @@ const PARALLEL_TOLERANCE = 0.1;
 export interface NamedReturn {
   readonly lines: readonly Line[];
   readonly sections: readonly PlacedSection[];
+  /** End zones between the line's last node and a terminal, as short sections of line (see `pairEnd`). */
+  readonly ends: readonly TerminalEnd[];
+}
+
+/** A terminal set apart from its node of the graph by an end zone. */
+export interface TerminalEnd {
+  readonly node: number;
+  readonly lengthM: number;
+  readonly z0Ohm: number;
 }
 
 /**
@@ -80,13 +90,22 @@ export function addNamedReturn(
     }
     addReturnPieces(collector, chain, link, back, middleZM(named.layerIndex), line.epsilonEff, maxHz);
   }
+  const ends: TerminalEnd[] = [];
   for (const node of terminals.nodes) {
     const [x, y] = graph.nodes[node]!.atM;
     const pin: Point3M = [x, y, middleZM(graph.nodes[node]!.layerIndex)];
+    const returnPoint = returnAt(chain.fractionOfNode(node));
     const terms = endsAt(graph, node);
-    addStraight(collector, returnAt(chain.fractionOfNode(node)), pin, terms, maxHz);
+    if (terms.length !== 1) {
+      addStraight(collector, returnPoint, pin, terms, maxHz);
+      continue;
+    }
+    const end = pairEndSection(pairEnd(Math.hypot(...minus(pin, returnPoint)), line.z0Ohm, line.epsilonEff));
+    const section = graph.segments.length + ends.length;
+    addStraight(collector, returnPoint, pin, [{ section, isAtB: false, factor: 1 }], maxHz);
+    ends.push({ node, ...end });
   }
-  return { lines: graph.segments.map(() => line), sections };
+  return { lines: graph.segments.map(() => line), sections, ends };
 }
 
 /** The return under one link of the chain: −I(s) of that section, in pieces between the return's corners. */

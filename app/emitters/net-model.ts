@@ -7,12 +7,12 @@ import type { Network } from '../network/solve-network.ts';
 import { viaInductanceH } from '../network/via.ts';
 import type { SegmentReference } from '../returns/reference.ts';
 import { gapFindings } from './gap-findings.ts';
-import { addNamedReturn } from './named-return.ts';
+import { addNamedReturn, type TerminalEnd } from './named-return.ts';
 import type { NetContext, Terminals } from './net-context.ts';
 import { addPairElements, type PlacedSection } from './pair-elements.ts';
 import { addPlaces } from './places.ts';
 import { RuleCollector, type RuledElements } from './rule-collector.ts';
-import { crossSectionOver, lineWithOverrides } from './trace-line.ts';
+import { crossSectionOver, lineWithOverrides, statedLine } from './trace-line.ts';
 
 /** A driven net ready to be solved and to radiate. */
 export interface NetModel {
@@ -20,7 +20,8 @@ export interface NetModel {
   readonly network: Network;
   /** In the order of `network.drives`. */
   readonly drives: readonly Drive[];
-  readonly sections: readonly PlacedSection[];
+  /** In the order of `network.sections`. */
+  readonly sections: readonly { readonly lengthM: number; readonly z0Ohm: number }[];
   readonly pair: RuledElements;
   readonly findings: readonly Finding[];
   readonly caveats: readonly Caveat[];
@@ -47,9 +48,9 @@ export function buildNetModel(context: NetContext, net: Net): NetModel {
     const named = addNamedReturn(collector, context, net, graph, terminals);
     return {
       name: net.name,
-      network: networkOf(board, graph, named.lines, terminals),
+      network: withEnds(networkOf(board, graph, named.lines, terminals), named.ends),
       drives,
-      sections: named.sections,
+      sections: [...named.sections, ...named.ends],
       pair: collector.finish(),
       findings: [],
       caveats: lineCaveats(net.name, named.lines),
@@ -119,6 +120,27 @@ function networkOf(board: Board, graph: NetGraph, lines: readonly Line[], termin
     })),
     drives: terminals.drives,
     loads: terminals.loads,
+  };
+}
+
+/** Puts an end zone between each such terminal and its line: the terminal moves to a node of its own. */
+function withEnds(network: Network, ends: readonly TerminalEnd[]): Network {
+  const moved = new Map(ends.map(({ node }, i) => [node, network.nodeCount + i]));
+  const place = (node: number) => moved.get(node) ?? node;
+  return {
+    ...network,
+    nodeCount: network.nodeCount + ends.length,
+    sections: [
+      ...network.sections,
+      ...ends.map(({ node, lengthM, z0Ohm }) => ({
+        nodeA: place(node),
+        nodeB: node,
+        lengthM,
+        line: statedLine(z0Ohm, 1),
+      })),
+    ],
+    drives: network.drives.map((drive) => ({ ...drive, node: place(drive.node) })),
+    loads: network.loads.map((load) => ({ ...load, node: place(load.node) })),
   };
 }
 

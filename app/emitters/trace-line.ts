@@ -1,7 +1,7 @@
 import type { Board, Net, StackLayer } from '../board/board.ts';
 import { inputError } from '../errors.ts';
-import { effectiveDielectric } from '../lines/dielectric.ts';
 import type { CrossSection, Line } from '../lines/cross-section.ts';
+import { effectiveDielectric } from '../lines/dielectric.ts';
 import { lineOf } from '../lines/line.ts';
 import type { ReferencePlane } from '../returns/reference.ts';
 

@@ -107,7 +107,13 @@ function requireSources(board: Board): void {
   const nets = board.nets.filter(({ traces, pins }) => traces.length > 0 && pins.length > 0);
   const examples = nets
     .slice(0, 5)
-    .map(({ name, pins }) => `${name} (pins ${pins.slice(0, 3).map((pin) => pin.name).join(', ')})`)
+    .map(
+      ({ name, pins }) =>
+        `${name} (pins ${pins
+          .slice(0, 3)
+          .map((pin) => pin.name)
+          .join(', ')})`,
+    )
     .join('; ');
   throw inputError(
     'drives',

@@ -113,5 +113,7 @@ function contributorsOf(
       const { kind, name } = own[0]!;
       return { contributor: { kind, name, levelDbuvPerM: peakFieldToDbuvPerM(fieldVPerM), viaDbuvPerM }, fieldVPerM };
     })
-    .sort((one, other) => other.fieldVPerM - one.fieldVPerM || (one.contributor.name < other.contributor.name ? -1 : 1));
+    .sort(
+      (one, other) => other.fieldVPerM - one.fieldVPerM || (one.contributor.name < other.contributor.name ? -1 : 1),
+    );
 }

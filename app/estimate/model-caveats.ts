@@ -75,7 +75,8 @@ function sizeCaveats(scene: Scene, toHz: number): Caveat[] {
 function diagonalM(board: Board): number {
   const xs = board.outlineM.flatMap((ring) => ring.map(([x]) => x));
   const ys = board.outlineM.flatMap((ring) => ring.map(([, y]) => y));
-  const span = (values: readonly number[]) => values.reduce((a, b) => Math.max(a, b)) - values.reduce((a, b) => Math.min(a, b));
+  const span = (values: readonly number[]) =>
+    values.reduce((a, b) => Math.max(a, b)) - values.reduce((a, b) => Math.min(a, b));
   return Math.hypot(span(xs), span(ys));
 }
 
@@ -84,7 +85,9 @@ const CONNECTOR_PIN = /^(J|P|X|CN|CON|USB|K)\d+\b/i;
 
 function cableCaveats(board: Board, scene: Scene, fromHz: number, toHz: number): Caveat[] {
   const connectors = new Set(
-    board.nets.flatMap(({ pins }) => pins.map(({ name }) => name.split('.')[0]!).filter((ref) => CONNECTOR_PIN.test(ref))),
+    board.nets.flatMap(({ pins }) =>
+      pins.map(({ name }) => name.split('.')[0]!).filter((ref) => CONNECTOR_PIN.test(ref)),
+    ),
   );
   if (board.cables.length === 0) {
     if (connectors.size === 0) return [];
@@ -167,8 +170,10 @@ function undrivenCaveats(board: Board): Caveat[] {
 }
 
 const FINDING_CAVEATS: Readonly<Record<string, string>> = {
-  'plane-gap': 'a trace runs where its reference plane is missing; its return is taken straight on, though it must go around',
-  'return-changes-plane': 'a layer change leaves the return no near way between planes; it is taken to cross beside the via',
+  'plane-gap':
+    'a trace runs where its reference plane is missing; its return is taken straight on, though it must go around',
+  'return-changes-plane':
+    'a layer change leaves the return no near way between planes; it is taken to cross beside the via',
 };
 
 function findingCaveats(findings: readonly Finding[]): Caveat[] {

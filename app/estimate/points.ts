@@ -1,6 +1,6 @@
 import type { LimitSet } from '../limits/choose-limits.ts';
 import { bandwidthHz, combineInBandwidth } from '../receiver/combine.ts';
-import { rmsFieldToDbuvPerM, peakFieldToDbuvPerM } from '../units/convert.ts';
+import { peakFieldToDbuvPerM, rmsFieldToDbuvPerM } from '../units/convert.ts';
 import type { LineLevel } from './line-level.ts';
 import type { ResultPoint } from './result.ts';
 

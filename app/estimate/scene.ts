@@ -1,9 +1,9 @@
 import type { Board } from '../board/board.ts';
-import { inputError } from '../errors.ts';
 import { buildLoop, type LoopModel } from '../emitters/current-loop.ts';
 import { buildNetModel, type NetModel } from '../emitters/net-model.ts';
 import { buildStatedCable, type StatedCable } from '../emitters/stated-cable.ts';
 import { StitchIndex } from '../emitters/transitions.ts';
+import { inputError } from '../errors.ts';
 import type { ElementSet } from '../fields/element-set.ts';
 import { PlaneIndex } from '../returns/reference.ts';
 import { type Box, boxOf } from '../site/moment-grid.ts';

@@ -30,7 +30,12 @@ const SAME_FREQUENCY = 1e-9;
  * Every spectral line of the board's drives and loops between two frequencies, grouped by frequency, ascending.
  * `extraHz` are frequencies that must appear even without lines (points of stated cable currents).
  */
-export function spectrumTable(board: Board, fromHz: number, toHz: number, extraHz: readonly number[]): FrequencyLines[] {
+export function spectrumTable(
+  board: Board,
+  fromHz: number,
+  toHz: number,
+  extraHz: readonly number[],
+): FrequencyLines[] {
   const waveforms = new Map(board.waveforms.map((waveform) => [waveform.name, waveform]));
   const spectra = new Map<string, LineSpectrum>();
   const all: { frequencyHz: number; line: SourceLine | null }[] = extraHz

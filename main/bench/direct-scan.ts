@@ -73,7 +73,7 @@ function addElements(
     const iIm = currentsA[2 * e + 1]!;
     const fRe = gRe * iRe - gIm * iIm;
     const fIm = gRe * iIm + gIm * iRe;
-    const second = -inverse * inverse / kPerM;
+    const second = (-inverse * inverse) / kPerM;
     const phiClose = 3 * nPhi * along - vPhi;
     const phiRe = inverse * phiClose;
     const phiIm = kPerM * (nPhi * along - vPhi) + second * phiClose;

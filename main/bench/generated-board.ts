@@ -47,7 +47,16 @@ export function generatedBoard({ widthMm, heightMm, nets, segmentsPerNet }: Gene
     version: 1,
     name: 'Generated bench board',
     revision: '1',
-    outline: [{ pointsMm: [[0, 0], [widthMm, 0], [widthMm, heightMm], [0, heightMm]] }],
+    outline: [
+      {
+        pointsMm: [
+          [0, 0],
+          [widthMm, 0],
+          [widthMm, heightMm],
+          [0, heightMm],
+        ],
+      },
+    ],
     stackup: [
       { name: 'TOP', kind: 'copper', thicknessMm: 0.035 },
       { name: 'D1', kind: 'dielectric', thicknessMm: 0.2, epsilonR: 4.3, lossTangent: 0.02 },
