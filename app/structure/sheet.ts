@@ -1,0 +1,123 @@
+import type { PointM, RingM } from '../board/board.ts';
+import { inputError } from '../errors.ts';
+import { coveredStretches, type Region, type Stretch } from '../geometry/polygon.ts';
+
+/** Square cells: the lower left corner of cell (0, 0) and the side, board axes. */
+export interface Grid {
+  readonly originXM: number;
+  readonly originYM: number;
+  readonly cellM: number;
+  readonly columns: number;
+  readonly rows: number;
+}
+
+/**
+ * The planes as one thin sheet on square cells. Copper cells are numbered row by row from the lower left; links between
+ * neighbours (cut by slots) carry the current.
+ */
+export interface Sheet {
+  readonly grid: Grid;
+  /** Height of the sheet, m, board axes. */
+  readonly zM: number;
+  readonly cellCount: number;
+  /** [row · columns + column] → cell number, −1 where there is no copper. */
+  readonly cellAt: Int32Array;
+  /** Column and row of every cell. */
+  readonly columnOf: Int32Array;
+  readonly rowOf: Int32Array;
+  /** Does cell c conduct to its right (upper) neighbour? */
+  readonly conductsRight: Uint8Array;
+  readonly conductsUp: Uint8Array;
+}
+
+/**
+ * Rasterises the union of the planes. A cell is copper when its centre is; two neighbours conduct when the straight line
+ * between their centres stays on copper, so the thinnest split cuts. Cutouts smaller than half a cell both ways (clearances of
+ * vias) are left out: a cut edge would stand for an opening a whole cell long.
+ *
+ * Throws `input` when no cell is copper.
+ */
+export function rasterizePlanes(planes: readonly Region[], grid: Grid, zM: number): Sheet {
+  const { originXM, originYM, cellM, columns, rows } = grid;
+  const regions = planes.map(({ ringM, cutoutsM }) => ({
+    ringM,
+    cutoutsM: cutoutsM.filter((ring) => largestExtentM(ring) >= cellM / 2),
+  }));
+  const endXM = originXM + columns * cellM;
+  const endYM = originYM + rows * cellM;
+  const cellAt = new Int32Array(columns * rows).fill(-1);
+  const right = new Uint8Array(columns * rows);
+  const up = new Uint8Array(columns * rows);
+  for (let row = 0; row < rows; row++) {
+    const yM = originYM + (row + 0.5) * cellM;
+    const covered = stretchOfCentres([originXM, yM], [endXM, yM], regions, columns);
+    for (let column = 0; column < columns; column++) {
+      const at = row * columns + column;
+      if (covered[column]! >= 0) cellAt[at] = 0;
+      if (column > 0 && covered[column]! >= 0 && covered[column] === covered[column - 1]) right[at - 1] = 1;
+    }
+  }
+  for (let column = 0; column < columns; column++) {
+    const xM = originXM + (column + 0.5) * cellM;
+    const covered = stretchOfCentres([xM, originYM], [xM, endYM], regions, rows);
+    for (let row = 1; row < rows; row++) {
+      const at = row * columns + column;
+      const isCopper = cellAt[at] === 0 && cellAt[at - columns] === 0;
+      if (isCopper && covered[row]! >= 0 && covered[row] === covered[row - 1]) up[at - columns] = 1;
+    }
+  }
+  let cellCount = 0;
+  for (let at = 0; at < cellAt.length; at++) if (cellAt[at] === 0) cellAt[at] = cellCount++;
+  if (cellCount === 0) throw inputError('planes', `copper at the centre of a cell of ${cellM} m`, 'none');
+  const columnOf = new Int32Array(cellCount);
+  const rowOf = new Int32Array(cellCount);
+  const conductsRight = new Uint8Array(cellCount);
+  const conductsUp = new Uint8Array(cellCount);
+  for (let at = 0; at < cellAt.length; at++) {
+    const cell = cellAt[at]!;
+    if (cell < 0) continue;
+    columnOf[cell] = at % columns;
+    rowOf[cell] = Math.floor(at / columns);
+    conductsRight[cell] = right[at]!;
+    conductsUp[cell] = up[at]!;
+  }
+  return { grid, zM, cellCount, cellAt, columnOf, rowOf, conductsRight, conductsUp };
+}
+
+/** For each of `count` cell centres on the line: the index of the copper stretch it lies on, −1 for none. */
+function stretchOfCentres(from: PointM, to: PointM, regions: readonly Region[], count: number): Int32Array {
+  const stretches: Stretch[] = coveredStretches(from, to, regions);
+  const out = new Int32Array(count).fill(-1);
+  let next = 0;
+  for (let i = 0; i < count; i++) {
+    const at = (i + 0.5) / count;
+    while (next < stretches.length && stretches[next]!.to < at) next++;
+    if (next < stretches.length && stretches[next]!.from <= at) out[i] = next;
+  }
+  return out;
+}
+
+function largestExtentM(ringM: RingM): number {
+  let lowX = Infinity;
+  let highX = -Infinity;
+  let lowY = Infinity;
+  let highY = -Infinity;
+  for (const [xM, yM] of ringM) {
+    lowX = Math.min(lowX, xM);
+    highX = Math.max(highX, xM);
+    lowY = Math.min(lowY, yM);
+    highY = Math.max(highY, yM);
+  }
+  return Math.max(highX - lowX, highY - lowY);
+}
+
+export const cellCentreXM = ({ grid, columnOf }: Sheet, cell: number): number =>
+  grid.originXM + (columnOf[cell]! + 0.5) * grid.cellM;
+export const cellCentreYM = ({ grid, rowOf }: Sheet, cell: number): number =>
+  grid.originYM + (rowOf[cell]! + 0.5) * grid.cellM;
+
+/** Cell number at a column and row, −1 outside and where there is no copper. */
+export function cellAtIndex({ grid, cellAt }: Sheet, column: number, row: number): number {
+  if (column < 0 || row < 0 || column >= grid.columns || row >= grid.rows) return -1;
+  return cellAt[row * grid.columns + column]!;
+}
