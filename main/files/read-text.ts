@@ -1,5 +1,7 @@
 import { createHash } from 'node:crypto';
+import { createReadStream } from 'node:fs';
 import { open } from 'node:fs/promises';
+import { extname } from 'node:path';
 import { AppError, fileError } from '../../app/errors.ts';
 import { findJsonFault } from '../../app/schema/json-position.ts';
 import { fileFailure } from './file-failure.ts';
@@ -61,4 +63,35 @@ export async function readJson(file: string): Promise<{ json: unknown; sha256: s
   return { json: parseJsonText(file, decodeText(file, bytes)), sha256: sha256Of(bytes) };
 }
 
-export const sha256Of = (bytes: Uint8Array): string => createHash('sha256').update(bytes).digest('hex');
+const sha256Of = (bytes: Uint8Array): string => createHash('sha256').update(bytes).digest('hex');
+
+/** SHA-256 of a file of any size, hexadecimal. Throws `file`. */
+export async function sha256OfFile(file: string): Promise<string> {
+  const hash = createHash('sha256');
+  try {
+    for await (const chunk of createReadStream(file)) hash.update(chunk as Buffer);
+  } catch (error) {
+    throw fileFailure(file, 'read', error);
+  }
+  return hash.digest('hex');
+}
+
+/** Whether a file is meant as JSON: by its name, or because it begins with a brace. Throws `file`. */
+export async function isJsonFile(file: string): Promise<boolean> {
+  if (extname(file).toLowerCase() === '.json') return true;
+  return /^\ufeff?\s*(?:\{|$)/.test((await readBeginning(file)).toString('utf8'));
+}
+
+async function readBeginning(file: string): Promise<Buffer> {
+  try {
+    const handle = await open(file, 'r');
+    try {
+      const { buffer, bytesRead } = await handle.read(Buffer.alloc(256), 0, 256, 0);
+      return buffer.subarray(0, bytesRead);
+    } finally {
+      await handle.close();
+    }
+  } catch (error) {
+    throw fileFailure(file, 'read', error);
+  }
+}

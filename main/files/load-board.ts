@@ -1,0 +1,90 @@
+import { dirname, isAbsolute, join } from 'node:path';
+import type { Board } from '../../app/board/board.ts';
+import type { BoardFile } from '../../app/board/board-file.ts';
+import type { SampleColumns } from '../../app/board/convert-waveforms.ts';
+import { mergeSources, parseBoardFile, parseSourcesFile, toBoard } from '../../app/board/parse-board.ts';
+import { AppError, describe } from '../../app/errors.ts';
+import { readCsvWaveform } from './csv-waveform.ts';
+import { importBoard } from './import-board.ts';
+import { isJsonFile, readJson, sha256OfFile } from './read-text.ts';
+
+export interface LoadedBoard {
+  readonly file: BoardFile;
+  readonly board: Board;
+  /** What the program chose or read on the way. */
+  readonly notes: readonly string[];
+  /** Of the board's or layout's bytes, hexadecimal. */
+  readonly sha256: string;
+}
+
+/**
+ * A board ready for work: a board file or a layout in an open format (told by its content), with the sources file
+ * merged in and waveform files read. Waveform files are looked for beside the board, then beside the sources file.
+ * Throws `file` and `input`, each with the file's name.
+ */
+export async function loadBoard(boardPath: string, sourcesPath?: string): Promise<LoadedBoard> {
+  const opened = await openBoard(boardPath);
+  const notes = [...opened.notes];
+  let file = opened.file;
+  if (sourcesPath !== undefined) {
+    const { json, sha256 } = await readJson(sourcesPath);
+    file = inFile(sourcesPath, () => mergeSources(opened.file, parseSourcesFile(json)));
+    notes.push(`Sources from ${describe(sourcesPath)} (SHA-256 ${sha256}).`);
+  }
+  const folders = [dirname(boardPath), ...(sourcesPath === undefined ? [] : [dirname(sourcesPath)])];
+  const samples = await readSamples(file, folders);
+  const places = sourcesPath === undefined ? boardPath : `${boardPath} with ${sourcesPath}`;
+  const converted = inFile(places, () => toBoard(file, { samples }));
+  return { file, board: converted.board, notes: [...notes, ...converted.notes], sha256: opened.sha256 };
+}
+
+async function openBoard(path: string): Promise<{ file: BoardFile; notes: string[]; sha256: string }> {
+  if (await isJsonFile(path)) {
+    const { json, sha256 } = await readJson(path);
+    return { file: inFile(path, () => parseBoardFile(json)), notes: [], sha256 };
+  }
+  const { board, summary } = await importBoard(path);
+  const findings = summary.findings.map(
+    ({ message, count }) => `Import: ${message}${count > 1 ? ` (${count} times)` : ''}`,
+  );
+  return { file: inFile(path, () => parseBoardFile(board)), notes: findings, sha256: await sha256OfFile(path) };
+}
+
+/** Runs a step on a file's content; an input error then says which file. */
+export function inFile<T>(file: string, step: () => T): T {
+  try {
+    return step();
+  } catch (error) {
+    if (!(error instanceof AppError) || error.code !== 'input') throw error;
+    const lines = error.message.split('\n');
+    const text = lines.length === 1 ? `${file}: ${lines[0]}` : [`${file}:`, ...lines].join('\n  ');
+    throw new AppError('input', text, error.path, { cause: error });
+  }
+}
+
+async function readSamples(file: BoardFile, folders: readonly string[]): Promise<Map<string, SampleColumns>> {
+  const samples = new Map<string, SampleColumns>();
+  for (const [i, waveform] of (file.waveforms ?? []).entries()) {
+    if (waveform.kind !== 'samples' || samples.has(waveform.file)) continue;
+    if (isAbsolute(waveform.file)) {
+      const text = `waveforms[${i}].file must be a path relative to the board file; received ${describe(waveform.file)}`;
+      throw new AppError('input', text, `waveforms[${i}].file`);
+    }
+    samples.set(waveform.file, await readFirst(folders.map((folder) => join(folder, waveform.file))));
+  }
+  return samples;
+}
+
+/** The first of the files that is there; the last one's failure when none is. */
+async function readFirst(files: readonly string[]): Promise<SampleColumns> {
+  const [file, ...others] = files;
+  try {
+    return await readCsvWaveform(file!);
+  } catch (error) {
+    if (others.length === 0 || !isAbsent(error)) throw error;
+    return readFirst(others);
+  }
+}
+
+const isAbsent = (error: unknown): boolean =>
+  error instanceof AppError && (error.cause as NodeJS.ErrnoException | undefined)?.code === 'ENOENT';
