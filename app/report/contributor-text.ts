@@ -18,7 +18,21 @@ export function mainContributor(point: ResultPoint): { contributor: Contributor;
   return contributor && { contributor, path: pathsOf(contributor)[0] };
 }
 
-/** A path as the reader knows it: "its own trace and return" for the pair, "the plane", else the cable by name. */
+/** What kind a contributor is, said before its name in a sentence. */
+export const KIND_PHRASE: Readonly<Record<Contributor['kind'], string>> = {
+  net: 'net ',
+  loop: 'current loop ',
+  cable: 'the stated current of ',
+};
+
+/** The same, said after its name in a list of mostly nets. */
+export const KIND_REMARK: Readonly<Record<Contributor['kind'], string>> = {
+  net: '',
+  loop: 'current loop',
+  cable: 'stated current',
+};
+
+/** A path in the reader's words: the trace with its return, the plane, else the cable by name. */
 export function pathText(pathName: string): string {
   if (pathName === 'pair') return 'trace pair';
   return pathName === 'plane' ? 'plane' : pathName;

@@ -24,22 +24,23 @@ export function csvReport(result: EstimateResult): string {
   return csvText(rows);
 }
 
-const FIXED_COLUMNS: readonly (readonly [head: string, cell: (point: ResultPoint, result: EstimateResult) => Cell])[] = [
-  ['frequency (Hz)', (point) => point.frequencyHz],
-  ['detector', (point) => point.detector],
-  ['level (dBuV/m)', (point) => point.levelDbuvPerM],
-  ['limit (dBuV/m)', (point) => point.limitDbuvPerM],
-  ['margin (dB)', (point) => point.marginDb],
-  ['standing', (point, { limit }) => standingOf(point, limit.requiredMarginDb)],
-  ['polarization', (point) => point.polarization],
-  ['antenna height (m)', (point) => point.antennaHeightM],
-  ['turntable (deg)', (point) => point.turntableDeg],
-  ['horizontal (dBuV/m)', (point) => point.horizontalDbuvPerM],
-  ['vertical (dBuV/m)', (point) => point.verticalDbuvPerM],
-  ['upper bound (dBuV/m)', (point) => point.upperBoundDbuvPerM],
-  ['main contributor', (point) => mainContributor(point)?.contributor.name ?? ''],
-  ['radiates mainly from', (point) => mainContributor(point)?.path?.name ?? ''],
-];
+const FIXED_COLUMNS: readonly (readonly [head: string, cell: (point: ResultPoint, result: EstimateResult) => Cell])[] =
+  [
+    ['frequency (Hz)', (point) => point.frequencyHz],
+    ['detector', (point) => point.detector],
+    ['level (dBuV/m)', (point) => point.levelDbuvPerM],
+    ['limit (dBuV/m)', (point) => point.limitDbuvPerM],
+    ['margin (dB)', (point) => point.marginDb],
+    ['standing', (point, { limit }) => standingOf(point, limit.requiredMarginDb)],
+    ['polarization', (point) => point.polarization],
+    ['antenna height (m)', (point) => point.antennaHeightM],
+    ['turntable (deg)', (point) => point.turntableDeg],
+    ['horizontal (dBuV/m)', (point) => point.horizontalDbuvPerM],
+    ['vertical (dBuV/m)', (point) => point.verticalDbuvPerM],
+    ['upper bound (dBuV/m)', (point) => point.upperBoundDbuvPerM],
+    ['main contributor', (point) => mainContributor(point)?.contributor.name ?? ''],
+    ['radiates mainly from', (point) => mainContributor(point)?.path?.name ?? ''],
+  ];
 
 const keyOf = ({ kind, name }: Contributor): string => JSON.stringify([kind, name]);
 

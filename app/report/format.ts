@@ -19,7 +19,8 @@ export function trimmed(value: number, decimals: number): string {
 export const levelText = (levelDb: number): string => fixed(levelDb, 1);
 
 /** A margin in dB, one decimal. The sign stays even on "-0.0": over the limit by less than the rounding. */
-export const marginText = (marginDb: number): string => (Number.isFinite(marginDb) ? marginDb.toFixed(1) : fixed(marginDb, 1));
+export const marginText = (marginDb: number): string =>
+  Number.isFinite(marginDb) ? marginDb.toFixed(1) : fixed(marginDb, 1);
 
 /** An amount of dB that is known to be more than nothing. */
 export const amountText = (amountDb: number): string =>
@@ -72,4 +73,5 @@ export const placeText = ([xM, yM]: readonly [number, number]): string =>
   `(${trimmed(mToMm(xM), 2)}, ${trimmed(mToMm(yM), 2)})`;
 
 /** "1 line", "3 lines". */
-export const countText = (count: number, one: string, many = `${one}s`): string => `${count} ${count === 1 ? one : many}`;
+export const countText = (count: number, one: string, many = `${one}s`): string =>
+  `${count} ${count === 1 ? one : many}`;

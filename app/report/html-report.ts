@@ -22,7 +22,8 @@ export interface HtmlReportOptions {
 }
 
 /** Nothing is loaded, nothing runs, nothing is sent: the page is what it shows. */
-const CONTENT_POLICY = "default-src 'none'; style-src 'unsafe-inline'; img-src data:; base-uri 'none'; form-action 'none'";
+const CONTENT_POLICY =
+  "default-src 'none'; style-src 'unsafe-inline'; img-src data:; base-uri 'none'; form-action 'none'";
 
 /**
  * The report as one self-contained page for screen (light and dark) and A4 print: well-formed as XML too, no script, no

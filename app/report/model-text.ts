@@ -10,7 +10,9 @@ export function modelText({ structure, site }: EstimateResult): { included: stri
       : 'Free space without any reflection; the maximum over antenna height, turntable angle and both polarisations.',
     'Receiver bandwidth and detector of the judged band.',
   ];
-  const missing = ['Enclosure, heat sinks, parts other than their pins; connectors other than as ideal joints; imperfect ground.'];
+  const missing = [
+    'Enclosure, heat sinks, parts other than their pins; connectors other than as ideal joints; imperfect ground.',
+  ];
   if (structure === 'solved') {
     included.push(
       'Currents that the traces drive over the finite planes and into the cables (partial elements with retardation on square cells).',

@@ -28,7 +28,10 @@ const edgesText = ({ rise1090S, fall1090S }: { rise1090S: number; fall1090S: num
   `rise ${quantityText(rise1090S, 's')}, fall ${quantityText(fall1090S, 's')} (10–90 %)`;
 
 const rangeOf = (values: readonly number[]): [low: number, high: number] =>
-  values.reduce<[number, number]>(([low, high], value) => [Math.min(low, value), Math.max(high, value)], [Infinity, -Infinity]);
+  values.reduce<[number, number]>(
+    ([low, high], value) => [Math.min(low, value), Math.max(high, value)],
+    [Infinity, -Infinity],
+  );
 
 /** Length of an open or closed chain of points, m. */
 export function chainLengthM(pointsM: readonly Point3M[], isClosed: boolean): number {

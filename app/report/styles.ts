@@ -21,12 +21,13 @@ figcaption span{display:inline-block;margin-right:16px}
 .facts{display:grid;grid-template-columns:repeat(2,minmax(0,1fr));margin:0;border-bottom:1px solid var(--hair)}
 .facts div{display:grid;grid-template-columns:112px minmax(0,1fr);column-gap:8px;padding:3px 12px 3px 0;border-top:1px solid var(--hair)}
 dt{color:var(--quiet)}
+.facts .wide{grid-column:1/-1}
 dd{margin:0}
 .code{font:11.5px/1.5 ui-monospace,Consolas,"Liberation Mono",monospace}
 .verdict{border:1px solid var(--ink);padding:12px 16px 10px;margin-top:18px}
 .headline{font-size:18px;margin:0 0 4px}
 .headline .inline{width:22px;height:22px;vertical-align:-5px;margin-right:6px}
-.summary{max-width:78ch;margin:0}
+.summary{max-width:100ch;margin:0}
 .columns{display:grid;grid-template-columns:1fr 1fr;column-gap:28px}
 .columns h3{margin-top:0}`;
 
@@ -41,13 +42,13 @@ th:last-child,td:last-child{padding-right:0}
 .points td:first-child{width:18px;padding-right:4px}
 .points td:last-child{min-width:150px}
 .points th,.points td{padding-right:9px}
-.narrow{width:auto;min-width:360px}
+.narrow{width:auto;min-width:360px;margin-top:10px}
 .shares{columns:2;column-gap:28px}
 .share{break-inside:avoid;margin:0 0 14px}
 .share td:first-child,.share th:first-child{width:52%}
 .share .n{width:52px}
 .share td{padding-top:2px;padding-bottom:2px;border-bottom:0}
-.share .path td{color:var(--quiet);font-size:11.5px;padding-top:0}
+.share .path td{color:var(--quiet);font-size:.92em;padding-top:0}
 .share .path td:first-child{padding-left:14px}
 .bars{vertical-align:middle}
 .bar{display:block;width:100%;height:8px;margin-top:3px}
@@ -55,7 +56,7 @@ th:last-child,td:last-child{padding-right:0}
 .inline{width:14px;height:14px;vertical-align:-2.5px;margin-right:3px;overflow:visible}`;
 
 const FIGURE = `
-.figure{display:block;width:100%;height:auto;font-size:10px;font-family:inherit;overflow:visible}
+.figure{display:block;width:100%;height:auto;font-size:10px;font-family:inherit}
 .figure text,.figure .unit{fill:var(--quiet);unicode-bidi:isolate}
 .figure text.label{fill:var(--ink)}
 .figure text.minor{fill:var(--quiet);font-size:9px}
@@ -106,6 +107,7 @@ const FIGURE = `
 .board-solid{fill:var(--h);stroke:var(--h);stroke-width:1.4;stroke-linejoin:round}
 .board-plan{fill:var(--plane);stroke:var(--h);stroke-width:1.2}
 .antenna{stroke:var(--over);stroke-width:2.4;fill:var(--paper)}
+.boom{stroke:var(--ink);stroke-width:.8}
 .antenna-dot,.arrow-head{fill:var(--over)}
 .arrow{stroke:var(--over);stroke-width:1.4}
 .bar-back{fill:var(--bar-back)}
@@ -120,14 +122,15 @@ html,body{background:#fff}
 body{max-width:none;padding:0;font-size:9.2pt;-webkit-print-color-adjust:exact;print-color-adjust:exact}
 h1{font-size:15pt}h2{font-size:11pt}h3{font-size:9.5pt}
 table{font-size:8pt}
+th,td{padding-top:2px;padding-bottom:2px}
 .points th,.points td{padding-right:6px}
 .points td:last-child{min-width:110px}
 figcaption,.note,.quiet{font-size:7.8pt}
 .code{font-size:7.2pt}
 section{margin-top:16pt}
-.keep,tr,figure,.verdict,.cautions{break-inside:avoid}
+.keep,tr,li,p,figure,.verdict{break-inside:avoid}
 thead{display:table-header-group}
-h2,h3{break-after:avoid}
+h2,h3,.lead{break-after:avoid}
 }`;
 
 export const STYLES = `:root{${LIGHT}}@media screen and (prefers-color-scheme:dark){:root{${DARK}}}${PAGE}${TABLE}${FIGURE}${PRINT}`;

@@ -1,6 +1,6 @@
 import type { EstimateResult } from '../estimate/result.ts';
-import { byCode, groupCaveats } from './caveat-groups.ts';
 import { CAUTIONS_SHORT, DEFERENCE } from './cautions.ts';
+import { byCode, groupCaveats } from './caveat-groups.ts';
 import { countText, fixed, frequencyText, levelText, placeText, rangeText, trimmed } from './format.ts';
 import { safeTerminalText, terminalWidth, visibleText } from './safe-text.ts';
 import { pointTable, TABLE_UNITS } from './text-table.ts';
@@ -51,7 +51,10 @@ function headline(result: EstimateResult, width: number): string[] {
 
 function setup({ site, limit, structure }: EstimateResult, width: number): string[] {
   const ground = site.kind === 'ground-plane' ? 'ground plane' : 'free space';
-  const from = site.measuredFrom === 'boundary' ? `the boundary (radius ${fixed(site.boundaryRadiusM, 2)} m)` : 'the turntable axis';
+  const from =
+    site.measuredFrom === 'boundary'
+      ? `the boundary (radius ${fixed(site.boundaryRadiusM, 2)} m)`
+      : 'the turntable axis';
   const place = `${ground}, ${trimmed(site.distanceM, 2)} m from ${from}, board ${site.orientation} at ${trimmed(site.tableHeightM, 2)} m; planes and cables ${structure === 'solved' ? 'solved' : 'not solved (pair only)'}`;
   const line = [
     `${visibleText(limit.edition)} (${visibleText(limit.sourceStatus)})`,

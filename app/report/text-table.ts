@@ -40,7 +40,8 @@ const LAST_HEAD = 'main contributor';
 /** The points as a table; the last column, the main contributor, takes the width that is left. */
 export function pointTable(points: readonly ResultPoint[], result: EstimateResult, width: number): string[] {
   let columns = COLUMNS.map((column) => withCells(column, points, result)).filter((column) => column.width > 0);
-  const left = () => width - columns.reduce((sum, column) => sum + column.width + GAP.length, LAST_GAP.length - GAP.length);
+  const left = () =>
+    width - columns.reduce((sum, column) => sum + column.width + GAP.length, LAST_GAP.length - GAP.length);
   while (left() < LAST_HEAD.length && columns.some(({ dropRank }) => dropRank > 0)) {
     const next = Math.max(...columns.map(({ dropRank }) => dropRank));
     columns = columns.filter(({ dropRank }) => dropRank !== next);
@@ -50,8 +51,16 @@ export function pointTable(points: readonly ResultPoint[], result: EstimateResul
     return `${padded.join(GAP)}${LAST_GAP}${last}`.trimEnd();
   };
   return [
-    row(columns.map(({ head }) => head), safeTerminalText(LAST_HEAD, left())),
-    ...points.map((point, i) => row(columns.map(({ cells }) => cells[i]!), mainText(point, left()))),
+    row(
+      columns.map(({ head }) => head),
+      safeTerminalText(LAST_HEAD, left()),
+    ),
+    ...points.map((point, i) =>
+      row(
+        columns.map(({ cells }) => cells[i]!),
+        mainText(point, left()),
+      ),
+    ),
   ];
 }
 

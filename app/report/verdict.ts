@@ -41,7 +41,8 @@ export const limitName = ({ limit }: EstimateResult): string =>
 /** One line under the verdict: worst margin and where. */
 export function worstText(result: EstimateResult): string {
   const { worst } = result;
-  if (worst === null) return `no emission line of this board lies in the judged range, up to ${frequencyText(result.limit.maxHz)}`;
+  if (worst === null)
+    return `no emission line of this board lies in the judged range, up to ${frequencyText(result.limit.maxHz)}`;
   return `worst margin ${marginText(worst.marginDb)} dB at ${frequencyText(worst.frequencyHz)}`;
 }
 

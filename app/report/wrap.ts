@@ -36,5 +36,7 @@ function splitAt(word: string, width: number): [head: string, tail: string] {
 }
 
 /** Fills up with spaces to `width` columns. */
-export const padEnd = (text: string, width: number): string => text + ' '.repeat(Math.max(0, width - terminalWidth(text)));
-export const padStart = (text: string, width: number): string => ' '.repeat(Math.max(0, width - terminalWidth(text))) + text;
+export const padEnd = (text: string, width: number): string =>
+  text + ' '.repeat(Math.max(0, width - terminalWidth(text)));
+export const padStart = (text: string, width: number): string =>
+  ' '.repeat(Math.max(0, width - terminalWidth(text))) + text;

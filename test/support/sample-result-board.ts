@@ -42,7 +42,11 @@ const trace = (layerIndex: number, widthMm: number, ...pointsMm: readonly (reado
   widthM: widthMm * MM,
   pointsM: pointsMm.map(([x, y]) => at(x, y)),
 });
-const pin = (name: string, xMm: number, yMm: number, layerIndex = TOP): Pin => ({ name, atM: at(xMm, yMm), layerIndex });
+const pin = (name: string, xMm: number, yMm: number, layerIndex = TOP): Pin => ({
+  name,
+  atM: at(xMm, yMm),
+  layerIndex,
+});
 const via = (xMm: number, yMm: number) => ({
   atM: at(xMm, yMm),
   fromLayerIndex: TOP,

@@ -8,8 +8,10 @@ import { CAUTIONS } from '../../app/report/cautions.ts';
 
 const REQUIRED_MARGIN_DB = 6;
 
-const powerSum = (levels: readonly number[]): number => 10 * Math.log10(levels.reduce((sum, db) => sum + 10 ** (db / 10), 0));
-const linearSum = (levels: readonly number[]): number => 20 * Math.log10(levels.reduce((sum, db) => sum + 10 ** (db / 20), 0));
+const powerSum = (levels: readonly number[]): number =>
+  10 * Math.log10(levels.reduce((sum, db) => sum + 10 ** (db / 10), 0));
+const linearSum = (levels: readonly number[]): number =>
+  20 * Math.log10(levels.reduce((sum, db) => sum + 10 ** (db / 20), 0));
 
 /** A bump of so many dB about a resonance. */
 const bump = (frequencyHz: number, centreHz: number, heightDb: number): number =>
@@ -43,7 +45,12 @@ function pointAt(frequencyHz: number, detector: Detector, limitDbuvPerM: number,
   ];
   if (mhz <= 300) {
     const levelDbuvPerM = 24 - 12 * Math.log10(mhz / 30);
-    contributors.push({ kind: 'cable', name: 'sensor cable', levelDbuvPerM, viaDbuvPerM: { 'sensor cable': levelDbuvPerM } });
+    contributors.push({
+      kind: 'cable',
+      name: 'sensor cable',
+      levelDbuvPerM,
+      viaDbuvPerM: { 'sensor cable': levelDbuvPerM },
+    });
   }
   contributors.sort((one, other) => other.levelDbuvPerM - one.levelDbuvPerM);
   const levels = contributors.map(({ levelDbuvPerM }) => levelDbuvPerM);
@@ -191,7 +198,8 @@ function frame(): Omit<EstimateResult, 'points' | 'worst' | 'verdict'> {
     caveats: [
       {
         code: 'permittivity-guessed',
-        message: 'The stackup file gave no permittivity for this layer; 4.3 was taken. Impedance and delay may be off by 5 %.',
+        message:
+          'The stackup file gave no permittivity for this layer; 4.3 was taken. Impedance and delay may be off by 5 %.',
         where: 'D2',
         fromHz: 0,
         toHz: 0,

@@ -3,8 +3,8 @@ import type { EstimateResult } from '../../estimate/result.ts';
 import { type Markup, markup, shortName } from '../markup.ts';
 import { type BoardFrame, boardExtent, boardFrame, rulerMarkup, scaleBar } from './board-frame.ts';
 import { outlineMarkup, planesMarkup, tracesMarkup, viasMarkup } from './copper.ts';
-import { type Box, boxAround, type LabelRequest, placeLabels } from './place-labels.ts';
 import { linePath, px, ringPath, type Xy } from './path.ts';
+import { type Box, boxAround, type LabelRequest, placeLabels } from './place-labels.ts';
 import { rankDrivenNets } from './rank-nets.ts';
 
 const WIDTH = 760;
@@ -21,7 +21,7 @@ export const NUMBERED_FINDINGS = 40;
 
 /** The board from the top with every layer: copper grey; driven nets, pins, loops, cables and findings emphasised. */
 export function boardFigure(board: Board, result: EstimateResult): Markup {
-  const frame = boardFrame(boardExtent(board), LEFT, TOP, MAX_WIDTH, MAX_HEIGHT);
+  const frame = boardFrame(boardExtent(board), [LEFT, TOP], [MAX_WIDTH, MAX_HEIGHT]);
   const driven = rankDrivenNets(board, result);
   const isDriven = new Set(driven);
   const quiet = board.nets.filter((net) => !isDriven.has(net));
@@ -111,9 +111,12 @@ function labels(board: Board, result: EstimateResult, driven: readonly Net[], fr
     ...pinRequests.map(({ anchor }) => boxAround(anchor, 3)),
   ];
   const placed = placeLabels([...requests, ...pinRequests], { bounds: frame.box, fontPx: LABEL_PX, obstacles });
-  return markup`${placed.map(({ text, anchor, at, leaderTo }, i) => markup`${
-    leaderTo && markup`<path class="leader" d="${linePath([anchor, leaderTo])}"/>`
-  }<text class="label halo${i < requests.length ? '' : ' minor'}" x="${px(at[0])}" y="${px(at[1])}">${text}</text>`)}`;
+  return markup`${placed.map(
+    ({ text, anchor, at, leaderTo }, i) =>
+      markup`${
+        leaderTo && markup`<path class="leader" d="${linePath([anchor, leaderTo])}"/>`
+      }<text class="label halo${i < requests.length ? '' : ' minor'}" x="${px(at[0])}" y="${px(at[1])}">${text}</text>`,
+  )}`;
 }
 
 function middleOfLongestPiece({ traces }: Net): PointM | undefined {

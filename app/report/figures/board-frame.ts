@@ -3,8 +3,8 @@ import { mToMm } from '../../units/convert.ts';
 import { trimmed } from '../format.ts';
 import { type Markup, markup } from '../markup.ts';
 import { linearScale, multiples, roundStep, type Scale } from './axis.ts';
-import type { Box } from './place-labels.ts';
 import { px, type Xy } from './path.ts';
+import type { Box } from './place-labels.ts';
 
 /** Where the board lies in a picture: seen from the top, y up, one scale for both axes. */
 export interface BoardFrame {
@@ -44,10 +44,10 @@ export function boardExtent(board: Board): Extent {
 }
 
 /** Fits the board into a box with a rim around it where cables leave and labels find room. */
-export function boardFrame(extent: Extent, left: number, top: number, maxWidth: number, maxHeight: number): BoardFrame {
+export function boardFrame(extent: Extent, [left, top]: Xy, [maxWidth, maxHeight]: Xy, rimShare = 0.07): BoardFrame {
   const widthM = Math.max(extent.highX - extent.lowX, 1e-4);
   const heightM = Math.max(extent.highY - extent.lowY, 1e-4);
-  const rimM = 0.07 * Math.max(widthM, heightM);
+  const rimM = rimShare * Math.max(widthM, heightM);
   const pxPerM = Math.min(maxWidth / (widthM + 2 * rimM), maxHeight / (heightM + 2 * rimM));
   const lowX = extent.lowX - rimM;
   const lowY = extent.lowY - rimM;
@@ -63,7 +63,10 @@ export function boardFrame(extent: Extent, left: number, top: number, maxWidth: 
 export function rulerMarkup({ box, x, y }: BoardFrame): Markup {
   const stepMm = roundStep(mToMm(Math.max(x.to - x.from, y.to - y.from)), 10);
   const along = (scale: Scale) =>
-    multiples(mToMm(scale.from), mToMm(scale.to), stepMm).map((valueMm) => ({ valueMm, at: scale.at(valueMm / mToMm(1)) }));
+    multiples(mToMm(scale.from), mToMm(scale.to), stepMm).map((valueMm) => ({
+      valueMm,
+      at: scale.at(valueMm / mToMm(1)),
+    }));
   const lower = along(x);
   const upright = along(y);
   const ticks = [

@@ -21,7 +21,13 @@ export function planesMarkup(planes: readonly Plane[], frame: BoardFrame, isShow
 }
 
 /** Traces and vias of the nets, strokes as wide as the copper but never too thin to see. */
-export function tracesMarkup(nets: readonly Net[], frame: BoardFrame, className: string, isShown: LayerTest, minPx = MIN_STROKE_PX): Markup {
+export function tracesMarkup(
+  nets: readonly Net[],
+  frame: BoardFrame,
+  className: string,
+  isShown: LayerTest,
+  minPx = MIN_STROKE_PX,
+): Markup {
   const byWidth = new Map<string, string[]>();
   const add = (widthPx: number, path: string) => {
     const key = px(Math.max(minPx, widthPx));

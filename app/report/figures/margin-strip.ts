@@ -4,10 +4,10 @@ import { type Standing, standingOf } from '../verdict.ts';
 import { linearScale } from './axis.ts';
 import type { ReportLimitLine } from './limit-lines.ts';
 import { markGroup } from './marks.ts';
-import type { Box } from './place-labels.ts';
 import { px, type Xy } from './path.ts';
+import type { Box } from './place-labels.ts';
 import { FIGURE_WIDTH, frequencyNumbers, frequencyScale, gridMarkup, PLOT_LEFT, PLOT_RIGHT } from './spectrum-frame.ts';
-import { thinPoints } from './thin-points.ts';
+import { keepApart, thinPoints } from './thin-points.ts';
 
 const HEIGHT = 146;
 const BOX: Box = { left: PLOT_LEFT, top: 22, right: PLOT_RIGHT, bottom: 120 };
@@ -35,7 +35,7 @@ ${frequencyNumbers(frequency, BOX.bottom + 15)}
 ${band > 0 && markup`<rect class="band" fill="url(#hatch)" x="${px(BOX.left)}" y="${px(zeroY)}" width="${px(BOX.right - BOX.left)}" height="${px(band)}"/>`}
 ${(['fine', 'short', 'over'] as const).map((standing) => markup`<path class="tick ${standing}" d="${ticks(ends(standing))}"/>`)}
 <path class="limit qp" d="M${px(BOX.left)} ${px(zeroY)}H${px(BOX.right)}"/>
-${(['short', 'over'] as const).map((standing) => markGroup(standing, ends(standing)))}
+${(['short', 'over'] as const).map((standing) => markGroup(standing, keepApart(ends(standing).sort(([, one], [, other]) => one - other))))}
 <text class="label" x="${px(BOX.right + 6)}" y="${px(zeroY + 3.5)}">limit</text>
 ${band > 8 && markup`<text class="unit" x="${px(BOX.right + 6)}" y="${px(zeroY + band + 6)}">required margin</text>`}
 </svg>`;

@@ -37,7 +37,9 @@ export function markGroup(standing: Standing, places: readonly (readonly [number
 export const inlineMark = (standing: Standing, label: string): Markup =>
   markup`<svg class="inline" viewBox="-7 -7 14 14" role="img" aria-label="${label}">${markGroup(standing, [[0, 0]])}</svg>`;
 
-const DASH_HALF_PX = 4;
+/** Half a dash where there is room, and where readings stand side by side. */
+export const DASH_HALF_PX = 4;
+export const DENSE_DASH_HALF_PX = 1.6;
 
-export const polarizationDash = (polarization: Polarization, x: number, y: number): string =>
-  polarization === 'horizontal' ? dashPath(x, y, DASH_HALF_PX, 0) : dashPath(x, y, 0, DASH_HALF_PX);
+export const polarizationDash = (polarization: Polarization, x: number, y: number, half: number): string =>
+  polarization === 'horizontal' ? dashPath(x, y, half, 0) : dashPath(x, y, 0, half);

@@ -51,27 +51,28 @@ export function placeLabels(
   for (const request of requests) {
     const width = textWidthPx(request.text, fontPx);
     const found = candidates(request.anchor, width, fontPx).find(
-      ({ box }) => isWithin(box, bounds) && !taken.some((other) => overlap(box, other)),
+      ({ box, leaderTo }) =>
+        isWithin(box, bounds) &&
+        !taken.some((other) => overlap(box, other)) &&
+        (!leaderTo ||
+          !taken.some((other) => !contains(other, request.anchor) && crosses(request.anchor, leaderTo, other))),
     );
     if (!found) continue;
     taken.push(found.box);
-    const { box, distance } = found;
-    placed.push({
-      ...request,
-      at: [box.left, box.bottom - fontPx * 0.25],
-      leaderTo: distance > DISTANCES_PX[0]! ? nearestOnBox(box, request.anchor) : undefined,
-    });
+    placed.push({ ...request, at: [found.box.left, found.box.bottom - fontPx * 0.25], leaderTo: found.leaderTo });
   }
   return placed;
 }
 
-function candidates([x, y]: Xy, width: number, height: number): { box: Box; distance: number }[] {
+function candidates(anchor: Xy, width: number, height: number): { box: Box; leaderTo: Xy | undefined }[] {
+  const [x, y] = anchor;
   return DISTANCES_PX.flatMap((distance) =>
     DIRECTIONS.map(([dx, dy]) => {
       // The box touches the ring with the side that faces the anchor.
       const left = x + dx * distance + (dx > 0.5 ? 0 : dx < -0.5 ? -width : -width / 2);
       const top = y + dy * distance + (dy > 0.5 ? 0 : dy < -0.5 ? -height : -height / 2);
-      return { box: { left, top, right: left + width, bottom: top + height }, distance };
+      const box = { left, top, right: left + width, bottom: top + height };
+      return { box, leaderTo: distance > DISTANCES_PX[0]! ? nearestOnBox(box, anchor) : undefined };
     }),
   );
 }
@@ -81,6 +82,17 @@ const isWithin = (box: Box, bounds: Box): boolean =>
 
 const overlap = (one: Box, other: Box): boolean =>
   one.left < other.right && other.left < one.right && one.top < other.bottom && other.top < one.bottom;
+
+const contains = (box: Box, [x, y]: Xy): boolean => x >= box.left && x <= box.right && y >= box.top && y <= box.bottom;
+
+/** Does the straight piece meet the box? Looked at every few pixels: leaders are short. */
+function crosses([ax, ay]: Xy, [bx, by]: Xy, box: Box): boolean {
+  const steps = Math.ceil(Math.hypot(bx - ax, by - ay) / 3);
+  for (let i = 1; i <= steps; i++) {
+    if (contains(box, [ax + ((bx - ax) * i) / steps, ay + ((by - ay) * i) / steps])) return true;
+  }
+  return false;
+}
 
 const nearestOnBox = (box: Box, [x, y]: Xy): Xy => [
   Math.min(box.right, Math.max(box.left, x)),

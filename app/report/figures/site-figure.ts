@@ -10,11 +10,13 @@ import { linePath, px, ringPath, type Xy } from './path.ts';
 const WIDTH = 760;
 const HEIGHT = 296;
 const SIDE_LEFT = 12;
-const SIDE_WIDTH = 478;
+const SIDE_WIDTH = 388;
 const GROUND_Y = 256;
 const TOP_Y = 24;
 const PLAN_CENTRE: Xy = [640, 138];
-const PLAN_RADIUS = 88;
+const PLAN_RADIUS = 84;
+/** The antenna stands this far before its mast, so that both are seen. */
+const BOOM = 9;
 
 /** Board and cables as the antenna of the worst line meets them. */
 interface Scene {
@@ -28,7 +30,9 @@ export function siteFigure(board: Board, result: EstimateResult): Markup {
   const frame = siteFrame(board, result.site.orientation);
   const topM = board.stackup[0]?.zTopM ?? 0;
   const scene: Scene = {
-    outlines: board.outlineM.flatMap((ring) => [0, topM].map((zM) => ring.map(([xM, yM]) => toSitePoint(frame, [xM, yM, zM])))),
+    outlines: board.outlineM.flatMap((ring) =>
+      [0, topM].map((zM) => ring.map(([xM, yM]) => toSitePoint(frame, [xM, yM, zM]))),
+    ),
     cables: board.cables.map(({ pointsM }) => pointsM.map((point) => toSitePoint(frame, point))),
     azimuthRad: degToRad(result.points[0]?.turntableDeg ?? 0),
   };
@@ -45,7 +49,7 @@ function sideView(scene: Scene, result: EstimateResult): Markup {
   const antennaM = scanRadiusM(site, radiusM);
   const halfTableM = Math.max(0.5, radiusM);
   const leftM = halfTableM + 0.3;
-  const pxPerM = Math.min(SIDE_WIDTH / (leftM + antennaM + 0.5), (GROUND_Y - TOP_Y) / (ANTENNA_HIGHEST_M + 0.1));
+  const pxPerM = Math.min(SIDE_WIDTH / (leftM + antennaM), (GROUND_Y - TOP_Y) / (ANTENNA_HIGHEST_M + 0.1));
   const at = (uM: number, zM: number): Xy => [SIDE_LEFT + (leftM + uM) * pxPerM, GROUND_Y - zM * pxPerM];
   const [cos, sin] = [Math.cos(scene.azimuthRad), Math.sin(scene.azimuthRad)];
   const project = (points: readonly Point3M[]) => points.map(([xM, yM, zM]) => at(xM * cos + yM * sin, zM));
@@ -55,7 +59,7 @@ function sideView(scene: Scene, result: EstimateResult): Markup {
   const [tableRight] = at(halfTableM, 0);
   const [fromX] = at(site.measuredFrom === 'boundary' ? radiusM : 0, 0);
   const [axisX] = at(0, 0);
-  const [endX] = at(antennaM + 0.5, 0);
+  const [endX] = at(antennaM + 0.25, 0);
   const isGround = site.kind === 'ground-plane';
   const dimensionY = GROUND_Y + 14;
   const antenna = worst && at(antennaM, worst.antennaHeightM);
@@ -69,7 +73,7 @@ ${scene.cables.map((cable) => markup`<path class="cable" d="${linePath(project(c
 <path class="ruler" d="M${px(mastX)} ${px(lowY)}V${px(highY)}M${px(mastX - 5)} ${px(lowY)}h10M${px(mastX - 5)} ${px(highY)}h10"/>
 <text class="num" x="${px(mastX + 9)}" y="${px(highY + 3.5)}">${ANTENNA_HIGHEST_M} m</text>
 <text class="num" x="${px(mastX + 9)}" y="${px(lowY + 3.5)}">${ANTENNA_LOWEST_M} m</text>
-${antenna && antennaMark(antenna, result)}
+${antenna && antennaMark(antenna, [lowY, highY], result)}
 <path class="ruler" d="M${px(fromX)} ${px(dimensionY)}H${px(mastX)}M${px(fromX)} ${px(dimensionY - 4)}v8M${px(mastX)} ${px(dimensionY - 4)}v8"/>
 <text class="num middle" x="${px((fromX + mastX) / 2)}" y="${px(dimensionY + 13)}">${trimmed(site.distanceM, 2)} m from ${site.measuredFrom === 'boundary' ? 'the boundary' : 'the axis'}</text>
 <text class="num end" x="${px(tableLeft - 4)}" y="${px(tableY + 3.5)}">${trimmed(site.tableHeightM, 2)} m</text>
@@ -89,14 +93,17 @@ function rays(at: (uM: number, zM: number) => Xy, { site, points }: EstimateResu
 }
 
 /** A vertical antenna as a bar, a horizontal one end-on as a ring with a dot. */
-function antennaMark([x, y]: Xy, { points }: EstimateResult): Markup {
+function antennaMark([x, y]: Xy, [lowY, highY]: Xy, { points }: EstimateResult): Markup {
   const { polarization, antennaHeightM, frequencyHz } = points[0]!;
+  const elementX = x - BOOM;
   const shape =
     polarization === 'vertical'
-      ? markup`<path class="antenna" d="M${px(x)} ${px(y - 9)}v18"/>`
-      : markup`<circle class="antenna" cx="${px(x)}" cy="${px(y)}" r="5"/><circle class="antenna-dot" cx="${px(x)}" cy="${px(y)}" r="1.6"/>`;
-  return markup`${shape}<text class="num" x="${px(x + 9)}" y="${px(y + (Math.abs(antennaHeightM - ANTENNA_LOWEST_M) < 0.25 ? -8 : 3.5))}">${fixed(antennaHeightM, 2)} m, ${polarization}</text>
-<text class="unit end" x="${px(x + 60)}" y="12">antenna at the worst line, ${frequencyText(frequencyHz)}</text>`;
+      ? markup`<path class="antenna" d="M${px(elementX)} ${px(y - 9)}v18"/>`
+      : markup`<circle class="antenna" cx="${px(elementX)}" cy="${px(y)}" r="5"/><circle class="antenna-dot" cx="${px(elementX)}" cy="${px(y)}" r="1.6"/>`;
+  // Two lines of text between the numbers at the travel's ends, never over them.
+  const textY = Math.max(highY + 17, Math.min(lowY - 22, y + 0.5));
+  return markup`<path class="boom" d="M${px(x)} ${px(y)}H${px(elementX)}"/>${shape}<text class="label" x="${px(x + 9)}" y="${px(textY)}">${fixed(antennaHeightM, 2)} m, ${polarization}</text>
+<text class="unit" x="${px(x + 9)}" y="${px(textY + 11)}">worst line, ${frequencyText(frequencyHz)}</text>`;
 }
 
 function planView(scene: Scene, { site, points }: EstimateResult): Markup {
@@ -110,14 +117,15 @@ function planView(scene: Scene, { site, points }: EstimateResult): Markup {
   ];
   const worst = points[0];
   return markup`<text class="label" x="${px(centreX - PLAN_RADIUS - 24)}" y="12">From above</text>
+<clipPath id="plan-clip"><circle cx="${px(centreX)}" cy="${px(centreY)}" r="${PLAN_RADIUS + 1}"/></clipPath>
 <circle class="boundary" cx="${px(centreX)}" cy="${px(centreY)}" r="${PLAN_RADIUS}"/>
 ${[0, 90, 180, 270].map((deg) => {
-  const [x, y] = polar(deg, PLAN_RADIUS + 16);
+  const [x, y] = polar(deg, PLAN_RADIUS + 18);
   return markup`<path class="ruler" d="${linePath([polar(deg, PLAN_RADIUS), polar(deg, PLAN_RADIUS + 5)])}"/><text class="num middle" x="${px(x)}" y="${px(y + 3.5)}">${deg}°</text>`;
 })}
 <path class="axis" d="M${px(centreX - 5)} ${px(centreY)}h10M${px(centreX)} ${px(centreY - 5)}v10"/>
-${scene.cables.map((cable) => markup`<path class="cable" d="${linePath(cable.map(at))}"/>`)}
-<path class="board-plan" d="${scene.outlines.map((ring) => ringPath(ring.map(at))).join('')}"/>
+<g clip-path="url(#plan-clip)">${scene.cables.map((cable) => markup`<path class="cable" d="${linePath(cable.map(at))}"/>`)}
+<path class="board-plan" d="${scene.outlines.map((ring) => ringPath(ring.map(at))).join('')}"/></g>
 ${worst && markup`<path class="arrow" d="${linePath([polar(worst.turntableDeg, PLAN_RADIUS - 2), polar(worst.turntableDeg, PLAN_RADIUS + 30)])}"/>${arrowHead(polar, worst.turntableDeg)}`}
 <text class="num middle" x="${px(centreX)}" y="${px(centreY + PLAN_RADIUS + 44)}">boundary radius ${fixed(site.boundaryRadiusM, 2)} m${worst ? `; worst line from ${fixed(worst.turntableDeg, 0)}°` : ''}</text>
 ${scaleBar(pxPerM, [centreX - PLAN_RADIUS, centreY + PLAN_RADIUS + 58], 90, 'm')}`;

@@ -4,17 +4,27 @@ import { type Markup, markup, shortName } from '../markup.ts';
 import { type Standing, standingOf } from '../verdict.ts';
 import type { Scale } from './axis.ts';
 import { clipLine, type ReportLimitLine } from './limit-lines.ts';
-import { markGroup, polarizationDash } from './marks.ts';
-import { type Box, boxAround, placeLabels } from './place-labels.ts';
+import { DASH_HALF_PX, DENSE_DASH_HALF_PX, markGroup, polarizationDash } from './marks.ts';
 import { linePath, px, type Xy } from './path.ts';
-import { FIGURE_WIDTH, frequencyNumbers, frequencyScale, gridMarkup, levelScale, PLOT_LEFT, PLOT_RIGHT } from './spectrum-frame.ts';
-import { thinPoints } from './thin-points.ts';
+import { type Box, boxAround, type LabelRequest, placeLabels } from './place-labels.ts';
+import {
+  FIGURE_WIDTH,
+  frequencyNumbers,
+  frequencyScale,
+  gridMarkup,
+  levelScale,
+  PLOT_LEFT,
+  PLOT_RIGHT,
+} from './spectrum-frame.ts';
+import { keepApart, thinPoints } from './thin-points.ts';
 
 const HEIGHT = 372;
 const BOX: Box = { left: PLOT_LEFT, top: 22, right: PLOT_RIGHT, bottom: 346 };
 const LABEL_PX = 10;
 /** Worst frequencies with a label. */
 const LABELLED = 7;
+/** Lines nearer than this to a worse one go without a label. */
+const LABEL_APART_PX = 8;
 /** More readings than this, and rings and stems would only darken the plot. */
 const CALM_COUNT = 120;
 
@@ -37,7 +47,7 @@ ${dashes(points, frequency, level)}
 </g>
 ${limitMarkup(lines, frequency, level)}
 ${STANDINGS.map((standing) => markGroup(standing, markPlaces(points, standing, result, frequency, level)))}
-${labelMarkup(result, lines, frequency, level)}
+${labelMarkup(result, points, lines, frequency, level)}
 </svg>`;
 }
 
@@ -52,25 +62,42 @@ function bandMarkup(line: ReportLimitLine, requiredMarginDb: number, frequency: 
 function stems(points: readonly ResultPoint[], frequency: Scale, level: Scale): Markup {
   const path = points
     .filter(({ levelDbuvPerM }) => levelDbuvPerM > level.from)
-    .map(({ frequencyHz, levelDbuvPerM }) => `M${px(frequency.at(frequencyHz))} ${px(BOX.bottom)}V${px(level.at(levelDbuvPerM))}`);
+    .map(
+      ({ frequencyHz, levelDbuvPerM }) =>
+        `M${px(frequency.at(frequencyHz))} ${px(BOX.bottom)}V${px(level.at(levelDbuvPerM))}`,
+    );
   return markup`<path class="stem" d="${path.join('')}"/>`;
 }
 
 function dashes(points: readonly ResultPoint[], frequency: Scale, level: Scale): Markup {
+  const half = points.length <= CALM_COUNT ? DASH_HALF_PX : DENSE_DASH_HALF_PX;
   const path = (polarization: 'horizontal' | 'vertical') =>
     points
-      .map((point) => ({ x: frequency.at(point.frequencyHz), levelDb: polarization === 'horizontal' ? point.horizontalDbuvPerM : point.verticalDbuvPerM }))
+      .map((point) => ({
+        x: frequency.at(point.frequencyHz),
+        levelDb: polarization === 'horizontal' ? point.horizontalDbuvPerM : point.verticalDbuvPerM,
+      }))
       .filter(({ levelDb }) => levelDb > level.from)
-      .map(({ x, levelDb }) => polarizationDash(polarization, x, level.at(levelDb)))
+      .map(({ x, levelDb }) => polarizationDash(polarization, x, level.at(levelDb), half))
       .join('');
   return markup`<path class="pol-h" d="${path('horizontal')}"/><path class="pol-v" d="${path('vertical')}"/>`;
 }
 
-function markPlaces(points: readonly ResultPoint[], standing: Standing, result: EstimateResult, frequency: Scale, level: Scale): Xy[] {
+function markPlaces(
+  points: readonly ResultPoint[],
+  standing: Standing,
+  result: EstimateResult,
+  frequency: Scale,
+  level: Scale,
+): Xy[] {
   if (standing === 'fine' && points.length > CALM_COUNT) return [];
-  return points
-    .filter((point) => standingOf(point, result.limit.requiredMarginDb) === standing && point.levelDbuvPerM > level.from)
+  const shown = points
+    .filter(
+      (point) => standingOf(point, result.limit.requiredMarginDb) === standing && point.levelDbuvPerM > level.from,
+    )
+    .sort((one, other) => one.marginDb - other.marginDb)
     .map((point): Xy => [frequency.at(point.frequencyHz), level.at(point.levelDbuvPerM)]);
+  return points.length <= CALM_COUNT ? shown : keepApart(shown);
 }
 
 const LIMIT_CLASS = { 'quasi-peak': 'limit qp', average: 'limit av', peak: 'limit pk' } as const;
@@ -99,26 +126,51 @@ function limitMarkup(lines: readonly ReportLimitLine[], frequency: Scale, level:
   })}`;
 }
 
-/** Frequency and margin beside the worst lines, where there is room. */
-function labelMarkup(result: EstimateResult, lines: readonly ReportLimitLine[], frequency: Scale, level: Scale): Markup {
-  const named = new Map<number, { text: string; anchor: Xy }>();
+/** Frequencies beside the worst lines, where there is room; the worst with its margin. */
+function labelMarkup(
+  result: EstimateResult,
+  drawn: readonly ResultPoint[],
+  lines: readonly ReportLimitLine[],
+  frequency: Scale,
+  level: Scale,
+): Markup {
+  const placeOf = (point: ResultPoint): Xy => [frequency.at(point.frequencyHz), level.at(point.levelDbuvPerM)];
+  const named = new Map<number, LabelRequest>();
   for (const point of result.points) {
     if (named.size >= LABELLED) break;
     if (named.has(point.frequencyHz) || point.levelDbuvPerM <= level.from) continue;
-    const text = `${frequencyText(point.frequencyHz)}  ${marginText(point.marginDb).replace('-', '−')} dB`;
-    named.set(point.frequencyHz, { text, anchor: [frequency.at(point.frequencyHz), level.at(point.levelDbuvPerM)] });
+    const [x] = placeOf(point);
+    if ([...named.values()].some(({ anchor }) => Math.abs(anchor[0] - x) < LABEL_APART_PX)) continue;
+    const margin = named.size === 0 ? `, ${marginText(point.marginDb).replace('-', '−')} dB` : '';
+    named.set(point.frequencyHz, { text: `${frequencyText(point.frequencyHz)}${margin}`, anchor: placeOf(point) });
   }
-  const requests = [...named.values()];
-  const limitBoxes = lines.flatMap(({ points }) => {
+  const isCalm = drawn.length <= CALM_COUNT;
+  const marks = drawn
+    .filter((point) => isCalm || standingOf(point, result.limit.requiredMarginDb) !== 'fine')
+    .map((point) => boxAround(placeOf(point), 4));
+  const anchors = [...named.values()].map(({ anchor }) => boxAround(anchor, 6));
+  const obstacles = [...limitBoxes(lines, frequency, level), ...marks, ...anchors];
+  const placed = placeLabels([...named.values()], { bounds: BOX, fontPx: LABEL_PX, obstacles });
+  return markup`${placed.map(
+    ({ text, anchor, at, leaderTo }) =>
+      markup`${
+        leaderTo && markup`<path class="leader" d="${linePath([anchor, leaderTo])}"/>`
+      }<text class="label halo" x="${px(at[0])}" y="${px(at[1])}">${text}</text>`,
+  )}`;
+}
+
+/** Pieces of the limit lines as boxes, so that no label lies on them. */
+function limitBoxes(lines: readonly ReportLimitLine[], frequency: Scale, level: Scale): Box[] {
+  return lines.flatMap(({ points }) => {
     const clipped = clipLine(points, frequency.from, frequency.to);
     return clipped.slice(1).map(([hz, db], i): Box => {
       const [fromHz, fromDb] = clipped[i]!;
-      return { left: frequency.at(fromHz) - 2, right: frequency.at(hz) + 2, top: level.at(Math.max(db, fromDb)) - 2, bottom: level.at(Math.min(db, fromDb)) + 2 };
+      return {
+        left: frequency.at(fromHz) - 2,
+        right: frequency.at(hz) + 2,
+        top: level.at(Math.max(db, fromDb)) - 2,
+        bottom: level.at(Math.min(db, fromDb)) + 2,
+      };
     });
   });
-  const obstacles = [...limitBoxes, ...requests.map(({ anchor }) => boxAround(anchor, 6))];
-  const placed = placeLabels(requests, { bounds: BOX, fontPx: LABEL_PX, obstacles });
-  return markup`${placed.map(({ text, anchor, at, leaderTo }) => markup`${
-    leaderTo && markup`<path class="leader" d="${linePath([anchor, leaderTo])}"/>`
-  }<text class="label halo" x="${px(at[0])}" y="${px(at[1])}">${text}</text>`)}`;
 }

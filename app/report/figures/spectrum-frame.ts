@@ -2,19 +2,22 @@ import type { EstimateResult } from '../../estimate/result.ts';
 import { type Markup, markup } from '../markup.ts';
 import { frequencyTicks, linearScale, logScale, multiples, type Scale } from './axis.ts';
 import { clipLine, type ReportLimitLine } from './limit-lines.ts';
-import type { Box } from './place-labels.ts';
 import { px } from './path.ts';
+import type { Box } from './place-labels.ts';
 
 export const FIGURE_WIDTH = 760;
 export const PLOT_LEFT = 46;
-export const PLOT_RIGHT = 640;
+export const PLOT_RIGHT = 664;
 
 /** The frequency axis shared by spectrum and margin strip. */
 export function frequencyScale(result: EstimateResult, lines: readonly ReportLimitLine[]): Scale {
   const frequencies = result.points.map(({ frequencyHz }) => frequencyHz);
   const starts = lines.map(({ points }) => points[0]?.[0] ?? 30e6);
   // Lines of a standard may start far below the radiated range: the plot does not, unless there is something to see.
-  const start = least([30e6, ...frequencies]) < 30e6 ? least(frequencies) : Math.max(30e6, least([...starts, ...frequencies], 30e6));
+  const start =
+    least([30e6, ...frequencies]) < 30e6
+      ? least(frequencies)
+      : Math.max(30e6, least([...starts, ...frequencies], 30e6));
   const end = Math.max(result.limit.maxHz, greatest(frequencies, 0), start * 2);
   return logScale(start, end, PLOT_LEFT, PLOT_RIGHT);
 }
@@ -22,7 +25,7 @@ export function frequencyScale(result: EstimateResult, lines: readonly ReportLim
 /** Deepest view below the lowest limit: what lies under it does not matter to anybody. */
 const DEPTH_DB = 60;
 
-/** The level axis: limits, levels and some air; whole tens. */
+/** The level axis: limits, levels and some air. */
 export function levelScale(
   result: EstimateResult,
   lines: readonly ReportLimitLine[],
@@ -33,12 +36,16 @@ export function levelScale(
     ...lines.flatMap(({ points }) => clipLine(points, frequency.from, frequency.to).map(([, limitDb]) => limitDb)),
     ...result.points.map(({ limitDbuvPerM }) => limitDbuvPerM),
   ];
-  const levels = result.points.flatMap((point) => [point.horizontalDbuvPerM, point.verticalDbuvPerM, point.levelDbuvPerM]);
+  const levels = result.points.flatMap((point) => [
+    point.horizontalDbuvPerM,
+    point.verticalDbuvPerM,
+    point.levelDbuvPerM,
+  ]);
   const seen = levels.filter(Number.isFinite);
   const lowestLimit = least(limits, 40);
   const low = Math.max(lowestLimit - DEPTH_DB, Math.min(least(seen, lowestLimit), lowestLimit - 30));
-  const high = Math.max(greatest(limits, 40), greatest(seen, 0)) + 6;
-  return linearScale(Math.floor(low / 10) * 10, Math.ceil(high / 10) * 10, bottomPx, topPx);
+  const high = Math.max(greatest(limits, 40), greatest(seen, 0)) + 3;
+  return linearScale(Math.floor(low / 10) * 10, Math.ceil(high / 5) * 5, bottomPx, topPx);
 }
 
 /** Grid, frame and numbers of both axes. */

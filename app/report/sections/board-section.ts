@@ -12,10 +12,13 @@ export function boardSection(board: Board, result: EstimateResult): Markup {
   const layers = layerFigure(board, result);
   return markup`<section class="keep"><h2>Board</h2>
 <figure>${boardFigure(board, result)}
-<figcaption><span>From the top, all layers, axes in mm.</span><span>Grey: planes and undriven copper.</span><span>Dark: ${countText(driven, 'driven net')}, dashed below the top layer${
-    unnamed > 0 && `; the ${NAMED_NETS} that emit most are named`
-  }.</span><span>Filled squares are driven pins, hollow ones loads.</span>${board.loops.length > 0 && markup`<span>Dotted: current loops.</span>`}${
-    board.cables.length > 0 && markup`<span>Double lines: cables, to the edge of the picture.</span>`
+<figcaption><span>From the top, all layers, axes in mm.</span><span>Grey: planes and undriven copper.</span>${
+    driven > 0 &&
+    markup`<span>Heavy: ${countText(driven, 'driven net')}, dashed below the top layer${
+      unnamed > 0 && `; the ${NAMED_NETS} that emit most are named`
+    }.</span><span>Filled squares: driven pins; hollow: loads.</span>`
+  }${board.loops.length > 0 && markup`<span>Dotted: current loops.</span>`}${
+    board.cables.length > 0 && markup`<span>Lines to the edge: cables.</span>`
   }${result.findings.length > 0 && markup`<span>Numbers: findings.</span>`}</figcaption></figure></section>
 ${layers && markup`<section class="keep"><h3>Layers, from the top</h3><figure>${layers}</figure></section>`}`;
 }

@@ -21,8 +21,9 @@ export function findingsSection({ findings }: EstimateResult): Markup {
       markup`<tr><td class="n">${i + 1}</td><td>${nameMarkup(net, 30)}</td><td class="whole">${placeText(atM).replaceAll('-', '−')}</td><td>${nameMarkup(layer, 24)}</td><td>${nameMarkup(message, 400)}</td></tr>`,
   )}</tbody></table>
 ${left > 0 && markup`<p class="note">${left} more in the JSON result.</p>`}${
-    findings.length > NUMBERED_FINDINGS && markup`<p class="note">The first ${NUMBERED_FINDINGS} are numbered on the board.</p>`
-  }</section>`;
+  findings.length > NUMBERED_FINDINGS &&
+  markup`<p class="note">The first ${NUMBERED_FINDINGS} are numbered on the board.</p>`
+}</section>`;
 }
 
 /** What the model includes and leaves out, and every caveat with its range. */
@@ -34,8 +35,8 @@ export function modelSection(result: EstimateResult): Markup {
 <div class="columns"><div><h3>Included</h3><ul>${included.map((text) => markup`<li>${text}</li>`)}</ul></div><div><h3>Not included</h3><ul>${missing.map((text) => markup`<li>${text}</li>`)}</ul></div></div>
 <h3>${result.caveats.length === 0 ? 'No caveats' : countText(result.caveats.length, 'caveat')}</h3>
 ${shown.length > 0 && markup`<table><thead><tr><th>Caveat</th><th>Applies to</th><th>Range</th><th>What it means</th></tr></thead><tbody>${shown.map(caveatRow)}</tbody></table>`}${
-    groups.length > shown.length && markup`<p class="note">${groups.length - shown.length} more in the JSON result.</p>`
-  }</section>`;
+  groups.length > shown.length && markup`<p class="note">${groups.length - shown.length} more in the JSON result.</p>`
+}</section>`;
 }
 
 function caveatRow(group: CaveatGroup): Markup {
@@ -43,5 +44,5 @@ function caveatRow(group: CaveatGroup): Markup {
   const more = group.where.length - places.length;
   return markup`<tr><td class="code">${group.code}</td><td>${
     places.length === 0 ? 'whole result' : places.map((place, i) => markup`${i > 0 && ', '}${nameMarkup(place, 60)}`)
-  }${more > 0 && ` and ${more} more`}</td><td>${rangeText(group.fromHz, group.toHz)}</td><td>${nameMarkup(group.message, 500)}</td></tr>`;
+  }${more > 0 && ` and ${more} more`}</td><td class="whole">${rangeText(group.fromHz, group.toHz)}</td><td>${nameMarkup(group.message, 500)}</td></tr>`;
 }

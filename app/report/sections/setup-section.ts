@@ -1,7 +1,7 @@
 import type { Board } from '../../board/board.ts';
 import type { EstimateResult } from '../../estimate/result.ts';
+import { clipLine, type ReportLimitLine } from '../figures/limit-lines.ts';
 import { siteFigure } from '../figures/site-figure.ts';
-import { type ReportLimitLine, clipLine } from '../figures/limit-lines.ts';
 import { frequencyText, levelText, trimmed } from '../format.ts';
 import { type Markup, markup } from '../markup.ts';
 import { numberCell } from './number.ts';
@@ -25,7 +25,9 @@ function limitTable(lines: readonly ReportLimitLine[], maxHz: number): Markup {
       const [fromHz, fromDb] = clipped[i]!;
       if (fromHz === toHz) return [];
       const level = fromDb === toDb ? trimmed(toDb, 2) : `${trimmed(fromDb, 2)} to ${trimmed(toDb, 2)}`;
-      return [markup`<tr>${numberCell(frequencyText(fromHz))}${numberCell(frequencyText(toHz))}<td>${detector}</td>${numberCell(level)}</tr>`];
+      return [
+        markup`<tr>${numberCell(frequencyText(fromHz))}${numberCell(frequencyText(toHz))}<td>${detector}</td>${numberCell(level)}</tr>`,
+      ];
     });
   });
   return markup`<table class="narrow"><thead><tr><th class="n">From</th><th class="n">To</th><th>Detector</th><th class="n">Limit, dBµV/m</th></tr></thead><tbody>${rows}</tbody></table><p class="note">At a band edge the tighter line holds. A sloping line is straight over the logarithm of frequency.</p>`;

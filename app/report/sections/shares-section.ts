@@ -1,5 +1,5 @@
 import type { Contributor, EstimateResult, ResultPoint } from '../../estimate/result.ts';
-import { pathsOf, pathText } from '../contributor-text.ts';
+import { KIND_REMARK, pathsOf, pathText } from '../contributor-text.ts';
 import { BAR_SPAN_DB, levelBar } from '../figures/bars.ts';
 import { frequencyText, levelText, marginText } from '../format.ts';
 import { type Markup, markup, nameMarkup } from '../markup.ts';
@@ -7,7 +7,7 @@ import { DETECTOR_SHORT } from '../text-table.ts';
 import { printed } from './number.ts';
 
 /** Frequencies taken apart, contributors and paths listed for each. */
-const MOST_FREQUENCIES = 8;
+const MOST_FREQUENCIES = 6;
 const MOST_CONTRIBUTORS = 5;
 const MOST_PATHS = 4;
 
@@ -16,7 +16,7 @@ export function sharesSection(result: EstimateResult): Markup {
   const worst = worstOfEachFrequency(result.points).slice(0, MOST_FREQUENCIES);
   if (worst.every(({ contributors }) => contributors.length === 0)) return markup``;
   return markup`<section><h2>What the worst lines are made of</h2>
-<p class="note">Levels at the height, angle and polarisation of each maximum. Within one clock domain contributors add as phasors (they may cancel: a part can be larger than the sum); different domains add as powers. The paths of one contributor always add as phasors. A full bar is the strongest part, an empty one ${BAR_SPAN_DB} dB or more below it.</p>
+<p class="note lead">Levels at the height, angle and polarisation of each maximum. Within one clock domain contributors add as phasors (they may cancel: a part can be larger than the sum); different domains add as powers. The paths of one contributor always add as phasors. A full bar is the strongest part, an empty one ${BAR_SPAN_DB} dB below it; what is weaker is not listed.</p>
 <div class="shares">${worst.map((point) => shareBlock(point))}</div></section>`;
 }
 
@@ -27,11 +27,16 @@ function worstOfEachFrequency(points: readonly ResultPoint[]): ResultPoint[] {
 }
 
 function shareBlock(point: ResultPoint): Markup {
-  const shown = point.contributors.slice(0, MOST_CONTRIBUTORS);
-  const left = point.contributors.length - shown.length;
-  const topDb = shown
-    .flatMap((contributor) => [contributor.levelDbuvPerM, ...pathsOf(contributor).map(({ levelDbuvPerM }) => levelDbuvPerM)])
+  const topDb = point.contributors
+    .flatMap((contributor) => [
+      contributor.levelDbuvPerM,
+      ...pathsOf(contributor).map(({ levelDbuvPerM }) => levelDbuvPerM),
+    ])
     .reduce((one, other) => Math.max(one, other), point.levelDbuvPerM);
+  const shown = point.contributors
+    .slice(0, MOST_CONTRIBUTORS)
+    .filter(({ levelDbuvPerM }) => levelDbuvPerM > topDb - BAR_SPAN_DB);
+  const left = point.contributors.length - shown.length;
   return markup`<table class="share"><thead><tr><th>${frequencyText(point.frequencyHz)} <span class="quiet">${DETECTOR_SHORT[point.detector]}, margin ${printed(marginText(point.marginDb))} dB</span></th><th class="n">${printed(levelText(point.levelDbuvPerM))}</th><th class="quiet">dBµV/m</th></tr></thead>
 <tbody>${shown.map((contributor) => contributorRows(contributor, topDb))}${
     left > 0 && markup`<tr class="path"><td colspan="3">${left} weaker in the JSON result</td></tr>`
@@ -39,9 +44,10 @@ function shareBlock(point: ResultPoint): Markup {
 }
 
 function contributorRows(contributor: Contributor, topDb: number): Markup {
-  const paths = pathsOf(contributor);
+  const paths = pathsOf(contributor).filter(({ levelDbuvPerM }) => levelDbuvPerM > topDb - BAR_SPAN_DB);
   const isSame = paths.length === 1 && paths[0]!.levelDbuvPerM === contributor.levelDbuvPerM;
-  return markup`<tr><td>${nameMarkup(contributor.name, 30)} <span class="quiet">${contributor.kind}${isSame && paths[0]!.name !== contributor.name && `, ${pathText(paths[0]!.name)}`}</span></td><td class="n">${printed(levelText(contributor.levelDbuvPerM))}</td><td class="bars">${levelBar(contributor.levelDbuvPerM, topDb, 'bar-whole')}</td></tr>${
+  const remark = contributor.kind === 'net' && isSame ? pathText(paths[0]!.name) : KIND_REMARK[contributor.kind];
+  return markup`<tr><td>${nameMarkup(contributor.name, 30)} <span class="quiet">${remark}</span></td><td class="n">${printed(levelText(contributor.levelDbuvPerM))}</td><td class="bars">${levelBar(contributor.levelDbuvPerM, topDb, 'bar-whole')}</td></tr>${
     !isSame &&
     paths
       .slice(0, MOST_PATHS)

@@ -42,17 +42,27 @@ ${table('Current loops', ['Name', 'Size', 'Waveform', 'Delay', ''], board.loops,
   quantityText(loop.delayS, 's'),
   loop.isInverted && 'inverted',
 ])}
-${table('Cables', ['Name', 'Length', 'Radius', 'Far end', 'At the connector', 'Common-mode current'], board.cables, (cable) => [
-  nameMarkup(cable.name, 30),
-  cableLengthText(cable.pointsM),
-  quantityText(cable.radiusM, 'm'),
-  farEndText(cable.farEnd),
-  seriesText(cable),
-  commonModeText(cable),
-])}</section>`;
+${table(
+  'Cables',
+  ['Name', 'Length', 'Radius', 'Far end', 'At the connector', 'Common-mode current'],
+  board.cables,
+  (cable) => [
+    nameMarkup(cable.name, 30),
+    cableLengthText(cable.pointsM),
+    quantityText(cable.radiusM, 'm'),
+    farEndText(cable.farEnd),
+    seriesText(cable),
+    commonModeText(cable),
+  ],
+)}</section>`;
 }
 
-function table<Row>(title: string, heads: readonly string[], rows: readonly Row[], cells: (row: Row) => readonly Insert[]): Markup {
+function table<Row>(
+  title: string,
+  heads: readonly string[],
+  rows: readonly Row[],
+  cells: (row: Row) => readonly Insert[],
+): Markup {
   if (rows.length === 0) return markup`<p class="note">${title}: none.</p>`;
   const shown = rows.slice(0, MOST_ROWS);
   const left = rows.length - shown.length;

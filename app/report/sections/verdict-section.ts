@@ -1,6 +1,6 @@
 import type { EstimateResult, Verdict } from '../../estimate/result.ts';
 import { DEFERENCE } from '../cautions.ts';
-import { mainContributor, pathText } from '../contributor-text.ts';
+import { KIND_PHRASE, mainContributor, pathText } from '../contributor-text.ts';
 import { inlineMark } from '../figures/marks.ts';
 import { countText, fixed, frequencyText, levelText } from '../format.ts';
 import { type Markup, markup, nameMarkup } from '../markup.ts';
@@ -24,10 +24,14 @@ export function verdictSection(result: EstimateResult): Markup {
 
 function summary(result: EstimateResult): Markup {
   const { limit, caveats, findings } = result;
-  const counts = result.points.length === 0 ? '' : `${readingsText(result.points)} up to ${frequencyText(limit.maxHz)}: ${standingsText(result)}. `;
+  const counts =
+    result.points.length === 0
+      ? ''
+      : `${readingsText(result.points)} up to ${frequencyText(limit.maxHz)}: ${standingsText(result)}. `;
   const said = [
     caveats.length > 0 && `${countText(caveats.length, 'caveat applies', 'caveats apply')}`,
-    findings.length > 0 && `${countText(findings.length, 'place', 'places')} on the board deserve${findings.length === 1 ? 's' : ''} a look`,
+    findings.length > 0 &&
+      `${countText(findings.length, 'place', 'places')} on the board deserve${findings.length === 1 ? 's' : ''} a look`,
   ].filter((part) => part !== false);
   const tail = said.length === 0 ? '' : ` ${said.join('; ')}.`;
   const uncertainty = ` A laboratory's own uncertainty is ±${levelText(limit.labUncertaintyDb)} dB; the error of this model comes on top and is not in that figure.`;
@@ -40,8 +44,12 @@ function worstSentence(result: EstimateResult): Markup {
   const sentence = text[0]!.toUpperCase() + text.slice(1);
   if (!worst) return markup`${sentence}.`;
   const main = mainContributor(worst);
-  const from = main && markup` Most of it comes from ${main.contributor.kind} ${nameMarkup(main.contributor.name)}${
-    main.path && main.path.name !== main.contributor.name && markup`, radiated mainly by the ${nameMarkup(pathText(main.path.name))}`
-  }.`;
+  const from =
+    main &&
+    markup` Most of it comes from ${KIND_PHRASE[main.contributor.kind]}${nameMarkup(main.contributor.name)}${
+      main.path &&
+      main.path.name !== main.contributor.name &&
+      markup`, radiated mainly by the ${nameMarkup(pathText(main.path.name))}`
+    }.`;
   return markup`${sentence}: ${printed(levelText(worst.levelDbuvPerM))} dBµV/m against ${printed(levelText(worst.limitDbuvPerM))} dBµV/m, ${worst.polarization}, antenna at ${fixed(worst.antennaHeightM, 2)} m, turntable ${fixed(worst.turntableDeg, 0)}°.${from}`;
 }
