@@ -42,7 +42,8 @@ const ONE_GHZ = 1e9;
 
 /**
  * The limit lines of a standard, class and distance. Names compare without case, spaces and punctuation, aliases count.
- * With `convertDistance`, ranges without a line at the distance are filled from the nearest one (by ratio) that has.
+ * With `convertDistance`, ranges without a line at the distance are filled from the nearest one (by ratio) that has; a line
+ * that overlaps a chosen one of its detector is an alternative to it and stays out.
  * Throws `input` (paths standard, class, distance), listing what exists.
  */
 export function chooseLimits(request: LimitRequest, catalogue: readonly LimitLine[] = allLimitLines): LimitSet {
