@@ -15,7 +15,7 @@ export interface LimitRequest {
   readonly siteKind?: 'ground-plane' | 'free-space';
 }
 
-export interface JudgedLimit {
+interface JudgedLimit {
   readonly detector: Detector;
   readonly limitDbuvPerM: number;
 }

@@ -1,4 +1,4 @@
-import { type Caveat, inputError } from '../errors.ts';
+import { inputError } from '../errors.ts';
 
 /** A line at the receiver's input: its field as rms of a sine, V/m. */
 export interface ReceivedLine {
@@ -47,7 +47,8 @@ export function bandwidthHz(frequencyHz: number): number {
  *
  * One line alone reads the same on every detector. Of several, the sums are bounds: the average of an envelope never
  * exceeds its rms value (lines more than 10 Hz apart, so that the meter of 100 ms does not follow the beat), its peak never
- * the linear sum, and quasi-peak lies between. Empty bandwidth: zeros.
+ * the linear sum, and quasi-peak lies between; a result built on several lines says so (caveat `several-lines-in-bandwidth`). Empty
+ * bandwidth: zeros.
  */
 export function combineInBandwidth(lines: readonly ReceivedLine[], centreHz: number): BandwidthReading {
   const halfHz = bandwidthHz(centreHz) / 2;
@@ -63,14 +64,3 @@ export function combineInBandwidth(lines: readonly ReceivedLine[], centreHz: num
   // One line: exactly its own value, on every detector.
   return { averageRms: count === 1 ? peakRms : Math.sqrt(power), peakRms, count };
 }
-
-/** Said wherever more than one line fell into the bandwidth. */
-export const severalLinesCaveat = (fromHz: number, toHz: number): Caveat => ({
-  code: 'several-lines-in-bandwidth',
-  message:
-    'Several spectral lines lie in the receiver bandwidth: the average level is their rms sum, the peak and quasi-peak ' +
-    'levels are their linear sum. These are upper bounds; the detectors are not simulated.',
-  where: '',
-  fromHz,
-  toHz,
-});

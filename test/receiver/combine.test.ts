@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { bandwidthHz, combineInBandwidth, severalLinesCaveat } from '../../app/receiver/combine.ts';
+import { bandwidthHz, combineInBandwidth } from '../../app/receiver/combine.ts';
 
 describe('bandwidth (CISPR 16-1-1, as printed in receiver manuals)', () => {
   it.each([
@@ -80,13 +80,5 @@ describe('lines in the bandwidth', () => {
       }),
       { seed: 5, numRuns: 50 },
     );
-  });
-
-  it('is said', () => {
-    expect(severalLinesCaveat(30e6, 1e9)).toMatchObject({
-      code: 'several-lines-in-bandwidth',
-      fromHz: 30e6,
-      toHz: 1e9,
-    });
   });
 });
