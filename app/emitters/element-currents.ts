@@ -1,4 +1,4 @@
-import type { NetworkResponse } from '../network/solve-network.ts';
+import type { NetworkResponse } from '../network/network.ts';
 
 /** Current taken from the end of a section, counted as leaving the node into the section. */
 export interface EndTerm {

@@ -1,5 +1,5 @@
 import type { Board } from '../board/board.ts';
-import type { NetworkDrive, NetworkLoad } from '../network/solve-network.ts';
+import type { NetworkDrive, NetworkLoad } from '../network/network.ts';
 import type { PlaneIndex } from '../returns/reference.ts';
 import type { SiteFrame } from '../site/site.ts';
 import type { StitchIndex } from './transitions.ts';

@@ -3,7 +3,7 @@ import { type Caveat, inputError } from '../errors.ts';
 import type { Finding } from '../estimate/result.ts';
 import type { Line } from '../lines/cross-section.ts';
 import { buildNetGraph, type GraphSegment, type NetGraph } from '../network/net-graph.ts';
-import type { Network } from '../network/solve-network.ts';
+import type { Network } from '../network/network.ts';
 import { viaInductanceH } from '../network/via.ts';
 import type { SegmentReference } from '../returns/reference.ts';
 import { gapFindings } from './gap-findings.ts';

@@ -1,4 +1,4 @@
-import type { LimitSet } from '../limits/choose-limits.ts';
+import type { LimitSet } from '../limits/choose.ts';
 import type { SiteRequest } from '../site/site.ts';
 
 /** What to estimate a board against, and how. */

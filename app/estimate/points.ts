@@ -1,4 +1,4 @@
-import type { LimitSet } from '../limits/choose-limits.ts';
+import type { LimitSet } from '../limits/choose.ts';
 import { bandwidthHz, combineInBandwidth } from '../receiver/combine.ts';
 import { peakFieldToDbuvPerM, rmsFieldToDbuvPerM } from '../units/convert.ts';
 import type { LineLevel } from './line-level.ts';
