@@ -58,9 +58,8 @@ export function safeTerminalText(text: string, maxWidth: number): string {
   const visible = visibleText(isHuge ? `${text.slice(0, reach)}${text.slice(-reach)}` : text);
   if (!isHuge && terminalWidth(visible) <= maxWidth) return visible;
   const characters = Array.from(visible);
-  const headWidth = Math.ceil((maxWidth - 1) * 0.6);
-  const head = take(characters, headWidth);
-  const tail = take(characters.toReversed(), maxWidth - 1 - headWidth).toReversed();
+  const head = take(characters, Math.ceil((maxWidth - 1) * 0.6));
+  const tail = take(characters.toReversed(), maxWidth - 1 - terminalWidth(head.join(''))).toReversed();
   while (tail.length > 0 && MARK.test(tail[0]!)) tail.shift();
   return `${head.join('')}…${tail.join('')}`;
 }

@@ -57,11 +57,11 @@ function setup({ site, limit, structure }: EstimateResult, width: number): strin
       : 'the turntable axis';
   const place = `${ground}, ${trimmed(site.distanceM, 2)} m from ${from}, board ${site.orientation} at ${trimmed(site.tableHeightM, 2)} m; planes and cables ${structure === 'solved' ? 'solved' : 'not solved (pair only)'}`;
   const line = [
-    `${visibleText(limit.edition)} (${visibleText(limit.sourceStatus)})`,
-    `to ${frequencyText(limit.maxHz)} (${visibleText(limit.maxRule)})`,
+    `${safeTerminalText(limit.edition, 120)} (${safeTerminalText(limit.sourceStatus, 60)})`,
+    `to ${frequencyText(limit.maxHz)} (${safeTerminalText(limit.maxRule, 200)})`,
     `required margin ${trimmed(limit.requiredMarginDb, 1)} dB`,
     `laboratory ±${levelText(limit.labUncertaintyDb)} dB`,
-    ...(limit.conversion === undefined ? [] : [visibleText(limit.conversion)]),
+    ...(limit.conversion === undefined ? [] : [safeTerminalText(limit.conversion, 200)]),
   ].join('; ');
   return [...labelled('Set-up', place, width), ...labelled('Limit', line, width)];
 }
@@ -88,7 +88,7 @@ function caveats(result: EstimateResult, width: number): string[] {
       const more = group.where.length - places.length;
       const where = places.length === 0 ? '' : ` [${places.join(', ')}${more > 0 ? ` and ${more} more` : ''}]`;
       const times = group.count > 1 ? ` ×${group.count}` : '';
-      const text = `${visibleText(group.code)}${times}: ${safeTerminalText(group.message, 400)}${where} (${rangeText(group.fromHz, group.toHz)})`;
+      const text = `${safeTerminalText(group.code, 40)}${times}: ${safeTerminalText(group.message, 400)}${where} (${rangeText(group.fromHz, group.toHz)})`;
       return wrapText(text, width, '  - ', '    ');
     }),
   ];

@@ -2,7 +2,7 @@ import type { EstimateResult } from '../../estimate/result.ts';
 import { byMessage, type CaveatGroup, groupCaveats } from '../caveat-groups.ts';
 import { NUMBERED_FINDINGS } from '../figures/board-figure.ts';
 import { countText, placeText, rangeText } from '../format.ts';
-import { type Markup, markup, nameMarkup } from '../markup.ts';
+import { type Markup, markup, nameMarkup, shortName } from '../markup.ts';
 import { modelText } from '../model-text.ts';
 
 const MOST_FINDINGS = 200;
@@ -42,7 +42,7 @@ ${shown.length > 0 && markup`<table><thead><tr><th>Caveat</th><th>Applies to</th
 function caveatRow(group: CaveatGroup): Markup {
   const places = group.where.slice(0, MOST_PLACES);
   const more = group.where.length - places.length;
-  return markup`<tr><td class="code">${group.code}</td><td>${
+  return markup`<tr><td class="code">${shortName(group.code, 60)}</td><td>${
     places.length === 0 ? 'whole result' : places.map((place, i) => markup`${i > 0 && ', '}${nameMarkup(place, 60)}`)
   }${more > 0 && ` and ${more} more`}</td><td class="whole">${rangeText(group.fromHz, group.toHz)}</td><td>${nameMarkup(group.message, 500)}</td></tr>`;
 }
