@@ -5,7 +5,13 @@ import type { NecMaximum } from './nec-cases.ts';
  * `node test/nec/generate.mjs` with nec2c 1.3 (Debian); doubling the segments changed no value by more than
  * 0.094 dB. Not to be edited by hand.
  */
-type Row = readonly [caseId: string, distanceM: number, frequencyHz: number, horizontalVPerM: number, verticalVPerM: number];
+type Row = readonly [
+  caseId: string,
+  distanceM: number,
+  frequencyHz: number,
+  horizontalVPerM: number,
+  verticalVPerM: number,
+];
 
 const ROWS: readonly Row[] = [
   ['30x3mm-50-442ohm-flat-x', 3, 50e6, 0.0000028722, 8.0478e-7],

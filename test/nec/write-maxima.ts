@@ -35,7 +35,13 @@ const source = (
  * \`node test/nec/generate.mjs\` with ${version} (Debian); doubling the segments changed no value by more than
  * ${worstDb.toFixed(3)} dB. Not to be edited by hand.
  */
-type Row = readonly [caseId: string, distanceM: number, frequencyHz: number, horizontalVPerM: number, verticalVPerM: number];
+type Row = readonly [
+  caseId: string,
+  distanceM: number,
+  frequencyHz: number,
+  horizontalVPerM: number,
+  verticalVPerM: number,
+];
 
 const ROWS: readonly Row[] = [
 ${rows.map(rowText).join('\n')}
