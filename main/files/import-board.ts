@@ -1,7 +1,8 @@
 import { open } from 'node:fs/promises';
 import type { BoardFileInput } from '../../app/board/board-file.ts';
 import type { ImportSummary } from '../../app/board/import-summary.ts';
-import { fileError } from '../../app/errors.ts';
+import { AppError, fileError } from '../../app/errors.ts';
+import { fileFailure } from './file-failure.ts';
 import { importIpc2581 } from './ipc2581/import-ipc2581.ts';
 import { encodingOf, isArchive, rootElementName } from './sniff.ts';
 
@@ -35,23 +36,19 @@ export async function importBoard(
   });
 }
 
-/** First bytes and size. The system's own words for a missing file or a directory become ours. */
+/** First bytes and size. */
 async function readHead(file: string): Promise<{ head: Buffer; totalBytes: number }> {
   try {
     const handle = await open(file, 'r');
     try {
       const state = await handle.stat();
-      if (!state.isFile()) throw fileError(file, 'is not a file');
+      if (!state.isFile()) throw fileError(file, 'is a folder or a device, not a file');
       const { buffer, bytesRead } = await handle.read(Buffer.alloc(HEAD_BYTES), 0, HEAD_BYTES, 0);
       return { head: buffer.subarray(0, bytesRead), totalBytes: state.size };
     } finally {
       await handle.close();
     }
   } catch (error) {
-    const code = (error as NodeJS.ErrnoException).code;
-    if (code === 'ENOENT') throw fileError(file, 'does not exist', { cause: error });
-    if (code === 'EACCES' || code === 'EPERM') throw fileError(file, 'may not be read', { cause: error });
-    if (code === 'EISDIR') throw fileError(file, 'is not a file', { cause: error });
-    throw error;
+    throw error instanceof AppError ? error : fileFailure(file, 'read', error);
   }
 }

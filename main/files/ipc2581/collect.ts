@@ -1,3 +1,4 @@
+import { ContentError } from './attributes.ts';
 import { type DrawnShape, isCopperFunction } from './document.ts';
 import type { Pad } from './pad-reader.ts';
 import { placeShape } from './place-shape.ts';
@@ -5,6 +6,8 @@ import type { StepContext } from './step-context.ts';
 
 /** What a Set says about everything drawn in it. */
 export type SetPlace = Pick<DrawnShape, 'layer' | 'net' | 'usage' | 'isNegative'>;
+
+const MOST_SHAPES = 2_000_000;
 
 /** A layer that is not declared yet counts as copper until the end of the file. */
 export function mayBeCopper({ document }: StepContext, layer: string): boolean {
@@ -16,9 +19,10 @@ export function countFeatures({ step }: StepContext, layer: string, count: numbe
   step.featureCounts.set(layer, (step.featureCounts.get(layer) ?? 0) + count);
 }
 
-export function addShape(context: StepContext, drawn: DrawnShape): void {
-  countFeatures(context, drawn.layer, 1);
-  context.step.shapes.push(drawn);
+/** Throws ContentError beyond any real board: shapes times locations of one element can be many. */
+export function addShape({ step }: StepContext, drawn: DrawnShape): void {
+  if (step.shapes.length >= MOST_SHAPES) throw new ContentError(`a step draws more than ${MOST_SHAPES} copper shapes`);
+  step.shapes.push(drawn);
 }
 
 /** Keeps the pins of a pad; its shape only where it may be a clearance. */
@@ -33,6 +37,6 @@ export function addPad(context: StepContext, place: SetPlace, pad: Pad): void {
   if (declared !== undefined && !declared.isNegative && !place.isNegative) return;
   const transform = pad.placement;
   for (const shape of pad.shapes) {
-    context.step.shapes.push({ ...place, isPad: true, shape: placeShape(shape, transform), transform });
+    addShape(context, { ...place, isPad: true, shape: placeShape(shape, transform), transform });
   }
 }

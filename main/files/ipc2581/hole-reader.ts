@@ -20,7 +20,8 @@ export function readHole(
     yMm: numberAttribute(element, attributes, 'y') * mmPerUnit,
     diameterMm: sizeAttribute(element, attributes, 'diameter') * mmPerUnit,
     kind,
-    ...place,
+    net: place.net,
+    layer: place.layer,
     from: undefined,
     to: undefined,
   };
@@ -44,7 +45,7 @@ export function slotReader(
       else return readShape(context, name, inner, (shape) => shapes.push(shape));
       return undefined;
     },
-    end: () => done({ ...place, shapes, transform: combine(location, turn) }),
+    end: () => done({ net: place.net, layer: place.layer, shapes, transform: combine(location, turn) }),
   };
 }
 

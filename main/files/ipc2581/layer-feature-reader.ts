@@ -83,6 +83,7 @@ function featuresReader(context: StepContext, place: SetPlace, setWidth: () => L
       for (const location of locations.length > 0 ? locations : [IDENTITY]) {
         const transform = combine(location, turn);
         for (const shape of shapes) {
+          countFeatures(context, place.layer, 1);
           const drawn = shape.kind === 'stroke' ? { ...shape, width: shape.width ?? setWidth() } : shape;
           addShape(context, { ...place, isPad: false, shape: placeShape(drawn, transform), transform });
         }

@@ -1,6 +1,8 @@
-import { type Attributes, type Names, optionalNumber, wordAttribute } from './attributes.ts';
+import { type Attributes, ContentError, type Names, optionalNumber, wordAttribute } from './attributes.ts';
 import type { Ipc2581Document, Layer, Material, Stackup, StackupRow } from './document.ts';
 import type { ElementReader } from './xml-reader.ts';
+
+const MOST_ROWS = 2000;
 
 /** Layer: function, side, polarity and the span of a drill layer. */
 export function layerReader(
@@ -88,6 +90,7 @@ function stackupRowReader(
     material: { text: '' },
   };
   addText(row.material, attributes.materialType);
+  if (rows.length >= MOST_ROWS) throw new ContentError(`a StackupGroup has more than ${MOST_ROWS} rows`);
   rows.push(row);
   return {
     child(element, inner) {

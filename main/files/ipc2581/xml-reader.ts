@@ -1,6 +1,7 @@
 import { createReadStream } from 'node:fs';
 import { SaxesParser } from 'saxes';
 import { fileError } from '../../../app/errors.ts';
+import { fileFailure } from '../file-failure.ts';
 import { type Attributes, ContentError } from './attributes.ts';
 
 /** Reads one element. Whatever its children need is kept in the reader, not in a tree. */
@@ -25,10 +26,11 @@ export interface XmlResult {
 const CHUNK_BYTES = 256 * 1024;
 const DEEPEST = 64;
 const MOST_ELEMENTS = 20_000_000;
-const MOST_ATTRIBUTES = 256;
-const LONGEST_ATTRIBUTE = 65_536;
-/** No real file goes this far without a tag; a comment or attribute without end would fill the memory. */
-const LONGEST_GAP_BYTES = 16 * 1024 * 1024;
+/**
+ * From one start tag to the end of the next: no real element with its attributes is that long, nor a comment. It caps
+ * number and length of attributes together, for an attribute without end would fill the memory.
+ */
+const LONGEST_GAP_BYTES = 4 * 1024 * 1024;
 
 /**
  * Reads an XML file as a stream of elements. The only place that knows the parser.
@@ -64,11 +66,14 @@ export async function readXml(file: string, root: ElementReader, options: XmlOpt
     parser.write(decoder.decode());
     parser.close();
   } catch (error) {
-    if (!(error instanceof ContentError)) throw error;
-    throw fileError(file, `line ${parser.line}: ${error.message}`, { cause: error });
+    if (error instanceof ContentError) throw fileError(file, `line ${parser.line}: ${error.message}`, { cause: error });
+    throw isSystemError(error) ? fileFailure(file, 'read', error) : error;
   }
   return { damagedChunks };
 }
+
+/** A failed read of the disk; anything else is a fault of this program and passes. */
+const isSystemError = (error: unknown): boolean => error instanceof Error && 'syscall' in error;
 
 /** Hands elements to the reader on top of the stack, skipping what no reader wants. */
 class ElementHandler {
@@ -85,7 +90,6 @@ class ElementHandler {
     this.gapBytes = 0;
     if (++this.elements > MOST_ELEMENTS) throw new ContentError(`holds more than ${MOST_ELEMENTS} elements`);
     if (this.stack.length + this.skippedDepth > DEEPEST) throw new ContentError(`is nested deeper than ${DEEPEST}`);
-    checkAttributes(qualifiedName, attributes);
     if (this.skippedDepth > 0) {
       this.skippedDepth++;
       return;
@@ -104,15 +108,5 @@ class ElementHandler {
   checkGap(bytes: number): void {
     this.gapBytes += bytes;
     if (this.gapBytes > LONGEST_GAP_BYTES) throw new ContentError(`holds no element in ${LONGEST_GAP_BYTES} bytes`);
-  }
-}
-
-function checkAttributes(element: string, attributes: Attributes): void {
-  let count = 0;
-  for (const name in attributes) {
-    if (++count > MOST_ATTRIBUTES) throw new ContentError(`${element} has more than ${MOST_ATTRIBUTES} attributes`);
-    if (attributes[name]!.length > LONGEST_ATTRIBUTE) {
-      throw new ContentError(`${element} ${name.slice(0, 40)} is longer than ${LONGEST_ATTRIBUTE} characters`);
-    }
   }
 }

@@ -5,8 +5,8 @@ import { flattenPath, type Path, type PointMm } from '../path.ts';
 const ARC_TOLERANCE_MM = 0.001;
 /** Clearances are etched no finer than this. */
 const CLEARANCE_TOLERANCE_MM = 0.005;
-/** A 60 MB board has about one million; beyond this the memory would not hold. */
-const MOST_POINTS = 6_000_000;
+/** A 60 MB board has one to two million; beyond this the memory would not hold. */
+const MOST_POINTS = 5_000_000;
 
 /** Turns paths into points, within a budget: a small file can hold arcs that would fill any memory. */
 export class Flattener {

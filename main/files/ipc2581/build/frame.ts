@@ -36,26 +36,28 @@ export class BoardFrame {
     return [roundMm(x - this.originMm[0]), roundMm(y - this.originMm[1])];
   }
 
-  /** Points without repeated neighbours; undefined when fewer than two are left. */
-  polyline(points: readonly PointMm[]): PointMm[] | undefined {
-    const kept = this.distinct(points);
-    return kept.length < 2 ? undefined : kept;
+  /** Takes the points over; without repeated neighbours. Undefined when fewer than two are left. */
+  polyline(points: PointMm[]): PointMm[] | undefined {
+    this.moveDistinct(points);
+    return points.length < 2 ? undefined : points;
   }
 
-  /** Ring without repeated neighbours and closing point; undefined when fewer than three are left. */
-  ring(points: readonly PointMm[]): PointMm[] | undefined {
-    const kept = this.distinct(points);
-    while (kept.length > 1 && isSame(kept[0]!, kept[kept.length - 1]!)) kept.pop();
-    return kept.length < 3 ? undefined : kept;
+  /** Takes the points over; without repeated neighbours and closing point. Undefined when fewer than three are left. */
+  ring(points: PointMm[]): PointMm[] | undefined {
+    this.moveDistinct(points);
+    while (points.length > 1 && isSame(points[0]!, points[points.length - 1]!)) points.pop();
+    return points.length < 3 ? undefined : points;
   }
 
-  private distinct(points: readonly PointMm[]): PointMm[] {
-    const kept: PointMm[] = [];
+  /** In place, for a large board has millions of points. */
+  private moveDistinct(points: PointMm[]): void {
+    let kept = 0;
     for (const point of points) {
-      const moved = this.point(point);
-      if (kept.length === 0 || !isSame(kept[kept.length - 1]!, moved)) kept.push(moved);
+      point[0] = roundMm(point[0] - this.originMm[0]);
+      point[1] = roundMm(point[1] - this.originMm[1]);
+      if (kept === 0 || !isSame(points[kept - 1]!, point)) points[kept++] = point;
     }
-    return kept;
+    points.length = kept;
   }
 }
 

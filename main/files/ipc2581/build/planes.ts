@@ -1,4 +1,5 @@
 import type { BoardFileInput } from '../../../../app/board/board-file.ts';
+import { ContentError } from '../attributes.ts';
 import { type Ipc2581Document, isCopperFunction, type Step } from '../document.ts';
 import type { Path, PointMm } from '../path.ts';
 import type { Copper } from './copper.ts';
@@ -14,6 +15,9 @@ type FilePlane = NonNullable<BoardFileInput['planes']>[number];
 const CELL_MM2 = 25;
 /** … but on a small board a plane may be smaller than a cell. */
 const BOARD_SHARE = 0.02;
+
+/** Overlapping planes and negative shapes multiply. */
+const MOST_CUTS = 1_000_000;
 
 export interface PlaneContext {
   readonly document: Ipc2581Document;
@@ -57,7 +61,7 @@ function positivePlanes(context: PlaneContext, copper: Copper): FilePlane[] {
     const box = boxOf(pointsMm)!;
     for (const cut of cuts.get(area.layer) ?? []) {
       if (cut.order < area.order || !doBoxesMeet(cut.box, box)) continue;
-      cutCount++;
+      if (++cutCount > MOST_CUTS) throw new ContentError(`cuts more than ${MOST_CUTS} negative shapes out of planes`);
       cutoutsMm.push(cut.ring);
     }
     planes.push(filePlane(area.layer, area.net, pointsMm, cutoutsMm));

@@ -8,12 +8,12 @@ export type PlainShape = Exclude<Shape, { kind: 'reference' }>;
 
 const DEEPEST_REFERENCE = 16;
 /** Ten entries of ten references each, ten deep, are a few kilobytes in the file. */
-const MOST_SHAPES = 2_000_000;
+const MOST_DRAWN = 20_000_000;
 
 /** Looks references up in the dictionaries; those that lead nowhere are counted, not refused. */
 export class ShapeResolver {
   private readonly document: Ipc2581Document;
-  private shapes = 0;
+  private drawn = 0;
   /** References to entries that do not exist, or that lead back to themselves. */
   unresolved = 0;
 
@@ -23,7 +23,8 @@ export class ShapeResolver {
 
   /** Visits what the shape draws, in place. Throws ContentError when references multiply without end. */
   expand(shape: Shape, transform: Affine, visit: (shape: PlainShape) => void, depth = 0): void {
-    if (++this.shapes > MOST_SHAPES) throw new ContentError(`draws more than ${MOST_SHAPES} shapes by reference`);
+    this.drawn += 1 + sizeOf(shape);
+    if (this.drawn > MOST_DRAWN) throw new ContentError(`draws more than ${MOST_DRAWN} numbers by reference`);
     if (shape.kind !== 'reference') {
       visit(shape);
       return;
@@ -53,3 +54,10 @@ export class ShapeResolver {
     return found ?? '';
   }
 }
+
+const sizeOf = (shape: Shape): number => {
+  if (shape.kind === 'reference') return 0;
+  return shape.kind === 'stroke'
+    ? shape.path.length
+    : shape.cutouts.reduce((sum, cutout) => sum + cutout.length, shape.ring.length);
+};
