@@ -1,10 +1,11 @@
 import type { Check } from './check.ts';
 import { handbookChecks } from './handbook.ts';
 import { limitChecks } from './limits.ts';
+import { necChecks } from './nec-references.ts';
 import { siteAttenuationChecks } from './site-attenuation.ts';
 import { sourceChecks } from './sources.ts';
 
 /** The whole table of trust, in a fixed order. */
 export function allChecks(): Check[] {
-  return [...siteAttenuationChecks(), ...handbookChecks(), ...sourceChecks(), ...limitChecks()];
+  return [...siteAttenuationChecks(), ...handbookChecks(), ...sourceChecks(), ...limitChecks(), ...necChecks()];
 }
