@@ -16,12 +16,12 @@ export function oneOf(what: string, wanted: string, names: readonly string[]): s
 
 /**
  * Names a user may have meant, best first: same but for case, then one containing the other, then few edits apart
- * (at most a third of the wanted name's length, at least 1). `*` counts as nothing typed.
+ * (at most half of the wanted name's length, at least 1). `*` counts as nothing typed.
  */
 export function nearestNames(wanted: string, names: readonly string[]): string[] {
   const target = folded(wanted.replaceAll('*', ''));
   if (target === '') return [];
-  const mostEdits = Math.max(1, Math.floor(target.length / 3));
+  const mostEdits = Math.max(1, Math.floor(target.length / 2));
   const scored: { name: string; score: number }[] = [];
   for (const name of names) {
     const candidate = folded(name);
@@ -43,15 +43,19 @@ function scoreOf(target: string, candidate: string, mostEdits: number): number {
   return editDistance(target, candidate);
 }
 
-/** Levenshtein distance, one row at a time. */
+/** Edits from one text to the other: put in, left out, replaced, two neighbours swapped (optimal string alignment). */
 function editDistance(a: string, b: string): number {
+  let beforePrevious: number[] = [];
   let previous = Array.from({ length: b.length + 1 }, (_, j) => j);
   for (let i = 1; i <= a.length; i++) {
     const row = [i];
     for (let j = 1; j <= b.length; j++) {
       const replaced = previous[j - 1]! + (a[i - 1] === b[j - 1] ? 0 : 1);
-      row.push(Math.min(replaced, previous[j]! + 1, row[j - 1]! + 1));
+      const isSwapped = i > 1 && j > 1 && a[i - 1] === b[j - 2] && a[i - 2] === b[j - 1];
+      const swapped = isSwapped ? beforePrevious[j - 2]! + 1 : Infinity;
+      row.push(Math.min(replaced, previous[j]! + 1, row[j - 1]! + 1, swapped));
     }
+    beforePrevious = previous;
     previous = row;
   }
   return previous[b.length]!;

@@ -44,9 +44,7 @@ async function openBoard(path: string): Promise<{ file: BoardFile; notes: string
     return { file: inFile(path, () => parseBoardFile(json)), notes: [], sha256 };
   }
   const { board, summary } = await importBoard(path);
-  const findings = summary.findings.map(
-    ({ message, count }) => `Import: ${message}${count > 1 ? ` (${count} times)` : ''}`,
-  );
+  const findings = summary.findings.map(({ message }) => `Import: ${message}`);
   return { file: inFile(path, () => parseBoardFile(board)), notes: findings, sha256: await sha256OfFile(path) };
 }
 

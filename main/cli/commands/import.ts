@@ -75,9 +75,7 @@ function summaryLines(summary: ImportSummary, width: number): string[] {
     ...(left > 0 ? [`… ${left} more (all of them with --json)`] : []),
     '',
     ...(summary.findings.length === 0 ? ['No findings.'] : ['Findings']),
-    ...summary.findings.flatMap(({ message, count }) =>
-      wrapText(`${safeTerminalText(message, 1000)}${count > 1 ? ` (${count} times)` : ''}`, width, '  - ', '    '),
-    ),
+    ...summary.findings.flatMap(({ message }) => wrapText(safeTerminalText(message, 1000), width, '  - ', '    ')),
   ];
 }
 

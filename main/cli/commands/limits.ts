@@ -3,7 +3,8 @@ import { inputError } from '../../../app/errors.ts';
 import { allLimitLines } from '../../../app/limits/catalogue.ts';
 import { isStandard, type LimitLine } from '../../../app/limits/limit-line.ts';
 import { fixed, trimmed } from '../../../app/report/format.ts';
-import { wrapText } from '../../../app/report/wrap.ts';
+import { terminalWidth } from '../../../app/report/safe-text.ts';
+import { padEnd, wrapText } from '../../../app/report/wrap.ts';
 import { hzToMhz } from '../../../app/units/convert.ts';
 import { jsonText } from '../../files/json-text.ts';
 import { table } from '../columns.ts';
@@ -53,26 +54,37 @@ function limitLines(lines: readonly LimitLine[], width: number): string[] {
       standard,
       ...(aliases.length === 0 ? [] : wrapText(`also: ${aliases.join(', ')}`, width, '  ', '    ')),
       ...sources.flatMap((source) => wrapText(source, width, '  ', '    ')),
-      ...table(own, COLUMNS, width - 2).map((line) => `  ${line}`),
+      ...lineTable(own, width),
     ];
   });
 }
 
 const COLUMNS = [
-  { head: 'class', text: (line: LimitLine) => line.class, minWidth: 5 },
+  { head: 'class', text: (line: LimitLine) => line.class },
   { head: 'm', text: (line: LimitLine) => trimmed(line.distanceM, 2), align: 'right' },
+  { head: 'site', text: (line: LimitLine) => line.siteKind },
   { head: 'detector', text: (line: LimitLine) => line.detector },
   { head: 'status', text: (line: LimitLine) => line.sourceStatus },
-  { head: 'MHz: dBµV/m', text: (line: LimitLine) => pointsText(line.points), minWidth: 20 },
 ] as const;
+const POINTS_HEAD = 'MHz:dBµV/m';
+const LEAST_POINTS_WIDTH = 24;
 
-/** "30: 40, 230: 40/47, 1000: 47". */
+/** One line of the standard a row; the points are wrapped in the room that is left, never cut. */
+function lineTable(lines: readonly LimitLine[], width: number): string[] {
+  const indent = '  ';
+  const rows = table(lines, COLUMNS, width - indent.length - LEAST_POINTS_WIDTH).map((row) => `${indent}${row}`);
+  const start = rows.reduce((widest, row) => Math.max(widest, terminalWidth(row)), 0) + 2;
+  const texts = [POINTS_HEAD, ...lines.map((line) => pointsText(line.points))];
+  return rows.flatMap((row, i) => wrapText(texts[i]!, width, padEnd(row, start), ' '.repeat(start)));
+}
+
+/** "30:40, 230:40/47, 1000:47". */
 function pointsText(points: LimitLine['points']): string {
   const levelsAt = new Map<number, string[]>();
   for (const [frequencyHz, level] of points) {
     levelsAt.set(frequencyHz, [...(levelsAt.get(frequencyHz) ?? []), trimmed(Number(fixed(level, 1)), 1)]);
   }
   return [...levelsAt]
-    .map(([frequencyHz, levels]) => `${trimmed(hzToMhz(frequencyHz), 3)}: ${levels.join('/')}`)
+    .map(([frequencyHz, levels]) => `${trimmed(hzToMhz(frequencyHz), 3)}:${levels.join('/')}`)
     .join(', ');
 }
