@@ -81,7 +81,7 @@ export function buildNetModel(context: NetContext, net: Net): NetModel {
     drives,
     sections,
     pair: collector.finish(),
-    findings: [...gapFindings(board, net, graph, references, served), ...placeFindings],
+    findings: [...gapFindings(board, context.planes, net, graph, references, served), ...placeFindings],
     caveats: lineCaveats(net.name, lines),
   };
 }

@@ -31,7 +31,7 @@ export function modelCaveats(
     });
   }
   caveats.push(...sizeCaveats(scene, toHz), ...cableCaveats(board, scene, fromHz, toHz), ...stackupCaveats(board));
-  caveats.push(...lineCaveats(scene, toHz), ...undrivenCaveats(board), ...findingCaveats(findings));
+  caveats.push(...lineCaveats(scene, fromHz, toHz), ...undrivenCaveats(board), ...findingCaveats(findings));
   if (sharedHz.length > 0) {
     caveats.push({
       code: 'several-lines-in-bandwidth',
@@ -141,11 +141,11 @@ function stackupCaveats(board: Board): Caveat[] {
 }
 
 /** One row for each kind of line caveat, however many segments share it. */
-function lineCaveats(scene: Scene, toHz: number): Caveat[] {
+function lineCaveats(scene: Scene, fromHz: number, toHz: number): Caveat[] {
   const merged = new Map<string, Caveat>();
   for (const model of scene.nets.values()) {
     for (const caveat of model.caveats) {
-      if (caveat.toHz > 0 && caveat.fromHz > toHz) continue;
+      if (caveat.toHz > 0 && (caveat.fromHz > toHz || caveat.toHz < fromHz)) continue;
       const key = JSON.stringify([caveat.code, model.name]);
       const known = merged.get(key);
       merged.set(key, known ? { ...known, fromHz: Math.min(known.fromHz, caveat.fromHz) } : caveat);

@@ -26,6 +26,9 @@ export interface SegmentReference {
 /** A plane serves a segment when it covers at least this much of its length; the rest is a gap finding. */
 const SERVING_FRACTION = 0.5;
 
+/** How far a way around an opening is looked for, m: longer than any board. */
+const LONGEST_LOOK_M = 1;
+
 /** Areas of one layer by the net they belong to; what a segment's coverage is asked of. */
 export class PlaneIndex {
   readonly #byLayer = new Map<number, { net: string; region: Region }[]>();
@@ -60,6 +63,13 @@ export class PlaneIndex {
       planes: chosen.map(({ plane }, i) => ({ ...plane, share: inverse[i]! / sum })),
       gaps: uncoveredStretches(nearest.covered),
     };
+  }
+
+  /** Distance from a place without copper to the layer's copper in one direction (unit vector), m; Infinity: none. */
+  distanceToCopperM(layerIndex: number, [x, y]: PointM, [dx, dy]: PointM): number {
+    const regions = (this.#byLayer.get(layerIndex) ?? []).map(({ region }) => region);
+    const covered = coveredStretches([x, y], [x + dx * LONGEST_LOOK_M, y + dy * LONGEST_LOOK_M], regions);
+    return covered.length > 0 ? covered[0]!.from * LONGEST_LOOK_M : Infinity;
   }
 
   #nearest(fromM: PointM, toM: PointM, layerIndex: number, ownNet: string, step: 1 | -1): Candidate | null {
