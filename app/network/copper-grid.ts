@@ -15,7 +15,10 @@ const CELL_M = 1e-3;
 const MOST_CELLS_A_PIECE = 200;
 
 /** Where on a piece (fraction of its length) a place is nearest, and how far away. */
-export function nearestOn({ fromM, toM, lengthM }: CopperPiece, [x, y]: PointM): { fraction: number; distanceM: number } {
+export function nearestOn(
+  { fromM, toM, lengthM }: CopperPiece,
+  [x, y]: PointM,
+): { fraction: number; distanceM: number } {
   const dx = toM[0] - fromM[0];
   const dy = toM[1] - fromM[1];
   const along = ((x - fromM[0]) * dx + (y - fromM[1]) * dy) / (lengthM * lengthM);
@@ -54,7 +57,8 @@ export class CopperGrid {
     const steps = Math.ceil(reachM / this.#cellM);
     const cx = Math.floor(x / this.#cellM);
     const cy = Math.floor(y / this.#cellM);
-    for (let i = -steps; i <= steps; i++) for (let j = -steps; j <= steps; j++) keys.add(this.#key(layerIndex, cx + i, cy + j));
+    for (let i = -steps; i <= steps; i++)
+      for (let j = -steps; j <= steps; j++) keys.add(this.#key(layerIndex, cx + i, cy + j));
     return this.#collect(keys, layerIndex);
   }
 

@@ -1,148 +1,103 @@
-import { type Assembly, assemble, type FirstPiece } from './assembly.ts';
-import type { LineSection, Network, NetworkResponse } from './network.ts';
+import { inputError } from '../errors.ts';
+import { checkNetwork, type Network, type NetworkResponse } from './network.ts';
+import { NodalMatrix, REFERENCE_OHM } from './nodal-matrix.ts';
+import { SparseLu } from './sparse-lu.ts';
 
-/**
- * Solves a net of line sections at one frequency; one response per drive.
- *
- * Nodal analysis with the section's Y-parameters y11 = y22 = coth(γl)/Z0, y12 = y21 = −1/(Z0 sinh γl), written as a series
- * admittance 1/(Z0 sinh γl) and shunts tanh(γl/2)/Z0, and eliminated node by node by the star–mesh transformation, which
- * adds admittances and never subtracts them: no cancellation for very short sections, O(N) for trees, loops allowed.
- * Sections longer than about a radian are cut inside, so sinh γl never vanishes. Voltages in V, currents in A, e^(+jωt).
- * Throws `input` when two ideal sources or a source and a short meet at one node.
- * Source: D. M. Pozar, Microwave Engineering, 4th ed., table 4.1 (ABCD) and 4.2 (Y of a line); star–mesh: A. Rosen, J. IEE
- * 62, 1924.
- */
-export function solveNetwork(network: Network, frequencyHz: number): NetworkResponse[] {
-  const assembly = assemble(network, frequencyHz);
-  return network.drives.map((_, driveIndex) => respond(network, assembly, frequencyHz, driveIndex));
+interface Prepared {
+  readonly matrix: NodalMatrix;
+  readonly factors: SparseLu;
 }
 
-function respond(network: Network, assembly: Assembly, frequencyHz: number, driveIndex: number): NetworkResponse {
-  const drive = network.drives[driveIndex]!;
-  const currents = new Float64Array(2 * assembly.nodeCount);
-  const fixed = new Float64Array(2 * assembly.nodeCount);
-  if (drive.resistanceOhm > 0) currents[2 * drive.node] = 1 / drive.resistanceOhm;
-  else fixed[2 * drive.node] = 1;
-  const voltages = assembly.solve(currents, fixed);
+/** What depends on the network alone, so that a sweep over frequency pays for it once. */
+const prepared = new WeakMap<Network, Prepared>();
 
-  const { sections, branches, drives, loads } = network;
-  const forward = new Float64Array(2 * sections.length);
-  const backward = new Float64Array(2 * sections.length);
-  const gamma = new Float64Array(2 * sections.length);
-  const arriving = new Float64Array(2 * network.nodeCount);
-  for (const [i, section] of sections.entries()) {
-    const first = assembly.firstPiece(i);
-    gamma[2 * i] = first.alpha;
-    gamma[2 * i + 1] = first.beta;
-    wavesFrom(section.line.z0Ohm, first, voltages, section.nodeA, forward, backward, i);
-    addEndCurrents(section, first, forward, backward, i, arriving);
-  }
-  const branchCurrents = new Float64Array(2 * branches.length);
-  for (const [i, { nodeA, nodeB, inductanceH }] of branches.entries()) {
-    const reactance = 2 * Math.PI * frequencyHz * inductanceH;
-    const re = (voltages[2 * nodeA + 1]! - voltages[2 * nodeB + 1]!) / reactance;
-    const im = -(voltages[2 * nodeA]! - voltages[2 * nodeB]!) / reactance;
-    branchCurrents[2 * i] = re;
-    branchCurrents[2 * i + 1] = im;
-    arriving[2 * nodeA]! -= re;
-    arriving[2 * nodeA + 1]! -= im;
-    arriving[2 * nodeB]! += re;
-    arriving[2 * nodeB + 1]! += im;
-  }
-  const loadCurrents = new Float64Array(2 * loads.length);
-  for (const [i, { node, resistanceOhm, capacitanceF }] of loads.entries()) {
-    if (resistanceOhm === 0) continue;
-    const g = resistanceOhm === undefined ? 0 : 1 / resistanceOhm;
-    const b = 2 * Math.PI * frequencyHz * capacitanceF;
-    const vRe = voltages[2 * node]!;
-    const vIm = voltages[2 * node + 1]!;
-    loadCurrents[2 * i] = g * vRe - b * vIm;
-    loadCurrents[2 * i + 1] = g * vIm + b * vRe;
-    arriving[2 * node]! -= loadCurrents[2 * i]!;
-    arriving[2 * node + 1]! -= loadCurrents[2 * i + 1]!;
-  }
-  const driveCurrents = new Float64Array(2 * drives.length);
-  for (const [i, { node, resistanceOhm }] of drives.entries()) {
-    if (resistanceOhm === 0) continue;
-    driveCurrents[2 * i] = ((i === driveIndex ? 1 : 0) - voltages[2 * node]!) / resistanceOhm;
-    driveCurrents[2 * i + 1] = -voltages[2 * node + 1]! / resistanceOhm;
-    arriving[2 * node]! += driveCurrents[2 * i]!;
-    arriving[2 * node + 1]! += driveCurrents[2 * i + 1]!;
-  }
-  // An ideal source gives, and a short takes, what is left over at its node.
-  for (const [i, { node, resistanceOhm }] of drives.entries()) {
-    if (resistanceOhm !== 0) continue;
-    driveCurrents[2 * i] = -arriving[2 * node]!;
-    driveCurrents[2 * i + 1] = -arriving[2 * node + 1]!;
-  }
-  for (const [i, { node, resistanceOhm }] of loads.entries()) {
-    if (resistanceOhm !== 0) continue;
-    loadCurrents[2 * i] = arriving[2 * node]!;
-    loadCurrents[2 * i + 1] = arriving[2 * node + 1]!;
-  }
+/**
+ * Voltages and currents of a net of line sections, series inductances, sources and loads at one frequency; one response
+ * for each drive. Trees cost O(N); loops are allowed. Parts without a drive stay at 0 V.
+ *
+ * Equations: `NodalMatrix`. An exact resonance without any loss has no finite answer and gives a very large one.
+ * Throws `input` for an impossible network (`checkNetwork`) or a frequency that is not positive.
+ * Source: D. M. Pozar, Microwave Engineering, 4th ed., 2.7, 4.2 (two-port of a lossy line).
+ */
+export function solveNetwork(network: Network, frequencyHz: number): NetworkResponse[] {
+  if (!(frequencyHz > 0 && frequencyHz < Infinity)) throw inputError('frequencyHz', 'positive and finite', frequencyHz);
+  const { matrix, factors } = prepare(network);
+  matrix.fill(frequencyHz);
+  factors.factor(matrix.values);
+  const gamma = matrix.gamma.slice();
+  const unknowns = new Float64Array(2 * matrix.size);
+  return network.drives.map((_, driveIndex) => {
+    const { row, scale } = matrix.driveRow(driveIndex);
+    unknowns.fill(0);
+    unknowns[2 * row] = 1 / scale;
+    factors.solve(unknowns);
+    return responseOf(matrix, unknowns, gamma);
+  });
+}
+
+function prepare(network: Network): Prepared {
+  const known = prepared.get(network);
+  if (known) return known;
+  checkNetwork(network);
+  const matrix = new NodalMatrix(network);
+  const made = { matrix, factors: new SparseLu(matrix.columnStarts, matrix.rowIndices, matrix.order) };
+  prepared.set(network, made);
+  return made;
+}
+
+function responseOf(matrix: NodalMatrix, unknowns: Float64Array, gamma: Float64Array): NetworkResponse {
+  const { nodeCount, sections, branches, drives } = matrix.network;
+  const firstBranch = nodeCount + sections.length;
+  const firstDrive = firstBranch + branches.length;
+  const firstLoad = firstDrive + drives.length;
+  const currents = (from: number, to: number) =>
+    unknowns.slice(2 * from, 2 * to).map((scaled) => scaled / REFERENCE_OHM);
   return {
-    nodeVoltages: voltages.subarray(0, 2 * network.nodeCount),
-    forward,
-    backward,
-    branchCurrents,
-    driveCurrents,
-    loadCurrents,
+    nodeVoltages: unknowns.slice(0, 2 * nodeCount),
+    ...wavesOf(matrix, unknowns),
+    branchCurrents: currents(firstBranch, firstDrive),
+    driveCurrents: currents(firstDrive, firstLoad),
+    loadCurrents: currents(firstLoad, matrix.size),
     gamma,
   };
 }
 
-/** I⁺ = (Va e^(γl) − Vb)/(2 Z0 sinh γl), I⁻ = (Va e^(−γl) − Vb)/(2 Z0 sinh γl). */
-function wavesFrom(
-  z0Ohm: number,
-  { alpha, beta, lengthM, farNode }: FirstPiece,
-  voltages: Float64Array,
-  nodeA: number,
-  forward: Float64Array,
-  backward: Float64Array,
-  at: number,
-): void {
-  const a = alpha * lengthM;
-  const b = beta * lengthM;
-  const c = Math.cos(b);
-  const s = Math.sin(b);
-  const sinhRe = Math.sinh(a) * c;
-  const sinhIm = Math.cosh(a) * s;
-  const scale = 1 / (2 * z0Ohm * (sinhRe * sinhRe + sinhIm * sinhIm));
-  const aRe = voltages[2 * nodeA]!;
-  const aIm = voltages[2 * nodeA + 1]!;
-  const bRe = voltages[2 * farNode]!;
-  const bIm = voltages[2 * farNode + 1]!;
-  for (const [sign, out] of [
-    [1, forward],
-    [-1, backward],
-  ] as const) {
-    const grow = Math.exp(sign * a);
-    const re = grow * (aRe * c - sign * aIm * s) - bRe;
-    const im = grow * (aIm * c + sign * aRe * s) - bIm;
-    out[2 * at] = scale * (re * sinhRe + im * sinhIm);
-    out[2 * at + 1] = scale * (im * sinhRe - re * sinhIm);
+/** Waves of every section, each from the end where it starts: no growing exponential meets a rounded number. */
+function wavesOf(matrix: NodalMatrix, unknowns: Float64Array): { forward: Float64Array; backward: Float64Array } {
+  const { nodeCount, sections } = matrix.network;
+  const forward = new Float64Array(2 * sections.length);
+  const backward = new Float64Array(2 * sections.length);
+  for (let s = 0; s < sections.length; s++) {
+    const { nodeA, nodeB, lengthM, line } = sections[s]!;
+    const aRe = unknowns[2 * nodeA]! / line.z0Ohm;
+    const aIm = unknowns[2 * nodeA + 1]! / line.z0Ohm;
+    const bRe = unknowns[2 * nodeB]! / line.z0Ohm;
+    const bIm = unknowns[2 * nodeB + 1]! / line.z0Ohm;
+    const unknownRe = unknowns[2 * (nodeCount + s)]! / REFERENCE_OHM;
+    const unknownIm = unknowns[2 * (nodeCount + s) + 1]! / REFERENCE_OHM;
+    // The other excitation's current, from the voltages.
+    const sign = matrix.isTanh[s] === 1 ? 1 : -1;
+    const halfRe = matrix.half[2 * s]!;
+    const halfIm = matrix.half[2 * s + 1]!;
+    const meanRe = (aRe + sign * bRe) / 2;
+    const meanIm = (aIm + sign * bIm) / 2;
+    const otherRe = halfRe * meanRe - halfIm * meanIm;
+    const otherIm = halfRe * meanIm + halfIm * meanRe;
+    // Into A: even + odd. Out at B: odd − even.
+    const inRe = unknownRe + otherRe;
+    const inIm = unknownIm + otherIm;
+    const outRe = sign * (unknownRe - otherRe);
+    const outIm = sign * (unknownIm - otherIm);
+    forward[2 * s] = (inRe + aRe) / 2;
+    forward[2 * s + 1] = (inIm + aIm) / 2;
+    const atBRe = (outRe - bRe) / 2;
+    const atBIm = (outIm - bIm) / 2;
+    const decay = Math.exp(-matrix.gamma[2 * s]! * lengthM);
+    const phase = -matrix.gamma[2 * s + 1]! * lengthM;
+    const c = decay * Math.cos(phase);
+    const d = decay * Math.sin(phase);
+    backward[2 * s] = atBRe * c - atBIm * d;
+    backward[2 * s + 1] = atBRe * d + atBIm * c;
   }
+  return { forward, backward };
 }
-
-/** Kirchhoff's balance: what a section takes from node A and brings to node B. */
-function addEndCurrents(
-  { nodeA, nodeB, lengthM }: LineSection,
-  { alpha, beta }: FirstPiece,
-  forward: Float64Array,
-  backward: Float64Array,
-  at: number,
-  arriving: Float64Array,
-): void {
-  const fRe = forward[2 * at]!;
-  const fIm = forward[2 * at + 1]!;
-  const bRe = backward[2 * at]!;
-  const bIm = backward[2 * at + 1]!;
-  arriving[2 * nodeA]! -= fRe + bRe;
-  arriving[2 * nodeA + 1]! -= fIm + bIm;
-  const decay = Math.exp(-alpha * lengthM);
-  const c = Math.cos(beta * lengthM);
-  const s = Math.sin(beta * lengthM);
-  arriving[2 * nodeB]! += decay * (fRe * c + fIm * s) + (bRe * c - bIm * s) / decay;
-  arriving[2 * nodeB + 1]! += decay * (fIm * c - fRe * s) + (bIm * c + bRe * s) / decay;
-}
-

@@ -1,13 +1,20 @@
+import { inputError } from '../errors.ts';
 import { MU0_H_PER_M } from '../units/constants.ts';
 
-/** Shortest barrel that is told from none, m. */
-const SHORTEST_BARREL_M = 1e-6;
-
 /**
- * Partial inductance of a via barrel as a round wire: L = (µ0 l/2π) [ln(4l/d) − ¾], at least µ0 l/(8π) for wide holes.
- * Length l and drill d in m. Source: F. W. Grover, Inductance Calculations, chapter 5 (straight round wire, from memory).
+ * Inductance of a via barrel of length h and radius r = drill/2, H:
+ *
+ *   L = µ0/2π · { h ln[(h + √(r² + h²))/r] + 1.5 [r − √(r² + h²)] }
+ *
+ * Fitted there to full-wave results and measured on grounded vias in microstrip, 0.2 ≤ 2r/h ≤ 1.5 about. 0 for h = 0.
+ * Throws `input` when a dimension is impossible.
+ * Source: M. E. Goldfarb, R. A. Pucel, Modeling via hole grounds in microstrip, IEEE Microwave and Guided Wave Letters
+ * 1(6), 1991.
  */
 export function viaInductanceH(lengthM: number, drillM: number): number {
-  const l = Math.max(lengthM, SHORTEST_BARREL_M);
-  return ((MU0_H_PER_M * l) / (2 * Math.PI)) * Math.max(0.25, Math.log((4 * l) / drillM) - 0.75);
+  if (!(lengthM >= 0 && lengthM < Infinity)) throw inputError('lengthM', 'a finite length of at least 0', lengthM);
+  if (!(drillM > 0 && drillM < Infinity)) throw inputError('drillM', 'a positive finite length', drillM);
+  const radiusM = drillM / 2;
+  const slantM = Math.hypot(radiusM, lengthM);
+  return (MU0_H_PER_M / (2 * Math.PI)) * (lengthM * Math.log((lengthM + slantM) / radiusM) + 1.5 * (radiusM - slantM));
 }
