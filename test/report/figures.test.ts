@@ -55,6 +55,7 @@ describe('spectrum', () => {
     const { source } = spectrumFigure(result, quasiPeak);
     const at40 = placeOf(source, '40')[1];
     const at20 = placeOf(source, '20')[1];
+    expect(at40).toBeLessThan(at20);
     const worst = result.points[0]!;
     const expectedY = at40 + ((40 - worst.levelDbuvPerM) / 20) * (at20 - at40);
     // Numbers sit 3.5 px under their line; the triangle starts at its tip, 5 px above the level.
@@ -101,7 +102,16 @@ describe('spectrum', () => {
   it('keeps the worst reading when thousands share the columns', () => {
     const dense = denseResult(5000);
     const peak = dense.points[0]!;
-    const spike = { ...peak, frequencyHz: 612.345e6, levelDbuvPerM: 52, limitDbuvPerM: 47, marginDb: -5 };
+    // Over the limit by lines that add up in the bandwidth: neither polarisation by itself stands out.
+    const spike = {
+      ...peak,
+      frequencyHz: 612.345e6,
+      levelDbuvPerM: 52,
+      limitDbuvPerM: 47,
+      marginDb: -5,
+      horizontalDbuvPerM: 1,
+      verticalDbuvPerM: 2,
+    };
     const { source } = spectrumFigure(resultWith([...dense.points, spike]), SAMPLE_LIMIT_LINES);
     expect(source).toMatch(/class="mark over"/);
     expect(source).toContain('612.345 MHz, −5.0 dB');
@@ -193,6 +203,19 @@ describe('set-up', () => {
     // 3 m from the boundary puts the antenna at 3 m plus the boundary's radius from the axis.
     const axisX = Number(source.match(/class="axis" d="M([\d.]+)/)![1]);
     expect((highX - 9 - axisX) / pxPerM).toBeCloseTo(3 + 0.2593, 2);
+  });
+
+  it('fits at 3 m, 10 m and 30 m: from the top number to the text under the ground, clear of the plan view', () => {
+    for (const distanceM of [3, 10, 30]) {
+      const base = sampleResult();
+      const { source } = siteFigure(sampleResultBoard(), { ...base, site: { ...base.site, distanceM } });
+      const [x, y] = placeOf(source, '4 m');
+      expect(y).toBeGreaterThan(16);
+      expect(x).toBeLessThan(440);
+      const height = Number(source.match(/viewBox="0 0 760 (\d+)"/)![1]);
+      for (const [, textY] of source.matchAll(/<text[^>]* y="([\d.]+)"/g))
+        expect(Number(textY)).toBeLessThan(height - 2);
+    }
   });
 
   it('turns to the worst line: the arrow points along its azimuth', () => {

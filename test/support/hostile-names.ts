@@ -29,6 +29,8 @@ export function hostileResult(): EstimateResult {
   return {
     ...sample,
     board: { name: all, revision: nameAt(1), sha256: nameAt(0) },
+    program: { version: nameAt(5) },
+    limit: { ...sample.limit, edition: nameAt(4), source: nameAt(5), maxRule: nameAt(3), conversion: nameAt(12) },
     points: sample.points.map((point, p) => ({
       ...point,
       contributors: point.contributors.map((contributor, c) => ({
