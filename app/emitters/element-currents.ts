@@ -32,6 +32,8 @@ export function addElementCurrents(
 ): void {
   const wave = new Float64Array(4);
   const omega = 2 * Math.PI * frequencyHz;
+  let waveSection = -1;
+  let waveAtM = 0;
   for (let i = 0; i < rules.length; i++) {
     const rule = rules[i]!;
     let re = 0;
@@ -39,12 +41,18 @@ export function addElementCurrents(
     if (rule.kind === 'ends') {
       for (const { section, isAtB, factor } of rule.terms) {
         wavesAt(response, section, isAtB ? sections[section]!.lengthM : 0, wave);
+        waveSection = -1;
         const sign = isAtB ? -factor : factor;
         re += sign * (wave[0]! + wave[2]!);
         im += sign * (wave[1]! + wave[3]!);
       }
     } else {
-      wavesAt(response, rule.section, rule.atM, wave);
+      // Trace, return and polarisation of one place follow each other and share its waves.
+      if (rule.section !== waveSection || rule.atM !== waveAtM) {
+        wavesAt(response, rule.section, rule.atM, wave);
+        waveSection = rule.section;
+        waveAtM = rule.atM;
+      }
       if (rule.kind === 'along') {
         re = rule.factor * (wave[0]! + wave[2]!);
         im = rule.factor * (wave[1]! + wave[3]!);

@@ -78,8 +78,10 @@ export function fieldOnCylinder(
     for (let a = 0; a < angleCount; a++) {
       const angleRad = (2 * Math.PI * a) / angleCount;
       for (const heightM of plan.heightsM) {
-        const z = part === 0 ? heightM : -heightM;
-        for (const group of shared) addSample(group, plan, angleRad, z, terms, out, at);
+        const zM = part === 0 ? heightM : -heightM;
+        const r0M = centreDistanceM(plan, zM);
+        const place = { kPerM: plan.kPerM, radiusM: plan.radiusM, angleRad, zM, referenceM: r0M, factor: r0M, terms };
+        for (const group of shared) addSample(group, place, out, at);
         at += SAMPLE_STRIDE;
       }
     }
@@ -88,7 +90,7 @@ export function fieldOnCylinder(
 }
 
 /** Points that several domains may share, with the moments (6 floats a point) of each domain that has some there. */
-interface SourceGroup {
+export interface SourceGroup {
   readonly positionsM: Float64Array;
   readonly shares: readonly { readonly domain: number; readonly moments: Float64Array }[];
 }
@@ -145,7 +147,8 @@ function isInside({ elements }: Radiator, box: Box): boolean {
   return true;
 }
 
-function momentsOf({ elements, currentsA }: Radiator): Float64Array {
+/** Complex vector moments of a radiator's elements: 6 floats each (x, y, z, re then im), A·m. */
+export function momentsOf({ elements, currentsA }: Radiator): Float64Array {
   const moments = new Float64Array(6 * elements.count);
   for (let e = 0; e < elements.count; e++) {
     for (let axis = 0; axis < 3; axis++) {
@@ -156,39 +159,52 @@ function momentsOf({ elements, currentsA }: Radiator): Float64Array {
   return moments;
 }
 
-/** Adds one sample (an observer at angle and z) of every domain's field, with R0·e^(+jkR0) multiplied in. */
-function addSample(
+/** Where one sample is taken. */
+export interface SamplePlace {
+  readonly kPerM: number;
+  readonly radiusM: number;
+  readonly angleRad: number;
+  readonly zM: number;
+  /** The field is multiplied by `factor`·e^(+jk·referenceM): R0 and R0 take e^(−jkR0)/R0 out, 0 and 1 leave it. */
+  readonly referenceM: number;
+  readonly factor: number;
+  readonly terms: FieldTerms;
+}
+
+/**
+ * Adds the φ and z components (re, im each) of sources at one place to every sharing domain's array at `at`; all terms of
+ * `addElementField`, arranged for many sources: E = P n (n·m) − Q m, P = far + 3 near, Q = far + near.
+ */
+export function addSample(
   { positionsM, shares }: SourceGroup,
-  plan: CylinderPlan,
-  angleRad: number,
-  zM: number,
-  terms: FieldTerms,
+  place: SamplePlace,
   out: readonly Float64Array[],
   at: number,
 ): void {
-  const { kPerM, radiusM } = plan;
+  const { kPerM, radiusM, angleRad, zM, referenceM } = place;
   const cosA = Math.cos(angleRad);
   const sinA = Math.sin(angleRad);
   const ox = radiusM * cosA;
   const oy = radiusM * sinA;
-  const r0M = centreDistanceM(plan, zM);
-  const isAll = terms === 'all';
+  const strength = (ETA0_OHM / (4 * Math.PI)) * place.factor;
+  const isAll = place.terms === 'all';
   const shareCount = shares.length;
-  for (let p = 0; p < positionsM.length / 3; p++) {
+  const pointCount = positionsM.length / 3;
+  for (let p = 0; p < pointCount; p++) {
     const rx = ox - positionsM[3 * p]!;
     const ry = oy - positionsM[3 * p + 1]!;
     const rz = zM - positionsM[3 * p + 2]!;
-    const inverse = 1 / Math.sqrt(rx * rx + ry * ry + rz * rz);
-    const rM = 1 / inverse;
+    const rM = Math.sqrt(rx * rx + ry * ry + rz * rz);
+    const inverse = 1 / rM;
     const nx = rx * inverse;
     const ny = ry * inverse;
     const nz = rz * inverse;
     const nPhi = ny * cosA - nx * sinA;
-    const phase = kPerM * (rM - r0M);
-    const scale = (ETA0_OHM / (4 * Math.PI)) * r0M * inverse;
+    const phase = kPerM * (rM - referenceM);
+    const scale = strength * inverse;
     const gRe = scale * Math.cos(phase);
     const gIm = -scale * Math.sin(phase);
-    // far = g·jk, near = g·(1/R − j/(kR²)); E = (far + 3 near) n (n·m) − (far + near) m
+    // far = g·jk, near = g·(1/R − j/(kR²))
     const farRe = -gIm * kPerM;
     const farIm = gRe * kPerM;
     let nearRe = 0;

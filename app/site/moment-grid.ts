@@ -21,6 +21,10 @@ export function boxOf(radiators: readonly Radiator[]): Box | null {
   return lowM[0] === Infinity ? null : { lowM, highM };
 }
 
+/** Across a board's thickness two points do: a pair's field is the difference, wrong by κ/8 relative, 0.02 dB at most. */
+const THIN = 0.015;
+const MODEST = 0.1;
+
 /**
  * Chebyshev points per axis for sources across `halfSizeM`: the interpolation error of e^(jκu) on [−1, 1] with n points
  * is about 2 J_n(κ), below 1e-5 here; κ = k·halfSize.
@@ -29,7 +33,8 @@ export function boxOf(radiators: readonly Radiator[]): Box | null {
 export function gridCount(kPerM: number, halfSizeM: number): number {
   if (halfSizeM < 1e-12) return 1;
   const kappa = kPerM * halfSizeM;
-  return Math.ceil(kappa + 3 * Math.cbrt(kappa) + (halfSizeM < 5e-3 ? 2 : 4));
+  if (kappa < THIN) return 2;
+  return Math.ceil(kappa + 3 * Math.cbrt(kappa) + (kappa < MODEST ? 2 : 4));
 }
 
 /**
@@ -74,30 +79,38 @@ export class MomentGrid {
         axisWeights(xs, positionsM[3 * e]!, wx);
         axisWeights(ys, positionsM[3 * e + 1]!, wy);
         axisWeights(zs, positionsM[3 * e + 2]!, wz);
-        const vx = vectorsM[3 * e]!;
-        const vy = vectorsM[3 * e + 1]!;
-        const vz = vectorsM[3 * e + 2]!;
-        let at = 0;
-        for (let i = 0; i < wx.length; i++) {
-          for (let j = 0; j < wy.length; j++) {
-            const wxy = wx[i]! * wy[j]!;
-            for (let l = 0; l < wz.length; l++) {
-              const weight = wxy * wz[l]!;
-              const wRe = weight * re;
-              const wIm = weight * im;
-              out[at]! += wRe * vx;
-              out[at + 1]! += wIm * vx;
-              out[at + 2]! += wRe * vy;
-              out[at + 3]! += wIm * vy;
-              out[at + 4]! += wRe * vz;
-              out[at + 5]! += wIm * vz;
-              at += 6;
-            }
-          }
+        for (let axis = 0; axis < 3; axis++) {
+          const length = vectorsM[3 * e + axis]!;
+          if (length !== 0) spread(out, 2 * axis, wx, wy, wz, re * length, im * length);
         }
       }
     }
     return out;
+  }
+}
+
+/** Adds one component of a moment to the grid, from the weights of each axis. */
+function spread(
+  out: Float64Array,
+  offset: number,
+  wx: Float64Array,
+  wy: Float64Array,
+  wz: Float64Array,
+  re: number,
+  im: number,
+): void {
+  let at = offset;
+  for (let i = 0; i < wx.length; i++) {
+    for (let j = 0; j < wy.length; j++) {
+      const wxy = wx[i]! * wy[j]!;
+      const wRe = wxy * re;
+      const wIm = wxy * im;
+      for (let l = 0; l < wz.length; l++) {
+        out[at]! += wRe * wz[l]!;
+        out[at + 1]! += wIm * wz[l]!;
+        at += 6;
+      }
+    }
   }
 }
 

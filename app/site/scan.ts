@@ -1,6 +1,6 @@
-import { addElementField, FIELD_STRIDE, type FieldTerms } from '../fields/element-field.ts';
+import type { FieldTerms } from '../fields/element-field.ts';
 import type { Radiator } from '../fields/element-set.ts';
-import { cylinderPlan, fieldOnCylinder } from './cylinder-field.ts';
+import { addSample, cylinderPlan, fieldOnCylinder, momentsOf, SAMPLE_STRIDE } from './cylinder-field.ts';
 import { findMaximum, type ScanMaximum } from './find-maximum.ts';
 import type { Box } from './moment-grid.ts';
 import { type Component, PowerMap } from './power-map.ts';
@@ -48,51 +48,21 @@ export function fieldAtAntenna(
   component: Component,
   angleRad: number,
   heightM: number,
-  request: ScanRequest,
+  { kPerM, scanRadiusM, site, terms = 'all' }: ScanRequest,
 ): [re: number, im: number] {
-  const cosA = Math.cos(angleRad);
-  const sinA = Math.sin(angleRad);
-  const sum: [number, number] = [0, 0];
-  const e = new Float64Array(FIELD_STRIDE);
-  for (let part = 0; part < (request.site === 'ground-plane' ? 2 : 1); part++) {
-    e.fill(0);
-    addFieldAt(radiators, request, request.scanRadiusM * cosA, request.scanRadiusM * sinA, heightM * (1 - 2 * part), e);
-    const sign = part === 1 && component === 'horizontal' ? -1 : 1;
-    sum[0] += sign * (component === 'vertical' ? e[4]! : e[2]! * cosA - e[0]! * sinA);
-    sum[1] += sign * (component === 'vertical' ? e[5]! : e[3]! * cosA - e[1]! * sinA);
-  }
-  return sum;
-}
-
-function addFieldAt(
-  radiators: readonly Radiator[],
-  { kPerM, terms }: ScanRequest,
-  xM: number,
-  yM: number,
-  zM: number,
-  out: Float64Array,
-): void {
-  for (const { elements, currentsA } of radiators) {
-    const { positionsM, vectorsM, count } = elements;
-    for (let i = 0; i < count; i++) {
-      const re = currentsA[2 * i]!;
-      const im = currentsA[2 * i + 1]!;
-      if (re === 0 && im === 0) continue;
-      const vx = vectorsM[3 * i]!;
-      const vy = vectorsM[3 * i + 1]!;
-      const vz = vectorsM[3 * i + 2]!;
-      addElementField(
-        out,
-        null,
-        0,
-        kPerM,
-        xM - positionsM[3 * i]!,
-        yM - positionsM[3 * i + 1]!,
-        zM - positionsM[3 * i + 2]!,
-        [re * vx, re * vy, re * vz],
-        [im * vx, im * vy, im * vz],
-        terms,
-      );
+  const total: [number, number] = [0, 0];
+  const sample = new Float64Array(SAMPLE_STRIDE);
+  const offset = component === 'horizontal' ? 0 : 2;
+  for (const sign of site === 'ground-plane' ? [1, -1] : [1]) {
+    sample.fill(0);
+    const place = { kPerM, radiusM: scanRadiusM, angleRad, zM: sign * heightM, referenceM: 0, factor: 1, terms };
+    for (const radiator of radiators) {
+      const shares = [{ domain: 0, moments: momentsOf(radiator) }];
+      addSample({ positionsM: radiator.elements.positionsM, shares }, place, [sample], 0);
     }
+    const kept = component === 'horizontal' ? sign : 1;
+    total[0] += kept * sample[offset]!;
+    total[1] += kept * sample[offset + 1]!;
   }
+  return total;
 }

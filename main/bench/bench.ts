@@ -1,0 +1,48 @@
+import { writeFileSync } from 'node:fs';
+import { cpus, totalmem } from 'node:os';
+import { scanBench } from './scan-bench.ts';
+
+/** One measured thing; `ratio` is against the plain way, where there is one. */
+export interface BenchResult {
+  readonly name: string;
+  readonly seconds: number;
+  readonly ratio?: number;
+  readonly peakMb: number;
+  readonly detail: Readonly<Record<string, number | string>>;
+}
+
+const BENCHES: readonly (() => BenchResult)[] = [scanBench];
+
+function main(): void {
+  const at = process.argv.indexOf('--json');
+  const file = at >= 0 ? process.argv[at + 1] : undefined;
+  if (at >= 0 && !file) {
+    console.error('bench: --json needs a file name, or - for standard output');
+    process.exit(2);
+  }
+  const results = BENCHES.map((bench) => {
+    const result = bench();
+    if (file !== '-') print(result);
+    return result;
+  });
+  const report = {
+    machine: {
+      node: process.version,
+      cores: cpus().length,
+      cpu: cpus()[0]?.model ?? '',
+      memoryGb: totalmem() / 2 ** 30,
+    },
+    results,
+  };
+  if (file === '-') console.log(JSON.stringify(report, null, 2));
+  else if (file) writeFileSync(file, `${JSON.stringify(report, null, 2)}\n`);
+}
+
+function print({ name, seconds, ratio, peakMb, detail }: BenchResult): void {
+  console.log(
+    `${name}: ${seconds.toFixed(2)} s${ratio ? `, ${ratio.toFixed(0)} times the plain way` : ''}, ${peakMb.toFixed(0)} MB`,
+  );
+  for (const [key, value] of Object.entries(detail)) console.log(`  ${key}: ${value}`);
+}
+
+main();
