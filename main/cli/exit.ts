@@ -33,8 +33,13 @@ export function guardProcess(): void {
     removeTemporaryFiles();
     process.exit(code);
   };
-  process.on('SIGINT', () => endNow(EXIT_INTERRUPTED));
-  process.on('SIGTERM', () => endNow(EXIT_TERMINATED));
+  const interrupt = (code: number) => {
+    // The shell's prompt must not land behind a progress line.
+    if (process.stderr.isTTY) process.stderr.write('\n');
+    endNow(code);
+  };
+  process.on('SIGINT', () => interrupt(EXIT_INTERRUPTED));
+  process.on('SIGTERM', () => interrupt(EXIT_TERMINATED));
   process.on('uncaughtException', (error) => endNow(reportFailure(error)));
   process.on('unhandledRejection', (error) => endNow(reportFailure(error)));
   // A reader that closes early (`| head`) has what it wanted; files are written before anything is printed.

@@ -3,11 +3,10 @@ import { inputError } from '../../../app/errors.ts';
 import { allLimitLines } from '../../../app/limits/catalogue.ts';
 import { isStandard, type LimitLine } from '../../../app/limits/limit-line.ts';
 import { fixed, trimmed } from '../../../app/report/format.ts';
-import { terminalWidth } from '../../../app/report/safe-text.ts';
-import { padEnd, wrapText } from '../../../app/report/wrap.ts';
+import { wrapText } from '../../../app/report/wrap.ts';
 import { hzToMhz } from '../../../app/units/convert.ts';
 import { jsonText } from '../../files/json-text.ts';
-import { table } from '../columns.ts';
+import { type Column, table } from '../columns.ts';
 import { checkOutputs, outputWidth, STDOUT, writeOutput } from '../outputs.ts';
 
 const HELP = `
@@ -54,29 +53,19 @@ function limitLines(lines: readonly LimitLine[], width: number): string[] {
       standard,
       ...(aliases.length === 0 ? [] : wrapText(`also: ${aliases.join(', ')}`, width, '  ', '    ')),
       ...sources.flatMap((source) => wrapText(source, width, '  ', '    ')),
-      ...lineTable(own, width),
+      ...table(own, COLUMNS, width - 2).map((line) => `  ${line}`),
     ];
   });
 }
 
-const COLUMNS = [
-  { head: 'class', text: (line: LimitLine) => line.class },
-  { head: 'm', text: (line: LimitLine) => trimmed(line.distanceM, 2), align: 'right' },
-  { head: 'site', text: (line: LimitLine) => line.siteKind },
-  { head: 'detector', text: (line: LimitLine) => line.detector },
-  { head: 'status', text: (line: LimitLine) => line.sourceStatus },
-] as const;
-const POINTS_HEAD = 'MHz:dBµV/m';
-const LEAST_POINTS_WIDTH = 24;
-
-/** One line of the standard a row; the points are wrapped in the room that is left, never cut. */
-function lineTable(lines: readonly LimitLine[], width: number): string[] {
-  const indent = '  ';
-  const rows = table(lines, COLUMNS, width - indent.length - LEAST_POINTS_WIDTH).map((row) => `${indent}${row}`);
-  const start = rows.reduce((widest, row) => Math.max(widest, terminalWidth(row)), 0) + 2;
-  const texts = [POINTS_HEAD, ...lines.map((line) => pointsText(line.points))];
-  return rows.flatMap((row, i) => wrapText(texts[i]!, width, padEnd(row, start), ' '.repeat(start)));
-}
+const COLUMNS: readonly Column<LimitLine>[] = [
+  { head: 'class', text: (line) => line.class },
+  { head: 'm', text: (line) => trimmed(line.distanceM, 2), align: 'right' },
+  { head: 'site', text: (line) => line.siteKind },
+  { head: 'detector', text: (line) => line.detector },
+  { head: 'status', text: (line) => line.sourceStatus },
+  { head: 'MHz:dBµV/m', text: (line) => pointsText(line.points), minWidth: 10, isWrapped: true },
+];
 
 /** "30:40, 230:40/47, 1000:47". */
 function pointsText(points: LimitLine['points']): string {

@@ -1,9 +1,11 @@
 import type { Command } from 'commander';
 import { fixed } from '../../../app/report/format.ts';
+import { visibleText } from '../../../app/report/safe-text.ts';
+import { wrapText } from '../../../app/report/wrap.ts';
 import type { Check } from '../../../app/validate/check.ts';
 import { jsonText } from '../../files/json-text.ts';
 import { runJob } from '../../jobs/run-job.ts';
-import { table } from '../columns.ts';
+import { type Column, table } from '../columns.ts';
 import { EXIT_DONE, EXIT_SHORT } from '../exit.ts';
 import { checkOutputs, outputWidth, STDOUT, writeOutput } from '../outputs.ts';
 
@@ -40,33 +42,35 @@ async function runValidate(options: { readonly json?: string }): Promise<void> {
 
 function checkLines(checks: readonly Check[], width: number): string[] {
   const count = (status: Check['status']) => checks.filter((check) => check.status === status).length;
+  const groups = new Map<string, Check[]>();
+  for (const check of checks) {
+    const source = `${check.source} (${check.sourceStatus})`;
+    groups.set(source, [...(groups.get(source) ?? []), check]);
+  }
   return [
-    ...table(
-      checks,
-      [
-        { head: 'quantity', text: (check) => check.quantity, minWidth: 12 },
-        { head: 'source', text: (check) => `${check.source} (${check.sourceStatus})`, minWidth: 10 },
-        { head: 'expected', text: (check) => number(check.expected), align: 'right' },
-        { head: 'computed', text: (check) => number(check.computed), align: 'right' },
-        { head: 'diff.', text: (check) => number(check.difference), align: 'right' },
-        { head: 'tol.', text: (check) => number(check.tolerance), align: 'right' },
-        { head: 'unit', text: (check) => check.unit, minWidth: 3 },
-        { head: '', text: (check) => check.status },
-      ],
-      width,
-    ),
-    '',
+    ...[...groups].flatMap(([source, rows]) => [
+      ...wrapText(visibleText(source), width),
+      ...table(rows, COLUMNS, width - 2).map((line) => `  ${line}`),
+      '',
+    ]),
     `${count('pass')} pass, ${count('fail')} fail, ${count('info')} for information`,
   ];
 }
 
-/** Four significant digits, plain where that is short. */
-function number(value: number): string {
-  if (value === 0) return '0';
+const COLUMNS: readonly Column<Check>[] = [
+  { head: 'quantity', text: (check) => check.quantity, minWidth: 12, isWrapped: true },
+  { head: 'expected', text: (check) => number(check.expected), align: 'right' },
+  { head: 'computed', text: (check) => number(check.computed), align: 'right' },
+  { head: 'diff.', text: (check) => number(check.difference, 2), align: 'right' },
+  { head: 'tol.', text: (check) => number(check.tolerance, 2), align: 'right' },
+  { head: 'unit', text: (check) => check.unit, minWidth: 3 },
+  { head: '', text: (check) => check.status },
+];
+
+/** So many significant digits, plain where that is short. */
+function number(value: number, digits = 4): string {
+  if (value === 0 || !Number.isFinite(value)) return fixed(value, 0);
   const size = Math.abs(value);
-  return size >= 1e-3 && size < 1e5
-    ? String(Number(value.toPrecision(4)))
-    : Number.isFinite(value)
-      ? value.toExponential(1)
-      : fixed(value, 0);
+  if (size < 1e-3 || size >= 1e5) return value.toExponential(1);
+  return String(Number(value.toPrecision(digits)));
 }
