@@ -94,7 +94,19 @@ export class SparseLu {
       this.#takePivot(k, column, first);
       lower.starts[k + 1] = lower.length;
     }
+    this.#placeLeftRows();
     this.#isPlanned = true;
+  }
+
+  /** Columns without a pivot (they have no lower part, so any place will do) take the rows that no column has taken. */
+  #placeLeftRows(): void {
+    let k = 0;
+    for (let row = 0; row < this.#n; row++) {
+      if (this.#placeOf[row]! >= 0) continue;
+      while (this.#rowOf[k]! >= 0) k++;
+      this.#rowOf[k] = row;
+      this.#placeOf[row] = k;
+    }
   }
 
   /** The same pattern and pivots with new values; false (and nothing usable) when a pivot has become too small. */
@@ -242,17 +254,21 @@ export class SparseLu {
       if (place[row]! >= 0) continue;
       const size = Math.abs(this.#xRe[row]!) + Math.abs(this.#xIm[row]!);
       const preferred = row === column ? 10 * size : size;
-      if (pivotRow < 0 || preferred > largest) {
+      if (preferred > largest) {
         largest = preferred;
         pivotRow = row;
       }
     }
-    if (pivotRow < 0) pivotRow = place[column]! < 0 ? column : place.indexOf(-1);
+    if (!(largest > SMALLEST_PIVOT)) {
+      this.#rowOf[k] = -1;
+      this.#pivotRe[k] = Number.EPSILON;
+      this.#pivotIm[k] = 0;
+      return;
+    }
     place[pivotRow] = k;
     this.#rowOf[k] = pivotRow;
-    const isUsable = largest > SMALLEST_PIVOT;
-    const dRe = isUsable ? this.#xRe[pivotRow]! : Number.EPSILON;
-    const dIm = isUsable ? this.#xIm[pivotRow]! : 0;
+    const dRe = this.#xRe[pivotRow]!;
+    const dIm = this.#xIm[pivotRow]!;
     this.#pivotRe[k] = dRe;
     this.#pivotIm[k] = dIm;
     const size = dRe * dRe + dIm * dIm;
