@@ -17,12 +17,35 @@ export type CurrentRule =
   /** Σ factor · (current leaving a node into a section). */
   | { readonly kind: 'ends'; readonly terms: readonly EndTerm[] };
 
+const ALONG = 0;
+const SHUNT = 1;
+const ENDS = 2;
+
+/** Rules of many elements, packed for the loop over frequencies. */
+export interface PackedRules {
+  readonly kinds: Uint8Array;
+  readonly sections: Int32Array;
+  readonly placesM: Float64Array;
+  readonly factors: Float64Array;
+  readonly endTerms: readonly (readonly EndTerm[])[];
+}
+
+export function packRules(rules: readonly CurrentRule[]): PackedRules {
+  return {
+    kinds: Uint8Array.from(rules, ({ kind }) => (kind === 'along' ? ALONG : kind === 'shunt' ? SHUNT : ENDS)),
+    sections: Int32Array.from(rules, (rule) => (rule.kind === 'ends' ? -1 : rule.section)),
+    placesM: Float64Array.from(rules, (rule) => (rule.kind === 'ends' ? 0 : rule.atM)),
+    factors: Float64Array.from(rules, (rule) => (rule.kind === 'ends' ? 0 : rule.factor)),
+    endTerms: rules.map((rule) => (rule.kind === 'ends' ? rule.terms : [])),
+  };
+}
+
 /**
  * Currents of elements from a net's response: I(s) = I⁺e^(−γs) + I⁻e^(+γs), V(s) = Z0 (I⁺e^(−γs) − I⁻e^(+γs)).
  * Adds phasor·current to `out` (re, im per element; A, or A for shunt elements whose vector holds the length).
  */
 export function addElementCurrents(
-  rules: readonly CurrentRule[],
+  { kinds, sections: sectionOf, placesM, factors, endTerms }: PackedRules,
   response: NetworkResponse,
   sections: readonly { readonly lengthM: number; readonly z0Ohm: number }[],
   frequencyHz: number,
@@ -34,12 +57,11 @@ export function addElementCurrents(
   const omega = 2 * Math.PI * frequencyHz;
   let waveSection = -1;
   let waveAtM = 0;
-  for (let i = 0; i < rules.length; i++) {
-    const rule = rules[i]!;
+  for (let i = 0; i < kinds.length; i++) {
     let re = 0;
     let im = 0;
-    if (rule.kind === 'ends') {
-      for (const { section, isAtB, factor } of rule.terms) {
+    if (kinds[i] === ENDS) {
+      for (const { section, isAtB, factor } of endTerms[i]!) {
         wavesAt(response, section, isAtB ? sections[section]!.lengthM : 0, wave);
         waveSection = -1;
         const sign = isAtB ? -factor : factor;
@@ -47,17 +69,19 @@ export function addElementCurrents(
         im += sign * (wave[1]! + wave[3]!);
       }
     } else {
+      const section = sectionOf[i]!;
+      const atM = placesM[i]!;
       // Trace, return and polarisation of one place follow each other and share its waves.
-      if (rule.section !== waveSection || rule.atM !== waveAtM) {
-        wavesAt(response, rule.section, rule.atM, wave);
-        waveSection = rule.section;
-        waveAtM = rule.atM;
+      if (section !== waveSection || atM !== waveAtM) {
+        wavesAt(response, section, atM, wave);
+        waveSection = section;
+        waveAtM = atM;
       }
-      if (rule.kind === 'along') {
-        re = rule.factor * (wave[0]! + wave[2]!);
-        im = rule.factor * (wave[1]! + wave[3]!);
+      if (kinds[i] === ALONG) {
+        re = factors[i]! * (wave[0]! + wave[2]!);
+        im = factors[i]! * (wave[1]! + wave[3]!);
       } else {
-        const scale = omega * rule.factor * sections[rule.section]!.z0Ohm;
+        const scale = omega * factors[i]! * sections[section]!.z0Ohm;
         re = -scale * (wave[1]! - wave[3]!);
         im = scale * (wave[0]! - wave[2]!);
       }

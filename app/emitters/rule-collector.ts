@@ -1,12 +1,12 @@
 import type { Point3M } from '../board/board.ts';
 import { ElementCollector, type ElementSet } from '../fields/element-set.ts';
 import { type SiteFrame, toSitePoint, toSiteVector } from '../site/site.ts';
-import type { CurrentRule } from './element-currents.ts';
+import { type CurrentRule, type PackedRules, packRules } from './element-currents.ts';
 
 /** Elements of a net in site axes, each with the rule its current follows. */
 export interface RuledElements {
   readonly elements: ElementSet;
-  readonly rules: readonly CurrentRule[];
+  readonly rules: PackedRules;
 }
 
 /** Collects elements given in board axes. */
@@ -25,6 +25,6 @@ export class RuleCollector {
   }
 
   finish(): RuledElements {
-    return { elements: this.#collector.finish(), rules: this.#rules };
+    return { elements: this.#collector.finish(), rules: packRules(this.#rules) };
   }
 }
