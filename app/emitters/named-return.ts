@@ -29,6 +29,8 @@ export interface TerminalEnd {
   readonly node: number;
   readonly lengthM: number;
   readonly z0Ohm: number;
+  /** Across the terminal. */
+  readonly gapCapacitanceF: number;
 }
 
 /**
@@ -100,10 +102,10 @@ export function addNamedReturn(
       addStraight(collector, returnPoint, pin, terms, maxHz);
       continue;
     }
-    const end = pairEndSection(pairEnd(Math.hypot(...minus(pin, returnPoint)), line.z0Ohm, line.epsilonEff));
+    const end = pairEnd(Math.hypot(...minus(pin, returnPoint)), line.z0Ohm, line.epsilonEff);
     const section = graph.segments.length + ends.length;
     addStraight(collector, returnPoint, pin, [{ section, isAtB: false, factor: 1 }], maxHz);
-    ends.push({ node, ...end });
+    ends.push({ node, gapCapacitanceF: end.gapCapacitanceF, ...pairEndSection(end) });
   }
   return { lines: graph.segments.map(() => line), sections, ends };
 }

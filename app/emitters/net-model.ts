@@ -140,7 +140,10 @@ function withEnds(network: Network, ends: readonly TerminalEnd[]): Network {
       })),
     ],
     drives: network.drives.map((drive) => ({ ...drive, node: place(drive.node) })),
-    loads: network.loads.map((load) => ({ ...load, node: place(load.node) })),
+    loads: [
+      ...network.loads.map((load) => ({ ...load, node: place(load.node) })),
+      ...ends.map(({ node, gapCapacitanceF }) => ({ node: place(node), capacitanceF: gapCapacitanceF })),
+    ],
   };
 }
 
