@@ -18,6 +18,9 @@ export function mainContributor(point: ResultPoint): { contributor: Contributor;
   return contributor && { contributor, path: pathsOf(contributor)[0] };
 }
 
+/** Does the path only repeat what the contributor is: a loop that radiates from the loop, a cable from the cable? */
+export const isItself = ({ kind, name }: Contributor, path: Path): boolean => path.name === name || path.name === kind;
+
 /** What kind a contributor is, said before its name in a sentence. */
 export const KIND_PHRASE: Readonly<Record<Contributor['kind'], string>> = {
   net: 'net ',

@@ -15,8 +15,12 @@ export function trimmed(value: number, decimals: number): string {
   return text.includes('.') ? text.replace(/\.?0+$/, '') : text;
 }
 
-/** A level in dB, one decimal. */
-export const levelText = (levelDb: number): string => fixed(levelDb, 1);
+/** Lower levels are nothing to a receiver, and beneath what the arithmetic of a sum that cancels can tell from zero. */
+const LOWEST_LEVEL_DB = -50;
+
+/** A level in dB, one decimal; "< -50" for anything lower, nothing at all included. */
+export const levelText = (levelDb: number): string =>
+  levelDb < LOWEST_LEVEL_DB ? `< ${LOWEST_LEVEL_DB}` : fixed(levelDb, 1);
 
 /** A margin in dB, one decimal. The sign stays even on "-0.0": over the limit by less than the rounding. */
 export const marginText = (marginDb: number): string =>

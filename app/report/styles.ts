@@ -39,6 +39,8 @@ th:last-child,td:last-child{padding-right:0}
 .n{text-align:right;white-space:nowrap}
 .whole{white-space:nowrap}
 .strong{font-weight:600}
+.points th,.points td:not(:last-child){white-space:nowrap}
+.findings td:nth-child(2),.findings td:nth-child(4){min-width:88px}
 .points td:first-child{width:18px;padding-right:4px}
 .points td:last-child{min-width:150px}
 .points th,.points td{padding-right:9px}

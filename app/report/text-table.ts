@@ -1,5 +1,5 @@
 import type { Detector, EstimateResult, ResultPoint } from '../estimate/result.ts';
-import { mainContributor, pathText } from './contributor-text.ts';
+import { isItself, mainContributor, pathText } from './contributor-text.ts';
 import { fixed, levelText, marginText, mhzText } from './format.ts';
 import { safeTerminalText, terminalWidth } from './safe-text.ts';
 import { type Standing, standingOf } from './verdict.ts';
@@ -74,7 +74,7 @@ function mainText(point: ResultPoint, width: number): string {
   const main = mainContributor(point);
   if (!main) return '';
   const { contributor, path } = main;
-  if (!path || path.name === contributor.name) return safeTerminalText(contributor.name, width);
+  if (!path || isItself(contributor, path)) return safeTerminalText(contributor.name, width);
   const via = ' via ';
   const room = Math.max(0, width - via.length);
   const pathWidth = terminalWidth(safeTerminalText(pathText(path.name), room));

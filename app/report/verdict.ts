@@ -1,4 +1,5 @@
 import type { EstimateResult, ResultPoint } from '../estimate/result.ts';
+import { NO_CLASS } from '../limits/limit-line.ts';
 import { amountText, countText, frequencyText, levelText, marginText, trimmed } from './format.ts';
 
 /** What a reading is worth: over the limit, under it but short of the required margin, or fine. */
@@ -35,8 +36,10 @@ export function verdictText(result: EstimateResult): string {
 }
 
 /** The limit in a few words: "CISPR 32 class B at 3 m". */
-export const limitName = ({ limit }: EstimateResult): string =>
-  `${limit.standard} class ${limit.class} at ${trimmed(limit.distanceM, 2)} m`;
+export function limitName({ limit }: EstimateResult): string {
+  const className = limit.class === NO_CLASS ? '' : ` class ${limit.class}`;
+  return `${limit.standard}${className} at ${trimmed(limit.distanceM, 2)} m`;
+}
 
 /** One line under the verdict: worst margin and where. */
 export function worstText(result: EstimateResult): string {

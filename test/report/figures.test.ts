@@ -86,6 +86,8 @@ describe('spectrum', () => {
       [2e9, 50],
     ]);
     expect(clipLine(SAMPLE_LIMIT_LINES[1]!.points, 30e6, 900e6)).toEqual([]);
+    // The average line begins where the range ends: nothing of it is judged.
+    expect(clipLine(SAMPLE_LIMIT_LINES[1]!.points, 30e6, 1e9)).toEqual([]);
     // A slope over log f: half-way in log between 30 and 230 MHz the 42 → 35 line is at 38.5.
     const middleHz = Math.sqrt(30e6 * 230e6);
     const sloped = clipLine(

@@ -15,7 +15,10 @@ describe('numbers for people', () => {
   it('rounds to the decimals asked for, without a negative zero', () => {
     expect(fixed(12.349, 1)).toBe('12.3');
     expect(levelText(-0.04)).toBe('0.0');
-    expect(levelText(-Infinity)).toBe('-∞');
+    expect(fixed(-Infinity, 1)).toBe('-∞');
+    expect(levelText(-Infinity)).toBe('< -50');
+    expect(levelText(-215.1)).toBe('< -50');
+    expect(levelText(-49.96)).toBe('-50.0');
     expect(levelText(Number.NaN)).toBe('—');
     expect(trimmed(6, 1)).toBe('6');
     expect(trimmed(100, 2)).toBe('100');

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { byCode, byMessage, groupCaveats } from '../../app/report/caveat-groups.ts';
-import { mainContributor, pathsOf } from '../../app/report/contributor-text.ts';
+import { isItself, mainContributor, pathsOf } from '../../app/report/contributor-text.ts';
 import { levelBar } from '../../app/report/figures/bars.ts';
 import { rankDrivenNets } from '../../app/report/figures/rank-nets.ts';
 import { modelText } from '../../app/report/model-text.ts';
@@ -45,6 +45,10 @@ describe('contributors', () => {
       viaDbuvPerM: { pair: 20, plane: 29, b: 25, a: 25 },
     };
     expect(pathsOf(contributor).map(({ name }) => name)).toEqual(['plane', 'a', 'b', 'pair']);
+    const path = (name: string) => ({ name, levelDbuvPerM: 0 });
+    expect(isItself({ ...contributor, kind: 'loop' }, path('loop'))).toBe(true);
+    expect(isItself({ ...contributor, kind: 'cable' }, path('A'))).toBe(true);
+    expect(isItself(contributor, path('pair'))).toBe(false);
     expect(mainContributor({ ...sampleResult().points[0]!, contributors: [] })).toBeUndefined();
   });
 

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { EstimateResult } from '../../app/estimate/result.ts';
-import { countStandings, readingsText, standingsText, verdictText } from '../../app/report/verdict.ts';
+import { NO_CLASS } from '../../app/limits/limit-line.ts';
+import { countStandings, limitName, readingsText, standingsText, verdictText } from '../../app/report/verdict.ts';
 import { denseResult, emptyResult, resultWith, sampleResult } from '../support/sample-result.ts';
 
 /** The sample with one point whose margin is set. */
@@ -28,6 +29,16 @@ describe('verdictText', () => {
 
   it('does not claim that a board without lines meets anything', () => {
     expect(verdictText(emptyResult())).toBe('no line in the judged range');
+  });
+});
+
+describe('limitName', () => {
+  it('leaves out the class where the standard has none', () => {
+    const sample = sampleResult();
+    expect(limitName(sample)).toBe('CISPR 32 class B at 3 m');
+    expect(limitName({ ...sample, limit: { ...sample.limit, standard: 'FCC 15.209', class: NO_CLASS } })).toBe(
+      'FCC 15.209 at 3 m',
+    );
   });
 });
 

@@ -110,7 +110,12 @@ function labels(board: Board, result: EstimateResult, driven: readonly Net[], fr
     ...result.findings.slice(0, NUMBERED_FINDINGS).map(({ atM }) => boxAround(frame.at(atM), 8)),
     ...pinRequests.map(({ anchor }) => boxAround(anchor, 3)),
   ];
-  const placed = placeLabels([...requests, ...pinRequests], { bounds: frame.box, fontPx: LABEL_PX, obstacles });
+  const lines = [
+    ...named.flatMap(({ traces }) => traces.map(({ pointsM }) => pointsM.map(frame.at))),
+    ...board.cables.map(({ pointsM }) => flat(pointsM, frame)),
+    ...board.loops.map(({ pointsM }) => flat([...pointsM, pointsM[0]!], frame)),
+  ];
+  const placed = placeLabels([...requests, ...pinRequests], { bounds: frame.box, fontPx: LABEL_PX, obstacles, lines });
   return markup`${placed.map(
     ({ text, anchor, at, leaderTo }, i) =>
       markup`${

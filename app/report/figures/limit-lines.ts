@@ -25,5 +25,6 @@ export function clipLine(points: ReportLimitLine['points'], fromHz: number, toHz
       if (last?.[0] !== point[0] || last[1] !== point[1]) clipped.push(point);
     }
   }
-  return clipped;
+  // A line that only touches an end of the range is not part of it.
+  return clipped.length < 2 ? [] : clipped;
 }

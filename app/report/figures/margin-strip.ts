@@ -11,8 +11,11 @@ import { keepApart, thinPoints } from './thin-points.ts';
 
 const HEIGHT = 146;
 const BOX: Box = { left: PLOT_LEFT, top: 22, right: PLOT_RIGHT, bottom: 120 };
-/** Margins beyond this all look alike. */
+/** Larger margins are not drawn. */
 const DEEPEST_DB = 40;
+/** More ticks than this are drawn as stubs of this length. */
+const DENSE_COUNT = 200;
+const STUB_PX = 3;
 
 /** Margin of every line to its own limit, limits of all bands and detectors on one level: ticks up are over, down are under. */
 export function marginStrip(result: EstimateResult, lines: readonly ReportLimitLine[]): Markup {
@@ -25,9 +28,17 @@ export function marginStrip(result: EstimateResult, lines: readonly ReportLimitL
   const points = thinPoints(result.points, frequency);
   const ends = (standing: Standing): Xy[] =>
     points
-      .filter((point) => standingOf(point, requiredMarginDb) === standing)
-      .map((point): Xy => [frequency.at(point.frequencyHz), scale.at(Math.max(-DEEPEST_DB, -point.marginDb))]);
-  const ticks = (places: readonly Xy[]) => places.map(([x, y]) => `M${px(x)} ${px(zeroY)}V${px(y)}`).join('');
+      .filter((point) => point.marginDb <= DEEPEST_DB && standingOf(point, requiredMarginDb) === standing)
+      .map((point): Xy => [frequency.at(point.frequencyHz), scale.at(-point.marginDb)]);
+  // Side by side, whole ticks would be a wall that hides which are short: then only their ends are drawn.
+  const isDense = points.length > DENSE_COUNT;
+  const ticks = (places: readonly Xy[]) =>
+    places
+      .map(
+        ([x, y]) =>
+          `M${px(x)} ${px(isDense ? y - Math.sign(y - zeroY) * Math.min(STUB_PX, Math.abs(y - zeroY)) : zeroY)}V${px(y)}`,
+      )
+      .join('');
   const band = scale.at(-Math.min(requiredMarginDb, DEEPEST_DB)) - zeroY;
   return markup`<svg class="figure" viewBox="0 0 ${FIGURE_WIDTH} ${HEIGHT}" role="img" aria-label="Margin to the limit over frequency">
 ${gridMarkup(frequency, scale, BOX, 10, 'dB to the limit')}

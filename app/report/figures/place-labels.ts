@@ -37,31 +37,51 @@ const DIRECTIONS: readonly Xy[] = [
   [0, 1],
 ];
 
+/** What labels keep clear of. */
+export interface LabelSpace {
+  readonly bounds: Box;
+  readonly fontPx: number;
+  /** Never covered. */
+  readonly obstacles?: readonly Box[];
+  /** Polylines that are crossed only where there is no other way. */
+  readonly lines?: readonly (readonly Xy[])[];
+}
+
 /**
- * Puts labels near their anchors, first come first served, so that none covers another, an obstacle, or the edge of
- * `bounds`. A label without a free place is left out: its line is in the table all the same.
+ * Puts labels near their anchors, first come first served, so that none covers another, an obstacle, a leader, or the
+ * edge of `bounds`. A label without a free place is left out: its line is in the table all the same.
  */
-export function placeLabels(
-  requests: readonly LabelRequest[],
-  options: { readonly bounds: Box; readonly fontPx: number; readonly obstacles?: readonly Box[] },
-): PlacedLabel[] {
-  const { bounds, fontPx } = options;
-  const taken: Box[] = [...(options.obstacles ?? [])];
+export function placeLabels(requests: readonly LabelRequest[], space: LabelSpace): PlacedLabel[] {
+  const { bounds, fontPx, lines = [] } = space;
+  const taken: Box[] = [...(space.obstacles ?? [])];
   const placed: PlacedLabel[] = [];
   for (const request of requests) {
-    const width = textWidthPx(request.text, fontPx);
-    const found = candidates(request.anchor, width, fontPx).find(
+    const { anchor } = request;
+    const free = candidates(anchor, textWidthPx(request.text, fontPx), fontPx).filter(
       ({ box, leaderTo }) =>
         isWithin(box, bounds) &&
         !taken.some((other) => overlap(box, other)) &&
-        (!leaderTo ||
-          !taken.some((other) => !contains(other, request.anchor) && crosses(request.anchor, leaderTo, other))),
+        !(leaderTo && taken.some((other) => !contains(other, anchor) && crosses(anchor, leaderTo, other))),
     );
+    const found = free.find(({ box }) => !lines.some((line) => meets(line, box))) ?? free[0];
     if (!found) continue;
     taken.push(found.box);
+    if (found.leaderTo) taken.push(...alongLeader(anchor, found.leaderTo));
     placed.push({ ...request, at: [found.box.left, found.box.bottom - fontPx * 0.25], leaderTo: found.leaderTo });
   }
   return placed;
+}
+
+/** Does any piece of the polyline meet the box? */
+const meets = (line: readonly Xy[], box: Box): boolean =>
+  line.some((point, i) => i > 0 && crosses(line[i - 1]!, point, box));
+
+/** Small boxes along a leader, so that no later one crosses it. */
+function alongLeader([ax, ay]: Xy, [bx, by]: Xy): Box[] {
+  const steps = Math.ceil(Math.hypot(bx - ax, by - ay) / 3);
+  return Array.from({ length: steps }, (_, i) =>
+    boxAround([ax + ((bx - ax) * (i + 1)) / steps, ay + ((by - ay) * (i + 1)) / steps], 1.5),
+  );
 }
 
 function candidates(anchor: Xy, width: number, height: number): { box: Box; leaderTo: Xy | undefined }[] {
@@ -85,7 +105,7 @@ const overlap = (one: Box, other: Box): boolean =>
 
 const contains = (box: Box, [x, y]: Xy): boolean => x >= box.left && x <= box.right && y >= box.top && y <= box.bottom;
 
-/** Does the straight piece meet the box? Looked at every few pixels: leaders are short. */
+/** Does the straight piece enter the box? Looked at every few pixels, which is finer than any text. */
 function crosses([ax, ay]: Xy, [bx, by]: Xy, box: Box): boolean {
   const steps = Math.ceil(Math.hypot(bx - ax, by - ay) / 3);
   for (let i = 1; i <= steps; i++) {

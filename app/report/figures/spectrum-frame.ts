@@ -23,7 +23,7 @@ export function frequencyScale(result: EstimateResult, lines: readonly ReportLim
 }
 
 /** Deepest view below the lowest limit: what lies under it does not matter to anybody. */
-const DEPTH_DB = 60;
+const DEPTH_DB = 50;
 
 /** The level axis: limits, levels and some air. */
 export function levelScale(
@@ -32,10 +32,10 @@ export function levelScale(
   frequency: Scale,
   [topPx, bottomPx]: readonly [number, number],
 ): Scale {
-  const limits = [
-    ...lines.flatMap(({ points }) => clipLine(points, frequency.from, frequency.to).map(([, limitDb]) => limitDb)),
-    ...result.points.map(({ limitDbuvPerM }) => limitDbuvPerM),
-  ];
+  const drawn = lines.flatMap(({ points }) =>
+    clipLine(points, frequency.from, frequency.to).map(([, limitDb]) => limitDb),
+  );
+  const limits = drawn.length > 0 ? drawn : result.points.map(({ limitDbuvPerM }) => limitDbuvPerM);
   const levels = result.points.flatMap((point) => [
     point.horizontalDbuvPerM,
     point.verticalDbuvPerM,

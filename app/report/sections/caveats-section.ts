@@ -15,7 +15,7 @@ export function findingsSection({ findings }: EstimateResult): Markup {
   const shown = findings.slice(0, MOST_FINDINGS);
   const left = findings.length - shown.length;
   return markup`<section><h2>Findings on the board</h2>
-<table><thead><tr><th class="n">No.</th><th>Net</th><th>Place, mm</th><th>Layer</th><th>Finding</th></tr></thead>
+<table class="findings"><thead><tr><th class="n">No.</th><th>Net</th><th>Place, mm</th><th>Layer</th><th>Finding</th></tr></thead>
 <tbody>${shown.map(
     ({ net, atM, layer, message }, i) =>
       markup`<tr><td class="n">${i + 1}</td><td>${nameMarkup(net, 30)}</td><td class="whole">${placeText(atM).replaceAll('-', '−')}</td><td>${nameMarkup(layer, 24)}</td><td>${nameMarkup(message, 400)}</td></tr>`,

@@ -1,5 +1,5 @@
 import type { EstimateResult, ResultPoint } from '../../estimate/result.ts';
-import { mainContributor, pathText } from '../contributor-text.ts';
+import { isItself, mainContributor, pathText } from '../contributor-text.ts';
 import { inlineMark } from '../figures/marks.ts';
 import { fixed, levelText, marginText, mhzText } from '../format.ts';
 import { type Markup, markup, nameMarkup } from '../markup.ts';
@@ -38,6 +38,6 @@ function row(point: ResultPoint, requiredMarginDb: number): Markup {
     fixed(point.antennaHeightM, 2),
     fixed(point.turntableDeg, 0),
   ].map(numberCell)}<td>${main && nameMarkup(main.contributor.name, 28)}${
-    main?.path && main.path.name !== main.contributor.name && markup` via ${nameMarkup(pathText(main.path.name), 24)}`
+    main?.path && !isItself(main.contributor, main.path) && markup` via ${nameMarkup(pathText(main.path.name), 24)}`
   }</td></tr>`;
 }

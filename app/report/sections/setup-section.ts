@@ -4,6 +4,7 @@ import { clipLine, type ReportLimitLine } from '../figures/limit-lines.ts';
 import { siteFigure } from '../figures/site-figure.ts';
 import { frequencyText, levelText, trimmed } from '../format.ts';
 import { type Markup, markup } from '../markup.ts';
+import { limitName } from '../verdict.ts';
 import { numberCell } from './number.ts';
 
 /** Set-up drawn to scale, and the limit with where it comes from. */
@@ -12,7 +13,7 @@ export function setupSection(board: Board, result: EstimateResult, lines: readon
   return markup`<section class="keep"><h2>Set-up</h2><figure>${siteFigure(board, result)}
 <figcaption><span>Both views to scale. The table carries the board at its height and is not part of the model.</span></figcaption></figure></section>
 <section class="keep"><h2>Limit</h2>
-<dl class="facts"><div><dt>Standard</dt><dd>${limit.standard}, class ${limit.class}, ${trimmed(limit.distanceM, 2)} m</dd></div><div><dt>Edition</dt><dd>${limit.edition}</dd></div><div><dt>Source of the values</dt><dd>${limit.source}</dd></div><div><dt>Status</dt><dd><strong>${limit.sourceStatus}</strong></dd></div><div><dt>Judged up to</dt><dd>${frequencyText(limit.maxHz)} (${limit.maxRule})</dd></div>${
+<dl class="facts"><div><dt>Standard</dt><dd>${limitName(result)}</dd></div><div><dt>Edition</dt><dd>${limit.edition}</dd></div><div><dt>Source of the values</dt><dd>${limit.source}</dd></div><div><dt>Status</dt><dd><strong>${limit.sourceStatus}</strong></dd></div><div><dt>Judged up to</dt><dd>${frequencyText(limit.maxHz)} (${limit.maxRule})</dd></div>${
     limit.conversion !== undefined && markup`<div><dt>Distance conversion</dt><dd>${limit.conversion}</dd></div>`
   }<div><dt>Laboratory</dt><dd>±${levelText(limit.labUncertaintyDb)} dB expanded uncertainty (CISPR 16-4-2)</dd></div></dl>
 ${lines.length > 0 && limitTable(lines, limit.maxHz)}</section>`;

@@ -16,5 +16,5 @@ export function spectrumSection(result: EstimateResult, lines: readonly ReportLi
 <figure>${spectrumFigure(result, lines)}${marginStrip(result, lines)}
 <figcaption><span>${inlineMark('over', 'over')}over the limit</span>${
     hasBand && markup`<span>${inlineMark('short', 'short')}short of the required ${required} dB (hatched band)</span>`
-  }<span>${inlineMark('fine', 'fine')}fine</span><span>${keyLine('pol-h', 'M-5 0H5')}horizontal, ${keyLine('pol-v', 'M0 -5V5')}vertical polarisation: maximum of each over height and angle</span><span>Of readings closer than a printed dot the strongest are drawn.</span></figcaption></figure></section>`;
+  }<span>${inlineMark('fine', 'fine')}fine</span><span>${keyLine('pol-h', 'M-5 0H5')}horizontal, ${keyLine('pol-v', 'M0 -5V5')}vertical polarisation: maximum of each over height and angle</span><span>Of readings closer than a printed dot the strongest are drawn; margins above 40 dB are not.</span></figcaption></figure></section>`;
 }

@@ -1,6 +1,6 @@
 import type { EstimateResult, Verdict } from '../../estimate/result.ts';
 import { DEFERENCE } from '../cautions.ts';
-import { KIND_PHRASE, mainContributor, pathText } from '../contributor-text.ts';
+import { isItself, KIND_PHRASE, mainContributor, pathText } from '../contributor-text.ts';
 import { inlineMark } from '../figures/marks.ts';
 import { countText, fixed, frequencyText, levelText } from '../format.ts';
 import { type Markup, markup, nameMarkup } from '../markup.ts';
@@ -48,7 +48,7 @@ function worstSentence(result: EstimateResult): Markup {
     main &&
     markup` Most of it comes from ${KIND_PHRASE[main.contributor.kind]}${nameMarkup(main.contributor.name)}${
       main.path &&
-      main.path.name !== main.contributor.name &&
+      !isItself(main.contributor, main.path) &&
       markup`, radiated mainly by the ${nameMarkup(pathText(main.path.name))}`
     }.`;
   return markup`${sentence}: ${printed(levelText(worst.levelDbuvPerM))} dBµV/m against ${printed(levelText(worst.limitDbuvPerM))} dBµV/m, ${worst.polarization}, antenna at ${fixed(worst.antennaHeightM, 2)} m, turntable ${fixed(worst.turntableDeg, 0)}°.${from}`;
