@@ -22,7 +22,7 @@ const LINE_TOLERANCE_DB = 0.5;
 const WIDE_LOOP_TOLERANCE_DB = 1;
 
 /** The case as a board a user would draw: trace and named return, measured impedance, no plane. */
-export function necBoard(testCase: NecCase): Board {
+function necBoard(testCase: NecCase): Board {
   const lengthMm = mToMm(testCase.lengthM);
   const spacingMm = mToMm(testCase.spacingM);
   const turn = ([along, across]: readonly [number, number]): [number, number] =>
@@ -72,7 +72,7 @@ export function necBoard(testCase: NecCase): Board {
 }
 
 /** The case through the whole estimate, one point a frequency. */
-export function estimateCase(testCase: NecCase, distanceM: number): readonly ResultPoint[] {
+function estimateCase(testCase: NecCase, distanceM: number): readonly ResultPoint[] {
   const site = { kind: 'ground-plane', distanceM, measuredFrom: 'center', orientation: testCase.orientation } as const;
   return estimate(necBoard(testCase), {
     limits: chooseLimits({ standard: 'CISPR 32', class: 'B', distanceM, convertDistance: false }),
@@ -95,11 +95,11 @@ export interface NecComparison {
 }
 
 /** Everything that is compared of a case at a distance. */
-export function compareCase(testCase: NecCase, distanceM: number, maxima = NEC_MAXIMA): NecComparison[] {
+export function compareCase(testCase: NecCase, distanceM: number): NecComparison[] {
   const points = new Map(
     estimateCase(testCase, distanceM).map((point) => [Math.round(point.frequencyHz), point] as const),
   );
-  const own = maxima.filter((maximum) => maximum.caseId === testCase.id && maximum.distanceM === distanceM);
+  const own = NEC_MAXIMA.filter((maximum) => maximum.caseId === testCase.id && maximum.distanceM === distanceM);
   return own.flatMap((maximum) =>
     componentsOf(testCase, maximum).map((component) => {
       const point = points.get(Math.round(maximum.frequencyHz));
@@ -117,8 +117,7 @@ export function compareCase(testCase: NecCase, distanceM: number, maxima = NEC_M
 const componentsOf = (testCase: NecCase, maximum: NecMaximum): Polarization[] =>
   testCase.kind === 'line' ? comparedComponents(maximum) : comparedComponents(maximum).slice(0, 1);
 
-export const necToleranceDb = ({ kind }: NecCase): number =>
-  kind === 'line' ? LINE_TOLERANCE_DB : WIDE_LOOP_TOLERANCE_DB;
+const necToleranceDb = ({ kind }: NecCase): number => (kind === 'line' ? LINE_TOLERANCE_DB : WIDE_LOOP_TOLERANCE_DB);
 
 /** One row a case, distance and component: the frequency where estimate and reference differ most. */
 export function necChecks(): Check[] {

@@ -79,6 +79,10 @@ describe('pair end', () => {
 
   it('as a section of line it is that inductance and capacitance', () => {
     const end = pairEnd(0.008, 300, 1.7);
+    // A quarter of the spacing's worth of the line's own capacitance, √ε_eff/(Z0 c).
+    expect(
+      Math.abs(end.gapCapacitanceF / ((0.002 * Math.sqrt(1.7)) / (300 * SPEED_OF_LIGHT_M_PER_S)) - 1),
+    ).toBeLessThan(1e-12);
     const { z0Ohm, lengthM } = pairEndSection(end);
     const phase = (2 * Math.PI * 30e6 * lengthM) / SPEED_OF_LIGHT_M_PER_S;
     // tan x against x: x²/3 = 1e-6.
@@ -96,9 +100,9 @@ describe('pair end', () => {
 
 /**
  * Electric moment across (over ε0) of two wires of length 20 D at ±½ V, each with half of the end pieces: charges constant
- * on segments, potentials on the wire's surface, the other half by antisymmetry. Lengths in units of D.
+ * on segments, potentials on the wire's surface, the other half by antisymmetry. `gap`: bare middle of the end pieces. Lengths in units of D.
  */
-function chargedPair(ratio: number): { momentPerVoltage: number; lengthM: number } {
+function chargedPair(ratio: number, gap = 0): { momentPerVoltage: number; chargePerVoltage: number; lengthM: number } {
   const a = 1 / ratio;
   const lengthM = 20;
   const pieces: { x: number; y: number; tx: number; ty: number; l: number }[] = [];
@@ -113,8 +117,8 @@ function chargedPair(ratio: number): { momentPerVoltage: number; lengthM: number
     pieces.push({ x: middle, y: 0.5, tx: 1, ty: 0, l }, { x: lengthM - middle, y: 0.5, tx: 1, ty: 0, l });
   }
   for (let i = 0; i < endPieces; i++) {
-    const y = ((i + 0.5) * 0.5) / endPieces;
-    for (const x of [0, lengthM]) pieces.push({ x, y, tx: 0, ty: 1, l: 0.5 / endPieces });
+    const y = gap / 2 + ((i + 0.5) * (0.5 - gap / 2)) / endPieces;
+    for (const x of [0, lengthM]) pieces.push({ x, y, tx: 0, ty: 1, l: (0.5 - gap / 2) / endPieces });
   }
   const n = pieces.length;
   const matrix = new Float64Array(n * n);
@@ -135,5 +139,5 @@ function chargedPair(ratio: number): { momentPerVoltage: number; lengthM: number
   solveDense(matrix, charges);
   let momentPerVoltage = 0;
   for (let i = 0; i < n; i++) momentPerVoltage += 2 * charges[i]! * pieces[i]!.y;
-  return { momentPerVoltage, lengthM };
+  return { momentPerVoltage, chargePerVoltage: charges.reduce((sum, charge) => sum + charge, 0), lengthM };
 }

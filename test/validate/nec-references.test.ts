@@ -1,9 +1,15 @@
 import { describe, expect, it } from 'vitest';
 import { NEC_CASES, NEC_DISTANCES_M, NEC_SOURCE_V, twoWireImpedanceOhm } from '../../app/validate/nec-cases.ts';
 import { NEC_MAXIMA } from '../../app/validate/nec-maxima.ts';
-import { compareCase, necChecks, necToleranceDb } from '../../app/validate/nec-references.ts';
+import { compareCase, necChecks } from '../../app/validate/nec-references.ts';
 import { COARSE_END_SEGMENTS, changeDb, solveCase } from '../nec/solve-case.ts';
 import { itNeedsNec2c } from '../support/it-needs-nec2c.ts';
+
+/**
+ * Tighter than the published rows: lines were seen within 0.1 dB (0.3 dB without the gap's capacitance, 0.6–2.3 dB without
+ * end zones), wide loops up to 0.5 dB where the spacing is a tenth of a wavelength.
+ */
+const ALLOWED_DB = { line: 0.15, 'wide-loop': 0.7 };
 
 const caseOf = (id: string) => NEC_CASES.find((testCase) => testCase.id === id)!;
 
@@ -17,8 +23,16 @@ describe('estimate against a thin-wire moment method over ground', () => {
     for (const { frequencyHz, component, expectedDbuvPerM, computedDbuvPerM } of compared) {
       const differenceDb = computedDbuvPerM - expectedDbuvPerM;
       const what = `${component} at ${frequencyHz / 1e6} MHz: ${computedDbuvPerM.toFixed(2)} against ${expectedDbuvPerM.toFixed(2)} dBµV/m`;
-      expect(Math.abs(differenceDb), what).toBeLessThanOrEqual(necToleranceDb(testCase));
+      expect(Math.abs(differenceDb), what).toBeLessThanOrEqual(ALLOWED_DB[testCase.kind]);
     }
+  });
+
+  it('reads rms: the stored peak phasor less 3.01 dB', () => {
+    const maximum = NEC_MAXIMA.find(
+      ({ caseId, distanceM }) => caseId === '100x10mm-50-220ohm-flat-x' && distanceM === 10,
+    )!;
+    const [first] = compareCase(caseOf(maximum.caseId), 10);
+    expect(first!.expectedDbuvPerM).toBeCloseTo(120 + 20 * Math.log10(maximum.horizontalVPerM) - 3.0103, 4);
   });
 
   it('compares what it says it compares', () => {
