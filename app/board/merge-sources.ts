@@ -11,7 +11,8 @@ import { References, refuseDuplicates } from './references.ts';
  * - the drives it states for a net replace all drives the board file has for that net, and so do its loads;
  * - `*` in a drive's or load's net name stands for any characters (`matchNames`), one entry for every net it matches;
  *   a net that the same list also names in full keeps to that entry, so `"*"` can hold the rule and names the exceptions;
- *   a pattern passes over nets with a plane (ground, supplies) and nets without the pins it needs.
+ *   a pattern passes over nets with a plane (ground, supplies) and nets without the pins it needs, and a load's pattern
+ *   over nets that nothing drives.
  *
  * Throws `input` with the path in the sources file for a pattern or name without a net, an unknown waveform or pin.
  */
@@ -29,12 +30,14 @@ export function mergeSources(board: BoardFile, sources: SourcesFile): BoardFile 
   for (const [i, loop] of (sources.loops ?? []).entries()) references.waveform(loop.waveform, `loops[${i}].waveform`);
   const planeNets = new Set((board.planes ?? []).map((plane) => plane.net));
   const choice = { netNames, planeNets, references };
-  const drives = expandNets(sources.drives ?? [], 'drives', { ...choice, leastPins: 1 });
-  const loads = expandNets(sources.loads ?? [], 'loads', { ...choice, leastPins: 2 });
+  const given = expandNets(sources.drives ?? [], 'drives', { ...choice, leastPins: 1 });
+  const drives = replaceByNet(board.drives ?? [], given);
+  const driven = new Set(drives.map((drive) => drive.net));
+  const loads = expandNets(sources.loads ?? [], 'loads', { ...choice, driven, leastPins: 2 });
   return {
     ...board,
     waveforms,
-    drives: replaceByNet(board.drives ?? [], drives),
+    drives,
     loads: replaceByNet(board.loads ?? [], loads),
     loops: replaceByName(board.loops, sources.loops),
     cables: replaceByName(board.cables, sources.cables),
@@ -56,6 +59,8 @@ interface NetChoice {
   readonly netNames: readonly string[];
   readonly planeNets: ReadonlySet<string>;
   readonly references: References;
+  /** The nets to choose from; absent: all. */
+  readonly driven?: ReadonlySet<string>;
   /** Pins a net needs to take an entry that names none: a driver's, for loads one more. */
   readonly leastPins: number;
 }
@@ -76,16 +81,13 @@ function expandNets<T extends Entry>(entries: readonly T[], list: 'drives' | 'lo
     const nets = matchNames(entry.net, netNames).filter((net) => canTake(entry, net, choice));
     if (nets.length > 0) return nets.filter((net) => !inFull.has(net)).map((net) => ({ ...entry, net }));
     const pins = entry.pin === undefined ? 'enough pins' : `a pin ${describe(entry.pin)}`;
-    throw inputError(
-      `${path}.net`,
-      oneOf(`a pattern that fits a net with ${pins} and no plane`, entry.net, netNames),
-      entry.net,
-    );
+    const what = `a pattern that fits ${choice.driven ? 'a driven net' : 'a net'} with ${pins} and no plane`;
+    throw inputError(`${path}.net`, oneOf(what, entry.net, netNames), entry.net);
   });
 }
 
-function canTake(entry: Entry, name: string, { planeNets, references, leastPins }: NetChoice): boolean {
-  if (planeNets.has(name)) return false;
+function canTake(entry: Entry, name: string, { planeNets, references, driven, leastPins }: NetChoice): boolean {
+  if (planeNets.has(name) || driven?.has(name) === false) return false;
   const pins = references.net(name, '').pins ?? [];
   return entry.pin === undefined ? pins.length >= leastPins : pins.some((pin) => pin.name === entry.pin);
 }

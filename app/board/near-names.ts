@@ -18,7 +18,7 @@ export function oneOf(what: string, wanted: string, names: readonly string[]): s
  * Names a user may have meant, best first: same but for case, then one containing the other, then few edits apart
  * (at most half of the wanted name's length, at least 1). `*` counts as nothing typed.
  */
-export function nearestNames(wanted: string, names: readonly string[]): string[] {
+function nearestNames(wanted: string, names: readonly string[]): string[] {
   const target = folded(wanted.replaceAll('*', ''));
   if (target === '') return [];
   const mostEdits = Math.max(1, Math.floor(target.length / 2));

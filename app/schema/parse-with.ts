@@ -20,7 +20,7 @@ export function parseWith<T extends z.ZodType>(schema: T, json: unknown): z.outp
 }
 
 /** `nets[3].traces[0].widthMm`; the whole file is "the file". */
-export function pathText(parts: readonly PathPart[]): string {
+function pathText(parts: readonly PathPart[]): string {
   let text = '';
   for (const part of parts) {
     if (typeof part === 'number') text += `[${part}]`;

@@ -40,7 +40,7 @@ export function decodeText(file: string, bytes: Uint8Array): string {
 }
 
 /** Parsed JSON. Throws `file` with line and column. */
-export function parseJsonText(file: string, text: string): unknown {
+function parseJsonText(file: string, text: string): unknown {
   try {
     return JSON.parse(text);
   } catch (error) {

@@ -55,6 +55,14 @@ describe('mergeSources', () => {
     ]);
   });
 
+  it('loads by pattern only what is driven, by the board file or the sources', () => {
+    const loads = [{ net: '*', capacitancePf: 5 }];
+    expect(merge({ loads }).loads!.map((load) => load.net)).toEqual(['CLK']);
+    const drives = [{ net: 'DATA0', waveform: 'clk' }];
+    expect(merge({ drives, loads }).loads!.map((load) => load.net)).toEqual(['CLK', 'DATA0']);
+    expect(appFailure(() => merge({ loads: [{ net: 'DATA*' }] })).message).toContain('fits a driven net');
+  });
+
   it.each<[string, object, string, string]>([
     ['a name without a net', { drives: [{ net: 'DATA', waveform: 'clk' }] }, 'drives[0].net', '(nearest: "DATA0")'],
     ['a pattern that fits nothing', { loads: [{ net: 'DATX*' }] }, 'loads[0].net', '(nearest: "DATA0")'],

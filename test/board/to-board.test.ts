@@ -32,6 +32,50 @@ describe('toBoard', () => {
     expect(board.structure.planes).toBe('solved');
   });
 
+  it('converts cable tables, listed lines, data, delays and signs', () => {
+    const { board } = boardOf((file) => {
+      file.waveforms!.push(
+        { name: 'raw', kind: 'lines', lines: [{ frequencyMhz: 50, amplitudeA: 2, phaseDeg: 90 }] },
+        {
+          name: 'bus',
+          kind: 'random-data',
+          bitRateMbps: 80,
+          lowV: 0.2,
+          highV: 1.8,
+          riseNs: 2,
+          fallNs: 3,
+          clockDomain: 'm',
+        },
+      );
+      Object.assign(file.drives![0]!, { waveform: 'bus', seriesOhm: 22, delayNs: -3, inverted: true });
+      Object.assign(file.loops![0]!, { waveform: 'raw', delayNs: 7 });
+      Object.assign(file.cables![0]!, {
+        commonModeUa: [
+          [30, 5],
+          [300, 2],
+        ],
+        seriesImpedance: [[30, 40, 110]],
+        farEnd: { resistanceOhm: 150 },
+      });
+      file.structure = { planes: 'pair-only', cellMm: 4 };
+    });
+    const [, , raw, bus] = board.waveforms;
+    expect(raw).toMatchObject({ quantity: 'A', lines: [{ frequencyHz: 50e6, amplitude: 2, phaseRad: Math.PI / 2 }] });
+    expect(bus).toMatchObject({ bitRateHz: 80e6, low: 0.2, high: 1.8, sequenceBits: 127, clockDomain: 'm' });
+    if (bus?.kind !== 'random-data') throw new Error('not data');
+    expect(bus.rise1090S * 1e9).toBeCloseTo(2, 9);
+    expect(bus.fall1090S * 1e9).toBeCloseTo(3, 9);
+    expect(board.drives[0]).toMatchObject({ sourceOhm: 25, seriesOhm: 22, isInverted: true });
+    expect(board.drives[0]!.delayS * 1e9).toBeCloseTo(-3, 9);
+    expect(board.loops[0]!.delayS * 1e9).toBeCloseTo(7, 9);
+    const cable = board.cables[0]!;
+    expect(cable.farEnd).toEqual({ resistanceOhm: 150 });
+    expect(cable.seriesImpedance).toEqual([{ frequencyHz: 30e6, resistanceOhm: 40, reactanceOhm: 110 }]);
+    expect(cable.commonModeRms!.map((row) => row.frequencyHz)).toEqual([30e6, 300e6]);
+    expect(cable.commonModeRms![0]!.currentRmsA * 1e6).toBeCloseTo(5, 9);
+    expect(board.structure).toEqual({ planes: 'pair-only', cellM: 0.004 });
+  });
+
   it('stacks layers upwards from z = 0 at the underside', () => {
     const { stackup } = convert(orchardBoard()).board;
     const heightsUm = stackup.map((layer) => [layer.zBottomM, layer.zTopM].map((zM) => Math.round(zM * 1e6)));

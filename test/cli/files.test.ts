@@ -119,6 +119,21 @@ describe('output files', () => {
     expect([code, stdout]).toEqual([2, '']);
   });
 
+  it('a write that breaks off midway leaves the old file and no temporary one', async () => {
+    mkdirSync(join(folder, 'narrow'));
+    const target = write('narrow/nets.json', 'old');
+    // The shell's limit of 1 KB a file stops the write where a full disk would.
+    const script = 'ulimit -f 1; exec "$0" "$@"';
+    const child = spawn('bash', ['-c', script, process.execPath, PROGRAM, 'nets', boardFile, '--json', target]);
+    let stderr = '';
+    child.stderr.setEncoding('utf8').on('data', (text: string) => (stderr += text));
+    const code = await new Promise((resolve) => child.on('close', resolve));
+    expect(stderr).toContain(`${target}: cannot be written: too large for the file system`);
+    expect(code).toBe(2);
+    expect(readFileSync(target, 'utf8')).toBe('old');
+    expect(readdirSync(join(folder, 'narrow'))).toEqual(['nets.json']);
+  });
+
   it('a failing job leaves the old file as it was', async () => {
     const old = write('result.json', 'old');
     const broken = write('nothing.board.json', { ...orchardBoard(), drives: [{ net: 'CLK', waveform: 'none' }] });
