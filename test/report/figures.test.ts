@@ -179,6 +179,24 @@ describe('board', () => {
     expect(startsOf(source, 'pin load')).toHaveLength(4);
   });
 
+  it('draws the top copper solid also under a solder mask, deeper copper dashed', () => {
+    const mask = { ...board.stackup[1]!, name: 'mask' };
+    const down = <Item extends { readonly layerIndex: number }>(items: readonly Item[]) =>
+      items.map((item) => ({ ...item, layerIndex: item.layerIndex + 1 }));
+    const masked: Board = {
+      ...board,
+      stackup: [mask, ...board.stackup],
+      planes: down(board.planes),
+      nets: board.nets.map((net) => ({ ...net, traces: down(net.traces), pins: down(net.pins) })),
+    };
+    const groups = (figure: string) =>
+      ['driven below', 'driven'].map((name) => figure.split(`<g class="${name}">`)[1]!.split('</g>')[0]);
+    expect(groups(boardFigure(masked, sampleResult()).source)).toEqual(groups(source));
+    const [below, top] = groups(source);
+    expect(below!.match(/M/g)).toHaveLength(1);
+    expect(top!.match(/M/g)).toHaveLength(5);
+  });
+
   it('shows every used layer, and no second picture for a single one', () => {
     const layers = layerFigure(board, sampleResult())!;
     for (const name of ['L1 TOP', 'L2 GND', 'L3 PWR', 'L4 BOT']) expect(layers.source).toContain(`>${name}</text>`);

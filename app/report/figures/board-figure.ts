@@ -27,8 +27,10 @@ export function boardFigure(board: Board, result: EstimateResult): Markup {
   const quiet = board.nets.filter((net) => !isDriven.has(net));
   const { box } = frame;
   const everyLayer = () => true;
-  const isTop = (layerIndex: number) => layerIndex === 0;
-  const isBelow = (layerIndex: number) => layerIndex !== 0;
+  // A solder mask may come before the top copper.
+  const topIndex = board.stackup.findIndex(({ kind }) => kind === 'copper');
+  const isTop = (layerIndex: number) => layerIndex === topIndex;
+  const isBelow = (layerIndex: number) => layerIndex !== topIndex;
   const height = box.bottom + 34;
   return markup`<svg class="figure" viewBox="0 0 ${WIDTH} ${px(height)}" role="img" aria-label="Board from the top, driven nets emphasised">
 <defs><clipPath id="board-clip"><rect x="${px(box.left)}" y="${px(box.top)}" width="${px(box.right - box.left)}" height="${px(box.bottom - box.top)}"/></clipPath></defs>
@@ -115,7 +117,12 @@ function labels(board: Board, result: EstimateResult, driven: readonly Net[], fr
     ...board.cables.map(({ pointsM }) => flat(pointsM, frame)),
     ...board.loops.map(({ pointsM }) => flat([...pointsM, pointsM[0]!], frame)),
   ];
-  const placed = placeLabels([...requests, ...pinRequests], { bounds: frame.box, fontPx: LABEL_PX, obstacles, lines });
+  const placed = placeLabels([...requests, ...pinRequests], {
+    bounds: { ...frame.box, right: WIDTH - 4 },
+    fontPx: LABEL_PX,
+    obstacles,
+    lines,
+  });
   return markup`${placed.map(
     ({ text, anchor, at, leaderTo }, i) =>
       markup`${
