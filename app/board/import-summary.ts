@@ -22,7 +22,7 @@ export interface ImportSummary {
   readonly findings: readonly ImportFinding[];
 }
 
-export interface ImportSource {
+interface ImportSource {
   readonly format: string;
   /** As written in the file; empty when it states none. */
   readonly revision: string;

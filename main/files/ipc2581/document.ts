@@ -47,7 +47,7 @@ export interface Stackup {
   readonly groups: StackupGroup[];
 }
 
-export interface StackupGroup {
+interface StackupGroup {
   readonly name: string;
   readonly rows: StackupRow[];
 }

@@ -142,7 +142,7 @@ class StrokeReader implements ElementReader {
 }
 
 /** A Polygon, a Cutout, or a primitive that already has its outline; all may carry a fill and a transform. */
-export class RingReader implements ElementReader {
+class RingReader implements ElementReader {
   private readonly context: ShapeContext;
   private readonly path: Path;
   private readonly done: (ring: Path, fill: Fill | undefined) => void;

@@ -3,6 +3,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { type BoardFile, boardFileSchema } from '../../../app/board/board-file.ts';
 import type { ImportSummary } from '../../../app/board/import-summary.ts';
+import { toBoard } from '../../../app/board/to-board.ts';
 import { AppError } from '../../../app/errors.ts';
 import { importBoard } from '../../../main/files/import-board.ts';
 
@@ -37,7 +38,7 @@ export const LAYERS = `<Layer name="TOP" layerFunction="SIGNAL" side="TOP" polar
 export const HEADER = `<CadHeader units="MILLIMETER">
   <Spec name="FR"><Dielectric type="DIELECTRIC_CONSTANT"><Property value="4.2"/></Dielectric>
     <Dielectric type="LOSS_TANGENT"><Property value="0.018"/></Dielectric></Spec></CadHeader>`;
-export const STACKUP = `<Stackup name="PRIMARY" overallThickness="1.6" whereMeasured="METAL"><StackupGroup name="G" thickness="1.6">
+const STACKUP = `<Stackup name="PRIMARY" overallThickness="1.6" whereMeasured="METAL"><StackupGroup name="G" thickness="1.6">
   <StackupLayer layerOrGroupRef="TOP" thickness="0.035" sequence="1"/>
   <StackupLayer layerOrGroupRef="CORE" thickness="1.53" sequence="2"><SpecRef id="FR"/></StackupLayer>
   <StackupLayer layerOrGroupRef="BOT" thickness="0.035" sequence="3"/></StackupGroup></Stackup>`;
@@ -73,14 +74,17 @@ export interface Imported {
   readonly summary: ImportSummary;
 }
 
-/** Writes the text to a file of its own and imports it; the board must pass the schema. */
+/** Writes the text to a file of its own and imports it; the board must pass the schema and become a board in SI units. */
 export async function importText(text: string | Buffer, name = 'invented.xml'): Promise<Imported> {
   const folder = await mkdtemp(join(tmpdir(), 'quietboard-import-'));
   try {
     const file = join(folder, name);
     await writeFile(file, text);
     const { board, summary } = await importBoard(file);
-    return { board: boardFileSchema.parse(board), summary };
+    const parsed = boardFileSchema.parse(board);
+    // Without any net or plane nothing has an extent, and the conversion rightly asks for one.
+    if (parsed.nets.length > 0) toBoard(parsed);
+    return { board: parsed, summary };
   } finally {
     await rm(folder, { recursive: true });
   }

@@ -42,6 +42,17 @@ describe('vias', () => {
     expect(netOf(imported, 'B').vias).toEqual([{ atMm: [5, 6], fromLayer: 'TOP', toLayer: 'IN2', drillMm: 0.3 }]);
   });
 
+  it('take net and span from the second mention too', async () => {
+    const stack = `<PadStack net="B"><LayerHole name="V" diameter="0.3" platingStatus="VIA" x="5" y="6">
+      <Span fromLayer="TOP" toLayer="IN2"/></LayerHole></PadStack>`;
+    const imported = await importParts({
+      layers: `${FOUR}<Layer name="Drill Guide" layerFunction="DRILL"/>`,
+      stackup: FOUR_STACKUP,
+      step: `${onLayer('Drill Guide', `<Set>${hole(5, 6, '0.3')}</Set>`)}${TRACES}${stack}`,
+    });
+    expect(netOf(imported, 'B').vias).toEqual([{ atMm: [5, 6], fromLayer: 'TOP', toLayer: 'IN2', drillMm: 0.3 }]);
+  });
+
   it('stacked at one place keep their spans and count as one place', async () => {
     const imported = await importParts({
       layers: `${FOUR}<Layer name="V1" layerFunction="DRILL"><Span fromLayer="TOP" toLayer="IN1"/></Layer>

@@ -50,7 +50,16 @@ describe('pins', () => {
 
   it('with several pads have a number for each further one', async () => {
     const sets = padSet('A', pad(10, 5, 'J3', 'SH') + pad(20, 5, 'J3', 'SH') + pad(30, 5, 'J3', 'SH'));
-    const imported = await importParts({ step: onLayer('TOP', line('A', '1,1 9,1') + sets) });
-    expect(netOf(imported, 'A').pins!.map(({ name }) => name)).toEqual(['J3.SH', 'J3.SH#2', 'J3.SH#3']);
+    // Two pins whose names come out alike, and one that looks like a numbered one.
+    const alike = padSet('A', pad(40, 5, 'J3.SH', '1') + pad(50, 5, 'J3', 'SH.1') + pad(60, 5, 'J3', 'SH#2'));
+    const imported = await importParts({ step: onLayer('TOP', line('A', '1,1 9,1') + sets + alike) });
+    expect(netOf(imported, 'A').pins!.map(({ name }) => name)).toEqual([
+      'J3.SH',
+      'J3.SH#2',
+      'J3.SH#3',
+      'J3.SH.1',
+      'J3.SH.1#2',
+      'J3.SH#2#2',
+    ]);
   });
 });

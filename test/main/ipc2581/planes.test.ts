@@ -8,7 +8,10 @@ const SQUARE = '10,10 40,10 40,30 10,30 10,10';
 describe('planes', () => {
   it('are the filled areas with a net, without the closing point, cutouts kept', async () => {
     const imported = await importParts({
-      step: onLayer('BOT', contour('net="GND"', SQUARE, ['20,15 25,15 25,20 20,20 20,15', '30,15 31,15 30,15'])),
+      step: onLayer(
+        'BOT',
+        contour('net="GND"', SQUARE, ['20,15 25,15 25,20 20,20 20,15', '30,15 31,15 30,15', '30,16 31,17 32,18 33,19']),
+      ),
     });
     expect(imported.board.planes).toEqual([
       {
@@ -20,7 +23,7 @@ describe('planes', () => {
           [40, 30],
           [10, 30],
         ],
-        // The second cutout has no area.
+        // The other cutouts have no area.
         cutoutsMm: [
           [
             [20, 15],

@@ -1,6 +1,7 @@
 import { existsSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { boardFileSchema } from '../../../app/board/board-file.ts';
+import { toBoard } from '../../../app/board/to-board.ts';
 import { importBoard } from '../../../main/files/import-board.ts';
 
 /**
@@ -126,7 +127,7 @@ describe.each(BOARDS)('$file', (expected) => {
 
   it('is a valid board file that lies in its outline', async () => {
     const { board } = await imported;
-    expect(boardFileSchema.parse(board).nets).toHaveLength(expected.counts.nets!);
+    expect(toBoard(boardFileSchema.parse(board)).board.nets).toHaveLength(expected.counts.nets!);
     const coppers = new Set(board.stackup.filter(({ kind }) => kind === 'copper').map(({ name }) => name));
     const placed = [...board.nets.flatMap((net) => [...(net.traces ?? []), ...(net.pins ?? [])]), ...board.planes!];
     for (const { layer } of placed) expect(coppers).toContain(layer);

@@ -199,6 +199,13 @@ describe('stackup', () => {
     expect(imported.board.stackup[1]).toMatchObject({ kind: 'dielectric', thicknessMm: 0.7, guessed: true });
   });
 
+  it('does not take what rounding left of the stated thickness for a gap', async () => {
+    // Stated is more than the rows by a rounding error.
+    const rows = `${row('TOP', '0.1')}${row('BOT', '0.2')}`;
+    const imported = await importParts({ stackup: stackup(rows, '0.30000000000000009'), step: BOTH });
+    expect(imported.board.stackup[1]).toMatchObject({ thicknessMm: 0.2, guessed: true });
+  });
+
   it('adds a copper that has traces but no row', async () => {
     const layers = `${LAYERS}${layer('IN', 'SIGNAL')}`;
     const rows = `${row('TOP', '0.035')}${row('CORE', '1.5')}${row('BOT', '0.035')}`;
@@ -213,7 +220,7 @@ describe('stackup', () => {
 
   it('gives rows of one material names of their own', async () => {
     const rows = `${row('TOP', '0.035')}${row('CORE', '0.5')}${row('CORE', '0.7')}${row('BOT', '0.035')}`;
-    expect(names(await importParts({ stackup: stackup(rows), step: BOTH }))).toEqual(['TOP', 'CORE', 'CORE #2', 'BOT']);
+    expect(names(await importParts({ stackup: stackup(rows), step: BOTH }))).toEqual(['TOP', 'CORE', 'CORE#2', 'BOT']);
   });
 
   it('converts thickness from inches', async () => {

@@ -51,6 +51,14 @@ describe('traces', () => {
     expect(Math.min(...xs)).toBeCloseTo(20, 2);
   });
 
+  it('turn clockwise when an arc does not say', async () => {
+    // From east to north of (25, 20) clockwise: three quarters of the circle, by way of the west.
+    const arc = `<Arc startX="30" startY="20" endX="25" endY="25" centerX="25" centerY="20">${WIDTH}</Arc>`;
+    const curve = `<Polyline><PolyBegin x="30" y="20"/><PolyStepCurve x="25" y="25" centerX="25" centerY="20"/>${WIDTH}</Polyline>`;
+    const imported = await importParts({ step: onLayer('TOP', set('A', arc) + set('B', curve)) });
+    for (const { lengthMm } of imported.summary.netLengths) expect(lengthMm).toBeCloseTo(7.5 * Math.PI, 9);
+  });
+
   it('say when an arc misses its centre', async () => {
     const arc = `<Arc startX="30" startY="20" endX="25" endY="25.2" centerX="25" centerY="20" clockwise="false">${WIDTH}</Arc>`;
     const imported = await importParts({ step: onLayer('TOP', set('A', arc)) });

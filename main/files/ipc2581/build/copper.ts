@@ -12,7 +12,7 @@ export interface CopperStroke {
 }
 
 /** A filled copper area that has a net and may be a plane. */
-export interface CopperArea {
+interface CopperArea {
   readonly layer: string;
   readonly net: string;
   readonly ring: Path;

@@ -42,11 +42,11 @@ export class BoardFrame {
     return points.length < 2 ? undefined : points;
   }
 
-  /** Takes the points over; without repeated neighbours and closing point. Undefined when fewer than three are left. */
+  /** Takes the points over; without repeated neighbours and closing point. Undefined when they enclose no area. */
   ring(points: PointMm[]): PointMm[] | undefined {
     this.moveDistinct(points);
     while (points.length > 1 && isSame(points[0]!, points[points.length - 1]!)) points.pop();
-    return points.length < 3 ? undefined : points;
+    return hasArea(points) ? points : undefined;
   }
 
   /** In place, for a large board has millions of points. */
@@ -72,4 +72,11 @@ export function ringAreaMm2(ring: readonly PointMm[]): number {
     twice += x0 * y1 - x1 * y0;
   }
   return Math.abs(twice) / 2;
+}
+
+/** False for a line there and back: rounding leaves far less than 1e-9 of the box, a real sliver keeps far more. */
+export function hasArea(ring: readonly PointMm[]): boolean {
+  const box = boxOf(ring);
+  if (box === undefined || ring.length < 3) return false;
+  return ringAreaMm2(ring) > 1e-9 * (box.maxX - box.minX) * (box.maxY - box.minY);
 }

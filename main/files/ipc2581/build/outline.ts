@@ -3,7 +3,7 @@ import { type Path, type PointMm, pathVertices } from '../path.ts';
 import type { Copper } from './copper.ts';
 import type { Findings } from './findings.ts';
 import type { Flattener } from './flattener.ts';
-import { BoardFrame, boxOf, ringAreaMm2, roundMm } from './frame.ts';
+import { BoardFrame, boxOf, hasArea, ringAreaMm2, roundMm } from './frame.ts';
 
 export interface Outline {
   /** Undefined when the file draws no usable profile. */
@@ -19,7 +19,7 @@ export interface Outline {
 export function buildOutline(step: Step, copper: Copper, flattener: Flattener, findings: Findings): Outline {
   const profile = step.profile;
   const points = profile === undefined ? undefined : flattener.exact(profile.ring);
-  const isUsable = points !== undefined && ringAreaMm2(points) > 0;
+  const isUsable = points !== undefined && hasArea(points);
   const drawn = isUsable ? points : copperPoints(copper);
   const box = boxOf(drawn) ?? { minX: 0, minY: 0, maxX: 0, maxY: 0 };
   const sizeBox = (isUsable ? boxOf(pathVertices(profile!.ring)) : undefined) ?? box;

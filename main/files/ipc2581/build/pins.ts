@@ -2,6 +2,7 @@ import type { BoardFileInput } from '../../../../app/board/board-file.ts';
 import { type PinPad, pinKey, type Step } from '../document.ts';
 import type { Findings } from './findings.ts';
 import type { BoardFrame } from './frame.ts';
+import { UniqueNames } from './unique-names.ts';
 
 export type FilePin = NonNullable<BoardFileInput['nets'][number]['pins']>[number];
 
@@ -29,20 +30,15 @@ export function buildPins(
   }
 
   const byNet = new Map<string, FilePin[]>();
+  const names = new UniqueNames();
   for (const [key, pads] of places) {
-    let number = 0;
     for (const pad of pads.values()) {
-      const name = pad.component === '' ? pad.pin : `${pad.component}.${pad.pin}`;
       const net = pad.net ?? step.pinNets.get(key);
-      number++;
       if (net === undefined) continue;
+      const name = names.free(pad.component === '' ? pad.pin : `${pad.component}.${pad.pin}`);
       const pins = byNet.get(net) ?? [];
       byNet.set(net, pins);
-      pins.push({
-        name: number === 1 ? name : `${name}#${number}`,
-        atMm: frame.point([pad.xMm, pad.yMm]),
-        layer: pad.layer,
-      });
+      pins.push({ name, atMm: frame.point([pad.xMm, pad.yMm]), layer: pad.layer });
     }
   }
   const lost = [...step.pinNets.keys()].filter((key) => !places.has(key)).length;

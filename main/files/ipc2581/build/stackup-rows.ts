@@ -6,6 +6,7 @@ import {
   type StackupRow,
 } from '../document.ts';
 import { type Findings, nameList } from './findings.ts';
+import { roundMm } from './frame.ts';
 import { MaterialFinder } from './material.ts';
 
 /** A physical row, top first. */
@@ -44,7 +45,7 @@ function dropCovered(rows: readonly PhysicalRow[]): PhysicalRow[] {
   const last = rows.findLastIndex((row) => row.kind === 'copper');
   return rows.filter((row, i) => {
     if (row.kind === 'copper') return true;
-    return row.thicknessMm > 0 && (row.kind === 'dielectric' || i < first || i > last);
+    return roundMm(row.thicknessMm) > 0 && (row.kind === 'dielectric' || i < first || i > last);
   });
 }
 

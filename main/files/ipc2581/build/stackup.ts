@@ -3,18 +3,20 @@ import { type Ipc2581Document, isCopperFunction, type Step } from '../document.t
 import { type Findings, nameList } from './findings.ts';
 import { roundMm } from './frame.ts';
 import { type PhysicalRow, physicalRows } from './stackup-rows.ts';
+import { UniqueNames } from './unique-names.ts';
 
 type FileRow = BoardFileInput['stackup'][number];
 
 /** Guess for FR-4 laminate without a stated permittivity; every row that uses it is marked. */
-export const GUESSED_EPSILON_R = 4.3;
+const GUESSED_EPSILON_R = 4.3;
 /** Solder mask without one: 3.3 to 3.8 is common practice. */
 const GUESSED_MASK_EPSILON_R = 3.5;
 /** Common practice where a file says nothing: 1.6 mm board, 35 µm copper. */
 const GUESSED_BOARD_MM = 1.6;
 const GUESSED_COPPER_MM = 0.035;
-/** Between two coppers when the stated thickness leaves nothing. */
-const THINNEST_GUESS_MM = 0.2;
+/** Between two coppers when the stated thickness leaves nothing, or only what rounding left. */
+const GUESSED_GAP_MM = 0.2;
+const THINNEST_GAP_MM = 0.01;
 /** Stated and summed thickness may differ by mask, paste and rounding. */
 const THICKNESS_TOLERANCE = 0.02;
 
@@ -98,7 +100,7 @@ function fillGaps(rows: PhysicalRow[], statedMm: number, findings: Findings): Ph
   if (gaps === 0) return rows;
   const knownMm = rows.reduce((sum, { thicknessMm }) => sum + thicknessMm, 0);
   const freeMm = (statedMm > 0 ? statedMm : GUESSED_BOARD_MM) - knownMm;
-  const thicknessMm = freeMm > 0 ? freeMm / gaps : THINNEST_GUESS_MM;
+  const thicknessMm = freeMm / gaps >= THINNEST_GAP_MM ? freeMm / gaps : GUESSED_GAP_MM;
   findings.add(
     'dielectric-guessed',
     gaps,
@@ -122,7 +124,7 @@ function checkThickness(rows: readonly PhysicalRow[], statedMm: number, findings
     (mm) => Math.abs(mm - statedMm) <= THICKNESS_TOLERANCE * statedMm,
   );
   if (statedMm === 0 || fits) return;
-  const message = `the stackup's rows add up to ${roundMm(boardMm)} mm, but ${roundMm(statedMm)} mm is stated: the rows count`;
+  const message = `the stackup's rows add up to ${roundMm(boardMm)} mm, but ${roundMm(statedMm)} mm is stated: the rows are used`;
   findings.add('stackup-thickness-differs', 1, message);
 }
 
@@ -141,14 +143,8 @@ function toFileRow({ name, kind, thicknessMm, epsilonR, lossTangent }: PhysicalR
 
 /** A material may lie in the board several times under one name; rows of the board file need names of their own. */
 function withUniqueNames(rows: FileRow[]): FileRow[] {
-  const taken = new Set(rows.filter(({ kind }) => kind === 'copper').map(({ name }) => name));
-  return rows.map((row) => {
-    if (row.kind === 'copper') return row;
-    let name = row.name;
-    for (let n = 2; taken.has(name); n++) name = `${row.name} #${n}`;
-    taken.add(name);
-    return { ...row, name };
-  });
+  const names = new UniqueNames(rows.filter(({ kind }) => kind === 'copper').map(({ name }) => name));
+  return rows.map((row) => (row.kind === 'copper' ? row : { ...row, name: names.free(row.name) }));
 }
 
 /** Says how many rows got a guessed permittivity. */
