@@ -9,7 +9,7 @@ import { dashPath, px } from './path.ts';
  */
 
 /** Outlines of one standing's mark at a place; `half` is the filled half of the diamond. */
-export function markPath(standing: Standing, x: number, y: number): { outline: string; half: string } {
+function markPath(standing: Standing, x: number, y: number): { outline: string; half: string } {
   switch (standing) {
     case 'over':
       return { outline: `M${px(x)} ${px(y - 5)}L${px(x + 4.8)} ${px(y + 3.5)}H${px(x - 4.8)}Z`, half: '' };

@@ -22,7 +22,7 @@ export interface PlacedLabel extends LabelRequest {
 /** Mean advance of a digit or letter over the font size, on the wide side. */
 const ADVANCE = 0.58;
 
-export const textWidthPx = (text: string, fontPx: number): number => Array.from(text).length * fontPx * ADVANCE;
+const textWidthPx = (text: string, fontPx: number): number => Array.from(text).length * fontPx * ADVANCE;
 
 /** Tried in this order: a ring of places ever farther from the anchor. */
 const DISTANCES_PX = [8, 20, 34, 50, 70];
