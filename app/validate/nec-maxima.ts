@@ -2,7 +2,7 @@ import type { NecMaximum } from './nec-cases.ts';
 
 /**
  * Maxima over height (1-4 m) and angle of the cases in nec-cases.ts over a perfect ground. Written by
- * `node test/nec/generate.mjs` with nec2c 1.3 (Debian); doubling the segments changed no value by more than
+ * `npm run references` (test/nec/generate.mjs) with nec2c 1.3 (Debian); doubling the segments changed no value by more than
  * 0.094 dB. Not to be edited by hand.
  */
 type Row = readonly [

@@ -1,4 +1,4 @@
-/** Writes the reference maxima anew: node test/nec/generate.mjs (needs nec2c; a few minutes). The diff is for review. */
+/** Writes the reference maxima anew: npm run references (needs nec2c; a few minutes). The diff is for review. */
 import { fileURLToPath } from 'node:url';
 import { runnerImport } from 'vite';
 

@@ -32,7 +32,7 @@ const source = (
 
 /**
  * Maxima over height (1-4 m) and angle of the cases in nec-cases.ts over a perfect ground. Written by
- * \`node test/nec/generate.mjs\` with ${version} (Debian); doubling the segments changed no value by more than
+ * \`npm run references\` (test/nec/generate.mjs) with ${version} (Debian); doubling the segments changed no value by more than
  * ${worstDb.toFixed(3)} dB. Not to be edited by hand.
  */
 type Row = readonly [

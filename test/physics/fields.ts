@@ -15,14 +15,13 @@ export const plus = (...terms: readonly Complex[]): Complex => ({
   re: terms.reduce((sum, { re }) => sum + re, 0),
   im: terms.reduce((sum, { im }) => sum + im, 0),
 });
-export const real = (re: number): Complex => ({ re, im: 0 });
+const real = (re: number): Complex => ({ re, im: 0 });
 export const imaginary = (im: number): Complex => ({ re: 0, im });
 /** e^(−jx)/d. */
 export const wave = (phaseRad: number, distanceM: number): Complex => ({
   re: Math.cos(phaseRad) / distanceM,
   im: -Math.sin(phaseRad) / distanceM,
 });
-export const dot = (a: Vector, b: Vector): number => a[0] * b[0] + a[1] * b[1] + a[2] * b[2];
 export const cross = (a: Vector, b: Vector): Vector => [
   a[1] * b[2] - a[2] * b[1],
   a[2] * b[0] - a[0] * b[2],

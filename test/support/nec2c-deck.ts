@@ -15,7 +15,7 @@ export interface NecWire {
 }
 
 /** Voltage source in a segment, in series with the segment's load; peak phasor, + side towards the wire's `toM`. */
-export interface NecSource {
+interface NecSource {
   readonly tag: number;
   readonly segment: number;
   readonly voltageRe: number;
@@ -23,7 +23,7 @@ export interface NecSource {
 }
 
 /** Lumped impedance in a segment. Two loads on one segment add. */
-export interface NecLoad {
+interface NecLoad {
   readonly tag: number;
   readonly segment: number;
   readonly resistanceOhm: number;
@@ -64,7 +64,7 @@ export const necColumn = (
   counts: [1, 1, count],
 });
 
-export const necWireLengthM = ({ fromM, toM }: NecWire): number =>
+const necWireLengthM = ({ fromM, toM }: NecWire): number =>
   Math.hypot(toM[0] - fromM[0], toM[1] - fromM[1], toM[2] - fromM[2]);
 
 /**

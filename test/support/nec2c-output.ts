@@ -5,7 +5,7 @@ export interface NecComplex {
   readonly im: number;
 }
 
-export interface NecCurrent {
+interface NecCurrent {
   readonly tag: number;
   /** Counts from 1 within the tag. */
   readonly segment: number;
@@ -13,7 +13,7 @@ export interface NecCurrent {
   readonly currentA: NecComplex;
 }
 
-export interface NecSourceResult {
+interface NecSourceResult {
   readonly tag: number;
   /** Counts from 1 over the whole model. */
   readonly absoluteSegment: number;

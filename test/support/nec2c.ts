@@ -14,14 +14,12 @@ import { type NecComplex, type NecFrequencyResult, parseNecOutput } from './nec2
 export {
   type NecDeck,
   type NecGrid,
-  type NecLoad,
   type NecPointM,
-  type NecSource,
   type NecWire,
   necColumn,
   necPoint,
 } from './nec2c-deck.ts';
-export type { NecComplex, NecCurrent, NecFrequencyResult, NecSourceResult } from './nec2c-output.ts';
+export type { NecComplex, NecFrequencyResult } from './nec2c-output.ts';
 
 const run = promisify(execFile);
 
