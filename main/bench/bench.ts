@@ -1,15 +1,7 @@
 import { writeFileSync } from 'node:fs';
 import { cpus, totalmem } from 'node:os';
+import type { BenchResult } from './bench-result.ts';
 import { scanBench } from './scan-bench.ts';
-
-/** One measured thing; `ratio` is against the plain way, where there is one. */
-export interface BenchResult {
-  readonly name: string;
-  readonly seconds: number;
-  readonly ratio?: number;
-  readonly peakMb: number;
-  readonly detail: Readonly<Record<string, number | string>>;
-}
 
 const BENCHES: readonly (() => BenchResult)[] = [scanBench];
 

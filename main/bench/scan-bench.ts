@@ -7,7 +7,7 @@ import { spectrumTable } from '../../app/estimate/spectrum-table.ts';
 import { cylinderPlan } from '../../app/site/cylinder-field.ts';
 import { boxOf } from '../../app/site/moment-grid.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../../app/units/constants.ts';
-import type { BenchResult } from './bench.ts';
+import type { BenchResult } from './bench-result.ts';
 import { DIRECT_ANGLES, DIRECT_HEIGHTS, directScan } from './direct-scan.ts';
 import { generatedBoard } from './generated-board.ts';
 
