@@ -95,8 +95,8 @@ const optionsOf = (issue: object): readonly unknown[] =>
   'options' in issue && Array.isArray(issue.options) ? issue.options : [];
 
 function bound(origin: string, relation: string, limit: number | bigint): string {
-  if (origin === 'array') return `a list of ${relation} ${limit} entries`;
-  if (origin === 'string') return `a text of ${relation} ${limit} characters`;
+  if (origin === 'array') return `a list of ${relation} ${limit} ${Number(limit) === 1 ? 'entry' : 'entries'}`;
+  if (origin === 'string') return `a text of ${relation} ${limit} ${Number(limit) === 1 ? 'character' : 'characters'}`;
   return `a number ${relation} ${limit}`;
 }
 

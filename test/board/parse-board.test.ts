@@ -97,7 +97,7 @@ describe('parseBoardFile', () => {
     board.nets = Array.from({ length: 8 }, () => ({ name: '' }));
     const lines = appFailure(() => parseBoardFile(board)).message.split('\n');
     expect(lines).toHaveLength(6);
-    expect(lines[0]).toBe('nets[0].name must be a text of at least 1 characters; received ""');
+    expect(lines[0]).toBe('nets[0].name must be a text of at least 1 character; received ""');
     expect(lines[5]).toBe('… and 3 more');
   });
 

@@ -32,9 +32,9 @@ names of the list):
       { "net": "DATA*", "waveform": "bus", "sourceOhm": 25 }],
     "loads": [
       { "net": "*", "capacitancePf": 5 }] }
-In net names * stands for any characters; it passes over nets with a plane, nets
-named in full and, for loads, nets that nothing drives. A pin that is left out is
-chosen and reported.
+In net names * stands for any characters; it passes over nets with a plane,
+nets named in full and, for loads, nets that nothing drives. A pin that is left
+out is chosen and reported.
 
 Examples:
   quietboard nets layout.xml
