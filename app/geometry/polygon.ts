@@ -31,15 +31,6 @@ export function ringAreaM2(ringM: RingM): number {
   return sum / 2;
 }
 
-/** Distance from a point to the straight piece between two points, m. */
-export function distanceToPieceM([px, py]: PointM, [ax, ay]: PointM, [bx, by]: PointM): number {
-  const dx = bx - ax;
-  const dy = by - ay;
-  const length2 = dx * dx + dy * dy;
-  const t = length2 === 0 ? 0 : Math.min(1, Math.max(0, ((px - ax) * dx + (py - ay) * dy) / length2));
-  return Math.hypot(px - ax - t * dx, py - ay - t * dy);
-}
-
 /** A stretch of a straight piece, as fractions of its length. */
 export interface Stretch {
   readonly from: number;

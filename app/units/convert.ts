@@ -13,12 +13,8 @@ export const radToDeg = (angleRad: number): number => (angleRad * 180) / Math.PI
 
 /** Decibels of an amplitude ratio: 20·log10(ratio). */
 export const amplitudeToDb = (ratio: number): number => 20 * Math.log10(ratio);
-/** Amplitude ratio of decibels. */
-export const dbToAmplitude = (ratioDb: number): number => 10 ** (ratioDb / 20);
 
 /** Level of a field given as rms value: 20·log10(E / 1 µV/m), dBµV/m. Zero gives −Infinity. */
 export const rmsFieldToDbuvPerM = (fieldRmsVPerM: number): number => 20 * Math.log10(fieldRmsVPerM / 1e-6);
 /** Level of a field phasor's peak magnitude: the receiver reads rms, so 3.01 dB less. dBµV/m. */
 export const peakFieldToDbuvPerM = (fieldPeakVPerM: number): number => rmsFieldToDbuvPerM(fieldPeakVPerM / Math.SQRT2);
-/** Rms field of a level, V/m. */
-export const dbuvPerMToRmsField = (levelDbuvPerM: number): number => 1e-6 * 10 ** (levelDbuvPerM / 20);

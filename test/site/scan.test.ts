@@ -2,8 +2,8 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { ElementCollector, type Radiator } from '../../app/fields/element-set.ts';
 import { boxOf } from '../../app/site/moment-grid.ts';
-import { type Component } from '../../app/site/power-map.ts';
-import { fieldAtAntenna, scanMaxima, type ScanRequest } from '../../app/site/scan.ts';
+import type { Component } from '../../app/site/power-map.ts';
+import { fieldAtAntenna, type ScanRequest, scanMaxima } from '../../app/site/scan.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../../app/units/constants.ts';
 
 /** Trace-like pairs (current and its opposite 0.2–1.6 mm below), pins and a few unpaired pieces, from a seed. */
