@@ -1,10 +1,13 @@
 import { parentPort, workerData } from 'node:worker_threads';
 import { AppError } from '../../app/errors.ts';
-import { estimate } from '../../app/estimate/estimate.ts';
+import { solveShare } from '../../app/estimate/estimate.ts';
+import type { EstimateRequest } from '../../app/estimate/estimate-request.ts';
+import { finishEstimate } from '../../app/estimate/finish.ts';
+import { planEstimate } from '../../app/estimate/plan.ts';
 import { runFieldJob } from '../../app/fields/run-field-job.ts';
 import { chooseLimits } from '../../app/limits/choose.ts';
 import { allChecks } from '../../app/validate/all-checks.ts';
-import type { Job, JobMessage } from './job.ts';
+import type { EstimateJob, Job, JobMessage } from './job.ts';
 
 /** Entry of the worker thread: one job, then the thread ends. */
 
@@ -20,11 +23,19 @@ function onProgress(done: number, total: number): void {
   say({ kind: 'progress', done, total });
 }
 
+const requestOf = ({ request, limits, catalogue }: EstimateJob): EstimateRequest => ({
+  ...request,
+  limits: chooseLimits(limits, catalogue),
+});
+
 function run(job: Job) {
   switch (job.name) {
-    case 'estimate': {
-      const { board, request, limits, catalogue } = job.input;
-      return estimate(board, { ...request, limits: chooseLimits(limits, catalogue) }, { onProgress });
+    case 'estimate share':
+      return solveShare(planEstimate(job.input.board, requestOf(job.input)), job.input.share, { onProgress });
+    case 'estimate finish': {
+      const { board, levels } = job.input;
+      const request = requestOf(job.input);
+      return finishEstimate(board, request, planEstimate(board, request), levels);
     }
     case 'field':
       return runFieldJob(job.input);

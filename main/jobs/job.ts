@@ -1,6 +1,8 @@
 import type { Board } from '../../app/board/board.ts';
 import type { ErrorCode } from '../../app/errors.ts';
+import type { WorkShare } from '../../app/estimate/estimate.ts';
 import type { EstimateRequest } from '../../app/estimate/estimate-request.ts';
+import type { LineLevel } from '../../app/estimate/line-level.ts';
 import type { EstimateResult } from '../../app/estimate/result.ts';
 import type { FieldJob, FieldResult } from '../../app/fields/field-job.ts';
 import type { LimitRequest } from '../../app/limits/choose.ts';
@@ -18,7 +20,8 @@ export interface EstimateJob {
 
 /** Long computations that run beside the host's own thread, so that it can be stopped at any moment. */
 export interface JobTypes {
-  estimate: { input: EstimateJob; output: EstimateResult };
+  'estimate share': { input: EstimateJob & { readonly share: WorkShare }; output: (LineLevel | null)[] };
+  'estimate finish': { input: EstimateJob & { readonly levels: readonly LineLevel[] }; output: EstimateResult };
   field: { input: FieldJob; output: FieldResult };
   validate: { input: null; output: Check[] };
 }

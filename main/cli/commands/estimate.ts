@@ -8,7 +8,7 @@ import { textReport } from '../../../app/report/text-report.ts';
 import { mhzToHz } from '../../../app/units/convert.ts';
 import { jsonText } from '../../files/json-text.ts';
 import { loadBoard } from '../../files/load-board.ts';
-import { runJob } from '../../jobs/run-job.ts';
+import { runEstimate } from '../../jobs/run-estimate.ts';
 import { ESTIMATE_HELP } from '../estimate-help.ts';
 import { EXIT_DONE, EXIT_SHORT } from '../exit.ts';
 import { addLaterOptions, refuseLaterOptions } from '../later.ts';
@@ -76,11 +76,11 @@ export function addEstimate(program: Command): void {
   addLaterOptions(command, LATER);
   command.action(async (file: string, options: EstimateOptions) => {
     refuseLaterOptions(command, LATER);
-    process.exitCode = await runEstimate(file, options);
+    process.exitCode = await estimateFile(file, options);
   });
 }
 
-async function runEstimate(file: string, options: EstimateOptions): Promise<number> {
+async function estimateFile(file: string, options: EstimateOptions): Promise<number> {
   const { json, csv, html } = options;
   const inputs = [file, options.sources, options.limitFile];
   await checkOutputs({ '--json': json, '--csv': csv, '--html': html }, inputs);
@@ -89,8 +89,7 @@ async function runEstimate(file: string, options: EstimateOptions): Promise<numb
   const loaded = await loadBoard(file, options.sources);
   const structure = chooseStructure(options.structure, loaded.file.structure?.planes);
   const progress = progressLine('Frequency');
-  const result = await runJob(
-    'estimate',
+  const result = await runEstimate(
     {
       board: loaded.board,
       limits,

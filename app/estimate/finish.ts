@@ -1,0 +1,84 @@
+import type { Board } from '../board/board.ts';
+import type { Caveat } from '../errors.ts';
+import { labUncertaintyDb } from '../limits/lab-uncertainty.ts';
+import { CAUTIONS } from '../report/cautions.ts';
+import { TABLE_HEIGHT_M } from '../site/site.ts';
+import { hzToMhz, mhzToHz } from '../units/convert.ts';
+import type { EstimateRequest } from './estimate-request.ts';
+import { type LineLevel, siteAt } from './line-level.ts';
+import { modelCaveats } from './model-caveats.ts';
+import type { EstimatePlan, JudgedRange } from './plan.ts';
+import { judge } from './points.ts';
+import type { EstimateResult, ResultPoint, Verdict } from './result.ts';
+
+/** Reads the levels of all lines (in order of frequency), judges them and says what goes with them. */
+export function finishEstimate(
+  board: Board,
+  request: EstimateRequest,
+  { range, scene }: EstimatePlan,
+  levels: readonly LineLevel[],
+): EstimateResult {
+  const { limits, site } = request;
+  const { points, sharedHz } = judge(levels, limits);
+  const findings = [...scene.nets.values()].flatMap((model) => model.findings);
+  const worst = points[0];
+  const uncertaintyDb = labUncertaintyDb(
+    worst?.frequencyHz ?? range.fromHz,
+    worst ? siteAt(scene, worst.frequencyHz) : site.kind,
+  );
+  const verdict = verdictOf(worst, request.requiredMarginDb, uncertaintyDb);
+  const caveats = modelCaveats(scene, request, range.fromHz, range.toHz, findings, sharedHz);
+  if (worst && worst.marginDb >= 0 && worst.marginDb < uncertaintyDb) caveats.push(uncertaintyCaveat(uncertaintyDb));
+  if (!worst) caveats.push(noLineCaveat(range));
+  return {
+    format: 'quietboard-result',
+    version: 1,
+    board: { name: board.name, revision: board.revision, sha256: request.boardSha256 },
+    program: { version: request.programVersion },
+    site: { ...site, tableHeightM: TABLE_HEIGHT_M, boundaryRadiusM: scene.boundaryRadiusM },
+    limit: {
+      standard: limits.standard,
+      class: limits.class,
+      distanceM: limits.distanceM,
+      requiredMarginDb: request.requiredMarginDb,
+      edition: limits.edition,
+      source: limits.source,
+      sourceStatus: limits.sourceStatus,
+      maxHz: range.toHz,
+      maxRule: range.rule,
+      ...(limits.conversion !== undefined && { conversion: limits.conversion }),
+      labUncertaintyDb: uncertaintyDb,
+    },
+    structure: request.structure,
+    points,
+    worst: worst ? { frequencyHz: worst.frequencyHz, marginDb: worst.marginDb } : null,
+    verdict,
+    caveats,
+    findings,
+    notes: request.notes,
+    cautions: CAUTIONS,
+  };
+}
+
+function verdictOf(worst: ResultPoint | undefined, requiredMarginDb: number, uncertaintyDb: number): Verdict {
+  if (!worst) return 'meets';
+  if (worst.marginDb < 0) return 'exceeds';
+  if (worst.marginDb < requiredMarginDb) return 'falls-short';
+  return worst.marginDb < uncertaintyDb ? 'within-uncertainty' : 'meets';
+}
+
+const uncertaintyCaveat = (uncertaintyDb: number): Caveat => ({
+  code: 'within-uncertainty',
+  message: `the worst margin is smaller than a laboratory's expanded uncertainty of ${uncertaintyDb.toFixed(1)} dB (CISPR 16-4-2)`,
+  where: '',
+  fromHz: 0,
+  toHz: 0,
+});
+
+const noLineCaveat = ({ fromHz, toHz }: JudgedRange): Caveat => ({
+  code: 'no-line-in-range',
+  message: `no source has a spectral line between ${hzToMhz(fromHz)} and ${hzToMhz(toHz)} MHz`,
+  where: '',
+  fromHz: Math.min(fromHz, mhzToHz(30)),
+  toHz,
+});

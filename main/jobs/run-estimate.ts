@@ -1,0 +1,39 @@
+import { availableParallelism } from 'node:os';
+import { mergeShares } from '../../app/estimate/estimate.ts';
+import type { EstimateResult } from '../../app/estimate/result.ts';
+import type { EstimateJob } from './job.ts';
+import { runJob } from './run-job.ts';
+
+/** More threads than this do not pay: each one models the board anew. */
+const MOST_THREADS = 8;
+
+/** Runs an estimate on all cores: every thread takes its share of the frequencies; progress is that of the slowest. */
+export async function runEstimate(
+  job: EstimateJob,
+  onProgress?: (done: number, total: number) => void,
+): Promise<EstimateResult> {
+  const of = Math.min(MOST_THREADS, availableParallelism());
+  const done = new Array<number>(of).fill(0);
+  const totals = new Array<number>(of).fill(0);
+  const sum = (values: readonly number[]) => values.reduce((a, b) => a + b, 0);
+  const stop = new AbortController();
+  try {
+    const shares = await Promise.all(
+      done.map((_, index) =>
+        runJob(
+          'estimate share',
+          { ...job, share: { index, of } },
+          (shareDone, shareTotal) => {
+            done[index] = shareDone;
+            totals[index] = shareTotal;
+            onProgress?.(sum(done), Math.max(...totals) * of);
+          },
+          stop.signal,
+        ),
+      ),
+    );
+    return await runJob('estimate finish', { ...job, levels: mergeShares(shares) });
+  } finally {
+    stop.abort();
+  }
+}
