@@ -12,20 +12,18 @@ export interface ScanMaximum {
 /** Grid maxima within this factor of the best are refined (0.5 dB: far more than a grid step can hide). */
 const REFINE_FACTOR = 10 ** -0.05;
 const MAX_CANDIDATES = 12;
-/** The refinement ends at this fraction of a grid step. */
-const FINEST_STEP = 1 / 512;
 
 /**
- * Maximum of a power map over all angles and the antenna's travel: a grid of at least eight samples an angular period
- * and 16 a wavelength in height (never coarser than 5° and 10 cm), then every grid maximum near the best is refined to
- * below 0.01° and 0.2 mm on the exact interpolant. Ties go to the lower height, then to the smaller angle.
+ * Maximum of a power map over all angles and the antenna's travel: a grid of at least six samples an angular period
+ * and 16 a wavelength in height (never coarser than 5° and 10 cm), then every grid maximum near the best is refined on the
+ * exact interpolant. Ties go to the lower height, then to the smaller angle.
  */
 export function findMaximum(map: PowerMap): ScanMaximum {
   const { order, plan } = map;
   const nodeCount = 2 * order + 1;
-  const angleCount = Math.max(72, 8 * order);
+  const angleCount = Math.max(72, 6 * order);
   const wavelengthM = (2 * Math.PI) / plan.kPerM;
-  const stepM = Math.min(0.1, wavelengthM / 16, 1 / map.heightsM.length);
+  const stepM = Math.min(0.1, wavelengthM / 16);
   const heightCount = Math.ceil((ANTENNA_HIGHEST_M - ANTENNA_LOWEST_M) / stepM) + 1;
   const stepHeightM = (ANTENNA_HIGHEST_M - ANTENNA_LOWEST_M) / (heightCount - 1);
   const stepAngleRad = (2 * Math.PI) / angleCount;
@@ -82,43 +80,62 @@ function candidates(grid: Float64Array, heightCount: number, angleCount: number)
     .sort((one, other) => one - other);
 }
 
-/** Climbs by a compass search whose steps halve (T. G. Kolda et al., SIAM Review 45(3), 2003). */
-function refine(
-  map: PowerMap,
-  angleRad: number,
-  heightM: number,
-  stepAngleRad: number,
-  stepHeightM: number,
-): ScanMaximum {
-  let angle = angleRad;
-  let height = heightM;
+/** Golden-section steps a search takes: the interval shrinks to 0.618²⁴ = 1e-5 of two grid steps. */
+const GOLDEN_STEPS = 24;
+/** Rounds of angle and height in turn; ends earlier when a round gains nothing. */
+const MOST_ROUNDS = 12;
+const GAIN = 1e-7;
+
+/** Climbs along the angle and the height in turn, each by golden section around the present place. */
+function refine(map: PowerMap, startRad: number, startM: number, stepRad: number, stepM: number): ScanMaximum {
+  let angle = startRad;
+  let height = startM;
   let power = map.powerAt(angle, height);
-  for (let step = 0.5; step >= FINEST_STEP; ) {
-    let isBetter = false;
-    for (const [da, dh] of DIRECTIONS) {
-      const nextAngle = angle + da * step * stepAngleRad;
-      const nextHeight = Math.min(ANTENNA_HIGHEST_M, Math.max(ANTENNA_LOWEST_M, height + dh * step * stepHeightM));
-      const next = map.powerAt(nextAngle, nextHeight);
-      if (next > power * (1 + 1e-13)) {
-        power = next;
-        angle = nextAngle;
-        height = nextHeight;
-        isBetter = true;
-        break;
-      }
-    }
-    if (!isBetter) step /= 2;
+  for (let round = 0; round < MOST_ROUNDS; round++) {
+    const before = power;
+    const byAngle = highest(map.alongAngle(height), angle - stepRad, angle + stepRad);
+    if (byAngle.value > power) [angle, power] = [byAngle.at, byAngle.value];
+    const low = Math.max(ANTENNA_LOWEST_M, height - stepM);
+    const high = Math.min(ANTENNA_HIGHEST_M, height + stepM);
+    const byHeight = highest(map.alongHeight(angle), low, high);
+    if (byHeight.value > power) [height, power] = [byHeight.at, byHeight.value];
+    if (power <= before * (1 + GAIN)) break;
   }
   const turn = 2 * Math.PI;
   return { power, angleRad: ((angle % turn) + turn) % turn, heightM: height };
 }
 
-const DIRECTIONS = [
-  [1, 0],
-  [-1, 0],
-  [0, 1],
-  [0, -1],
-] as const;
+/** Largest value on an interval with one maximum: golden section, both ends included. */
+function highest(value: (at: number) => number, low: number, high: number): { at: number; value: number } {
+  const ratio = (Math.sqrt(5) - 1) / 2;
+  let from = low;
+  let to = high;
+  let left = to - ratio * (to - from);
+  let right = from + ratio * (to - from);
+  let atLeft = value(left);
+  let atRight = value(right);
+  for (let step = 0; step < GOLDEN_STEPS; step++) {
+    if (atLeft >= atRight) {
+      to = right;
+      right = left;
+      atRight = atLeft;
+      left = to - ratio * (to - from);
+      atLeft = value(left);
+    } else {
+      from = left;
+      left = right;
+      atLeft = atRight;
+      right = from + ratio * (to - from);
+      atRight = value(right);
+    }
+  }
+  let best = { at: left, value: atLeft };
+  for (const at of [right, low, high]) {
+    const here = value(at);
+    if (here > best.value) best = { at, value: here };
+  }
+  return best;
+}
 
 const angleTables = new Map<string, Float64Array>();
 

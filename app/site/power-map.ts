@@ -87,6 +87,11 @@ export class PowerMap {
 
   /** Power (peak phasor squared, V²/m²) at one height on the fine angles, given the height's weights. */
   rowAt(heightM: number, heightWeights: Float64Array, offset: number, out: Float64Array): void {
+    this.#combine(this.#sums, heightM, heightWeights, offset, out);
+  }
+
+  /** Direct, mirrored and cross sums at one height put together, for each angle in `sums`. */
+  #combine(sums: Float64Array, heightM: number, heightWeights: Float64Array, offset: number, out: Float64Array): void {
     const { plan } = this;
     const directM = centreDistanceM(plan, heightM);
     const mirroredM = centreDistanceM(plan, -heightM);
@@ -105,26 +110,51 @@ export class PowerMap {
       for (let h = 0; h < count; h++) {
         const weight = heightWeights[offset + h]!;
         const at = 4 * (a * count + h);
-        direct += weight * this.#sums[at]!;
-        mirrored += weight * this.#sums[at + 1]!;
-        re += weight * this.#sums[at + 2]!;
-        im += weight * this.#sums[at + 3]!;
+        direct += weight * sums[at]!;
+        mirrored += weight * sums[at + 1]!;
+        re += weight * sums[at + 2]!;
+        im += weight * sums[at + 3]!;
       }
       out[a] = direct * first + (plan.partCount === 2 ? mirrored * second + re * crossRe + im * crossIm : 0);
     }
   }
 
-  /** Power at any angle and height, V²/m² (peak phasor squared). */
-  powerAt(angleRad: number, heightM: number): number {
+  /** Power as a function of the angle at one height, V²/m² (peak phasor squared). */
+  alongAngle(heightM: number): (angleRad: number) => number {
     const heightWeights = new Float64Array(this.heightsM.length);
     chebyshevWeights(this.heightsM, heightM, heightWeights);
     const row = new Float64Array(2 * this.order + 1);
     this.rowAt(heightM, heightWeights, 0, row);
     const angleWeights = new Float64Array(row.length);
+    return (angleRad) => {
+      trigonometricWeights(this.order, angleRad, angleWeights);
+      let power = 0;
+      for (let a = 0; a < row.length; a++) power += angleWeights[a]! * row[a]!;
+      return power;
+    };
+  }
+
+  /** Power as a function of the height at one angle, V²/m² (peak phasor squared). */
+  alongHeight(angleRad: number): (heightM: number) => number {
+    const angleWeights = new Float64Array(2 * this.order + 1);
     trigonometricWeights(this.order, angleRad, angleWeights);
-    let power = 0;
-    for (let a = 0; a < row.length; a++) power += angleWeights[a]! * row[a]!;
-    return power;
+    const count = this.heightsM.length;
+    const column = new Float64Array(4 * count);
+    for (let a = 0; a < angleWeights.length; a++) {
+      for (let i = 0; i < 4 * count; i++) column[i]! += angleWeights[a]! * this.#sums[4 * a * count + i]!;
+    }
+    const heightWeights = new Float64Array(count);
+    return (heightM) => {
+      chebyshevWeights(this.heightsM, heightM, heightWeights);
+      const power = new Float64Array(1);
+      this.#combine(column, heightM, heightWeights, 0, power);
+      return power[0]!;
+    };
+  }
+
+  /** Power at any angle and height, V²/m² (peak phasor squared). */
+  powerAt(angleRad: number, heightM: number): number {
+    return this.alongAngle(heightM)(angleRad);
   }
 }
 
