@@ -7,17 +7,31 @@ import { microstripAirImpedanceOhm, microstripEpsilonEff } from './microstrip.ts
 import { striplineAirImpedanceOhm } from './stripline.ts';
 import { validityCaveats } from './validity.ts';
 
+/** Lines kept; boards have tens of different sections, and thousands of segments that share them. */
+const MOST_KEPT = 500;
+const kept = new Map<string, Line>();
+
 /**
  * Line of a cross-section, quasi-static (no dispersion):
  *
  *   Z0 = Z_air/√ε_eff,   α = R(f)/(2 Z0) + (π f/c) √ε_eff tan δ_line
  *
  * The conductor's internal inductance is left out. Caveats carry what is outside the formulas' range; the range in
- * frequency is `lineNotTemCaveat`. Costs up to some milliseconds (covered and coplanar sections): keep the result.
+ * frequency is `lineNotTemCaveat`. A new section costs up to a millisecond (covered, coplanar); results are kept.
  * Throws `input` when a dimension or a material is impossible.
  * Source: named in microstrip.ts, stripline.ts, coplanar-strips.ts, conductor-loss.ts, dielectric.ts.
  */
 export function lineOf(section: CrossSection): Line {
+  const key = JSON.stringify(section);
+  const known = kept.get(key);
+  if (known) return known;
+  const line = newLine(section);
+  if (kept.size >= MOST_KEPT) kept.clear();
+  kept.set(key, line);
+  return line;
+}
+
+function newLine(section: CrossSection): Line {
   checkSection(section);
   const epsilonEff = epsilonEffOf(section);
   const z0Ohm = airImpedanceOhm(section) / Math.sqrt(epsilonEff);

@@ -177,3 +177,19 @@ describe('edge-coupled pair', () => {
     expect(() => edgeCoupledPair({ ...section, epsilonR: 0 })).toThrow('section.epsilonR');
   });
 });
+
+describe('lines that were asked for before', () => {
+  it('are kept, and never mixed up: not even where a NaN or an infinity reads like nothing', () => {
+    expect(lineOf({ ...microstrip })).toBe(lineOf(microstrip));
+    expect(lineOf({ ...microstrip, thicknessM: 1e-6 })).not.toBe(lineOf(microstrip));
+    expect(() => lineOf({ ...microstrip, widthM: Number.NaN })).toThrow('section.widthM');
+    expect(() => lineOf({ ...microstrip, widthM: Number.NaN })).toThrow('section.widthM');
+  });
+
+  it('thousands of different ones do not pile up wrongly', () => {
+    const widths = Array.from({ length: 1200 }, (_, i) => 1e-4 + i * 1e-7);
+    const first = widths.map((widthM) => lineOf({ ...microstrip, widthM }).z0Ohm);
+    for (const [i, widthM] of widths.entries()) expect(lineOf({ ...microstrip, widthM }).z0Ohm).toBe(first[i]);
+    for (let i = 1; i < first.length; i++) expect(first[i]).toBeLessThan(first[i - 1]!);
+  });
+});
