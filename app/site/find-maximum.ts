@@ -9,21 +9,21 @@ export interface ScanMaximum {
   readonly heightM: number;
 }
 
-/** Grid maxima within this factor of the best are refined (0.5 dB: far more than a grid step can hide). */
-const REFINE_FACTOR = 10 ** -0.05;
-const MAX_CANDIDATES = 12;
+/** Grid maxima within this factor of the best are refined: 1 dB is what half a grid step can hide at five samples a period. */
+const REFINE_FACTOR = 10 ** -0.1;
+const MAX_CANDIDATES = 16;
 
 /**
- * Maximum of a power map over all angles and the antenna's travel: a grid of at least six samples an angular period
- * and 16 a wavelength in height (never coarser than 5° and 10 cm), then every grid maximum near the best is refined on the
+ * Maximum of a power map over all angles and the antenna's travel: a grid of about five samples a period of what the
+ * power really holds (its order has a margin) and eight a wavelength in height, then every grid maximum near the best is refined on the
  * exact interpolant. Ties go to the lower height, then to the smaller angle.
  */
 export function findMaximum(map: PowerMap): ScanMaximum {
   const { order, plan } = map;
   const nodeCount = 2 * order + 1;
-  const angleCount = Math.max(72, 6 * order);
+  const angleCount = Math.max(36, 3 * order);
   const wavelengthM = (2 * Math.PI) / plan.kPerM;
-  const stepM = Math.min(0.1, wavelengthM / 16);
+  const stepM = Math.min(0.15, wavelengthM / 8);
   const heightCount = Math.ceil((ANTENNA_HIGHEST_M - ANTENNA_LOWEST_M) / stepM) + 1;
   const stepHeightM = (ANTENNA_HIGHEST_M - ANTENNA_LOWEST_M) / (heightCount - 1);
   const stepAngleRad = (2 * Math.PI) / angleCount;
