@@ -96,7 +96,7 @@ describe('traces of one layer', () => {
           trace(0, 0.2, [0, 0], [10, 0]),
           trace(0, 0.3, [10, 0], [0, 0]),
           trace(0, 0.25, [6, 0], [14, 0]),
-          trace(0, 0.2, [3, 0], [5, 0]),
+          trace(0, 0.4, [3, 0], [5, 0]),
         ],
       }),
     );
@@ -105,6 +105,7 @@ describe('traces of one layer', () => {
     const widthAt = (xMm: number) =>
       graph.segments.find(({ fromM, toM }) => (fromM[0] - xMm * MM) * (toM[0] - xMm * MM) < 0)!.widthM / MM;
     expectClose(widthAt(1), 0.3, { rel: 1e-12, because: 'the double is wider' });
+    expectClose(widthAt(4), 0.4, { rel: 1e-12, because: 'the widest there' });
     expectClose(widthAt(12), 0.25, { rel: 1e-12, because: 'alone there' });
   });
 
@@ -278,6 +279,31 @@ describe('pins', () => {
     );
     expect(graph.pinNodes.get('U1.1')).not.toBe(graph.pinNodes.get('U1.2'));
     expect(loopsOf(graph)).toBe(0);
+  });
+
+  it('leave a trace that lies wholly in their reach its length', () => {
+    const graph = buildNetGraph(netOf({ traces: [trace(0, 0.1, [0.2, 0], [0.55, 0])], pins: [pin('A', 0, 0)] }));
+    expect(graph.segments.length).toBe(1);
+    expectClose(lengthMm(graph), 0.35, { rel: 1e-9, because: 'as drawn' });
+    expectClose(graph.pinOffsetsM.get('A')!, 0.2 * MM, { rel: 1e-9, because: 'its nearer end' });
+  });
+
+  it('a pad of several ends over a via of several ends: no segment without length is left between', () => {
+    const graph = buildNetGraph(
+      netOf({
+        traces: [
+          trace(0, 0.1, [0.1, 0], [0.3, 0]),
+          trace(0, 0.1, [-0.1, 0], [-6, 0]),
+          trace(0, 0.1, [0, 0.4], [0, 6]),
+          trace(4, 0.1, [0, 0], [0, -6]),
+        ],
+        vias: [via(0, 0, 0, 4)],
+        pins: [pin('A', 0, 0)],
+      }),
+    );
+    expect(isConnected(graph)).toBe(true);
+    expect(graph.segments.length).toBe(3);
+    for (const { lengthM } of graph.segments) expect(lengthM).toBeGreaterThan(5 * MM);
   });
 
   it('on a via without a trace of their layer hang on the barrel', () => {
