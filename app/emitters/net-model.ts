@@ -6,10 +6,11 @@ import { buildNetGraph, type GraphSegment, type NetGraph } from '../network/net-
 import type { Network } from '../network/network.ts';
 import { viaInductanceH } from '../network/via.ts';
 import type { SegmentReference } from '../returns/reference.ts';
+import { NetCoupling } from '../structure/couplings.ts';
 import { gapFindings } from './gap-findings.ts';
 import { addNamedReturn, type TerminalEnd } from './named-return.ts';
 import type { NetContext, Terminals } from './net-context.ts';
-import { addPairElements, type PlacedSection } from './pair-elements.ts';
+import { addPairElements, type PlacedSection, pairEpsilonR } from './pair-elements.ts';
 import { addPlaces } from './places.ts';
 import { RuleCollector, type RuledElements } from './rule-collector.ts';
 import { crossSectionOver, lineWithOverrides, statedLine } from './trace-line.ts';
@@ -23,6 +24,8 @@ export interface NetModel {
   /** In the order of `network.sections`. */
   readonly sections: readonly { readonly lengthM: number; readonly z0Ohm: number }[];
   readonly pair: RuledElements;
+  /** How the net drives planes and cables; null when they are not solved, or its return is a named path. */
+  readonly coupling: NetCoupling | null;
   readonly findings: readonly Finding[];
   readonly caveats: readonly Caveat[];
 }
@@ -52,6 +55,7 @@ export function buildNetModel(context: NetContext, net: Net): NetModel {
       drives,
       sections: [...named.sections, ...named.ends],
       pair: collector.finish(),
+      coupling: null,
       findings: [],
       caveats: lineCaveats(net.name, named.lines),
     };
@@ -73,7 +77,16 @@ export function buildNetModel(context: NetContext, net: Net): NetModel {
       planes,
     };
   });
-  for (const section of sections) addPairElements(collector, section, context.maxHz);
+  const coupling = context.structure
+    ? new NetCoupling(
+        context.structure,
+        sections.map((section) => ({ ...section, epsilonR: pairEpsilonR(section) })),
+        `net ${net.name}`,
+      )
+    : null;
+  for (const section of sections) {
+    addPairElements(collector, section, context.maxHz, coupling?.gapsBySection.get(section.index));
+  }
   const placeFindings = addPlaces(collector, context, net, graph, sections, terminals.nodes);
   return {
     name: net.name,
@@ -81,6 +94,7 @@ export function buildNetModel(context: NetContext, net: Net): NetModel {
     drives,
     sections,
     pair: collector.finish(),
+    coupling,
     findings: [...gapFindings(board, context.planes, net, graph, references, served), ...placeFindings],
     caveats: lineCaveats(net.name, lines),
   };

@@ -25,39 +25,76 @@ export function pointsFor(lengthM: number, epsilonEff: number, maxHz: number): n
   return quadraturePoints(lengthM, kPerM * Math.sqrt(epsilonEff), kPerM, NEAREST_ANTENNA_M);
 }
 
+/** Permittivity between trace and (nearest) plane, which shields the trace's charge. */
+export const pairEpsilonR = ({ planes }: PlacedSection): number =>
+  planes[0] ? effectiveDielectric(planes[0].rows).epsilonR : 1;
+
+/** A stretch of a section, m from its node A. */
+export interface ReturnGapM {
+  readonly fromM: number;
+  readonly toM: number;
+}
+
 /**
  * Trace and return of one section as current elements (physics 5.1, 5.3, 5.7): for each reference plane the share of the
  * current on the trace's facing surface, its opposite on the plane's facing surface straight under it, and the
  * dielectric's polarisation current jω C' (1 − 1/ε_r) V ds from trace to plane, C' = √ε_eff/(Z0 c).
+ * `gaps`: stretches without a return filament, where the solved plane carries the return itself (physics 11).
  */
-export function addPairElements(collector: RuleCollector, section: PlacedSection, maxHz: number): void {
-  const { fromM, toM, lengthM } = section;
-  const dx = toM[0] - fromM[0];
-  const dy = toM[1] - fromM[1];
-  const rule = gaussLegendre(pointsFor(lengthM, section.epsilonEff, maxHz));
+export function addPairElements(
+  collector: RuleCollector,
+  section: PlacedSection,
+  maxHz: number,
+  gaps: readonly ReturnGapM[] = [],
+): void {
+  const { lengthM } = section;
   const capacitanceFPerM = Math.sqrt(section.epsilonEff) / (section.z0Ohm * SPEED_OF_LIGHT_M_PER_S);
   for (const plane of section.planes) {
-    const { epsilonR } = effectiveDielectric(plane.rows);
-    const boundShare = plane.share * capacitanceFPerM * (1 - 1 / epsilonR);
-    for (let i = 0; i < rule.nodes.length; i++) {
-      const s = rule.nodes[i]!;
-      const weight = rule.weights[i]!;
-      const atM = s * lengthM;
-      const x = fromM[0] + s * dx;
-      const y = fromM[1] + s * dy;
-      const along: Point3M = [weight * dx, weight * dy, 0];
-      const current = { kind: 'along', section: section.index, atM } as const;
-      collector.add([x, y, plane.traceZM], along, { ...current, factor: plane.share });
-      collector.add([x, y, plane.planeZM], along, { ...current, factor: -plane.share });
-      if (boundShare !== 0) {
-        const middle: Point3M = [x, y, (plane.traceZM + plane.planeZM) / 2];
-        collector.add(middle, [0, 0, weight * lengthM * (plane.planeZM - plane.traceZM)], {
-          kind: 'shunt',
-          section: section.index,
-          atM,
-          factor: boundShare,
-        });
+    const bound = plane.share * capacitanceFPerM * (1 - 1 / effectiveDielectric(plane.rows).epsilonR);
+    let atM = 0;
+    for (const gap of [...gaps].sort((one, other) => one.fromM - other.fromM)) {
+      if (gap.fromM > atM) addStretch(collector, section, plane, atM, gap.fromM, true, bound, maxHz);
+      if (gap.toM > Math.max(atM, gap.fromM)) {
+        addStretch(collector, section, plane, Math.max(atM, gap.fromM), gap.toM, false, 0, maxHz);
       }
+      atM = Math.max(atM, gap.toM);
+    }
+    if (lengthM > atM) addStretch(collector, section, plane, atM, lengthM, true, bound, maxHz);
+  }
+}
+
+function addStretch(
+  collector: RuleCollector,
+  section: PlacedSection,
+  plane: ReferencePlane,
+  startM: number,
+  endM: number,
+  hasReturn: boolean,
+  boundFPerM: number,
+  maxHz: number,
+): void {
+  const { fromM, toM, lengthM } = section;
+  const part = (endM - startM) / lengthM;
+  const dx = (toM[0] - fromM[0]) * part;
+  const dy = (toM[1] - fromM[1]) * part;
+  const rule = gaussLegendre(pointsFor(endM - startM, section.epsilonEff, maxHz));
+  for (let i = 0; i < rule.nodes.length; i++) {
+    const weight = rule.weights[i]!;
+    const atM = startM + rule.nodes[i]! * (endM - startM);
+    const x = fromM[0] + (atM / lengthM) * (toM[0] - fromM[0]);
+    const y = fromM[1] + (atM / lengthM) * (toM[1] - fromM[1]);
+    const along: Point3M = [weight * dx, weight * dy, 0];
+    const current = { kind: 'along', section: section.index, atM } as const;
+    collector.add([x, y, plane.traceZM], along, { ...current, factor: plane.share });
+    if (hasReturn) collector.add([x, y, plane.planeZM], along, { ...current, factor: -plane.share });
+    if (boundFPerM !== 0) {
+      const middle: Point3M = [x, y, (plane.traceZM + plane.planeZM) / 2];
+      collector.add(middle, [0, 0, weight * (endM - startM) * (plane.planeZM - plane.traceZM)], {
+        kind: 'shunt',
+        section: section.index,
+        atM,
+        factor: boundFPerM,
+      });
     }
   }
 }

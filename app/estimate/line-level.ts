@@ -7,6 +7,7 @@ import { type RadiatingPart, radiatingParts } from './radiating-parts.ts';
 import type { Contributor } from './result.ts';
 import type { Scene } from './scene.ts';
 import type { FrequencyLines } from './spectrum-table.ts';
+import type { StructureResponder } from './structure-responder.ts';
 
 /** What the antenna would read at one frequency, and where. Fields are peak phasor magnitudes, V/m. */
 export interface LineLevel {
@@ -29,8 +30,8 @@ export const siteAt = (scene: Scene, frequencyHz: number): SiteKind =>
   frequencyHz > GROUND_SITE_MAX_HZ ? 'free-space' : scene.site.kind;
 
 /** Level of one frequency: maximum over height, angle and polarisation; null when nothing radiates there. */
-export function lineLevel(scene: Scene, lines: FrequencyLines): LineLevel | null {
-  const parts = radiatingParts(scene, lines);
+export function lineLevel(scene: Scene, lines: FrequencyLines, responder: StructureResponder | null): LineLevel | null {
+  const parts = radiatingParts(scene, lines, responder);
   if (parts.length === 0) return null;
   const request: ScanRequest = {
     kPerM: (2 * Math.PI * lines.frequencyHz) / SPEED_OF_LIGHT_M_PER_S,

@@ -18,7 +18,7 @@ export interface EstimatePlan {
 export function planEstimate(board: Board, request: EstimateRequest): EstimatePlan {
   requireSources(board);
   const range = judgedRange(board, request);
-  const scene = buildScene(board, request.site, range.toHz);
+  const scene = buildScene(board, request.site, range.toHz, request.structure);
   const extraHz = scene.cables.flatMap(({ table }) => table.map(({ frequencyHz }) => frequencyHz));
   return { range, scene, table: spectrumTable(board, range.fromHz, range.toHz, extraHz) };
 }

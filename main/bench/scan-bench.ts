@@ -23,9 +23,9 @@ export function scanBench(): BenchResult {
   );
   const started = performance.now();
   const site = { kind: 'ground-plane', distanceM: 3, measuredFrom: 'boundary', orientation: 'flat' } as const;
-  const scene = buildScene(board, site, 1e9);
+  const scene = buildScene(board, site, 1e9, 'pair-only');
   const table = spectrumTable(board, 20e6, 1e9, []);
-  const levels = table.map((lines) => lineLevel(scene, lines)!);
+  const levels = table.map((lines) => lineLevel(scene, lines, null)!);
   const seconds = (performance.now() - started) / 1000;
   const peakMb = process.resourceUsage().maxRSS / 1024;
 
@@ -36,7 +36,7 @@ export function scanBench(): BenchResult {
   let worstDb = 0;
   let evaluations = 0;
   for (const [i, lines] of table.entries()) {
-    const parts = radiatingParts(scene, lines);
+    const parts = radiatingParts(scene, lines, null);
     const kPerM = (2 * Math.PI * lines.frequencyHz) / SPEED_OF_LIGHT_M_PER_S;
     const domains = [...new Set(parts.map(({ domain }) => domain))].map((domain) =>
       parts.filter((part) => part.domain === domain).map(({ radiator }) => radiator),

@@ -19,9 +19,9 @@ export const OUTLINE_MM: [number, number][] = [
 /** Scene and radiators of a board driven by `lines` waveforms, at one of their frequencies. */
 export function radiatorsAt(board: Board, frequencyHz: number): { scene: Scene; radiators: Radiator[] } {
   const site = { kind: 'ground-plane', distanceM: 3, measuredFrom: 'boundary', orientation: 'flat' } as const;
-  const scene = buildScene(board, site, Math.max(frequencyHz, 1e9));
+  const scene = buildScene(board, site, Math.max(frequencyHz, 1e9), 'pair-only');
   const lines = spectrumTable(board, frequencyHz * 0.999, frequencyHz * 1.001, [])[0]!;
-  return { scene, radiators: radiatingParts(scene, lines).map(({ radiator }) => radiator) };
+  return { scene, radiators: radiatingParts(scene, lines, null).map(({ radiator }) => radiator) };
 }
 
 /** Σ I·dl and Σ |I·dl| of radiators: [x re, x im, y re, y im, z re, z im], A·m. */

@@ -1,0 +1,130 @@
+import type { CurrentLoop, Point3M, PointM } from '../board/board.ts';
+import type { NetworkResponse } from '../network/network.ts';
+import type { ReferencePlane } from '../returns/reference.ts';
+import type { Filament } from './filament-kernel.ts';
+import type { Incident } from './incident.ts';
+import type { LineWave } from './line-wave.ts';
+import { PairCoupling } from './pair-coupling.ts';
+import { filamentSource, type PairFilament, pairFilaments } from './pair-filaments.ts';
+import type { PairPiece } from './pair-piece.ts';
+import { RegularField } from './regular-field.ts';
+import type { ReturnGap } from './return-gaps.ts';
+import type { StructureModel } from './structure-model.ts';
+
+/** A section of a net as the structure needs it. */
+export interface CoupledSection {
+  readonly fromM: PointM;
+  readonly toM: PointM;
+  readonly planes: readonly ReferencePlane[];
+  /** Permittivity between trace and plane. */
+  readonly epsilonR: number;
+}
+
+/** Filaments that act on wires are cut to this many cells. */
+const FILAMENT_CELLS = 2;
+
+const wireEdges = ({ mesh }: StructureModel): number[] =>
+  Array.from({ length: mesh.edgeCount - mesh.firstWireEdge }, (_, i) => mesh.firstWireEdge + i);
+const wireNodes = ({ mesh }: StructureModel): number[] =>
+  Array.from({ length: mesh.nodeCount - mesh.sheet.cellCount }, (_, i) => mesh.sheet.cellCount + i);
+
+/**
+ * How one net drives the structure: its pairs act on the cells under them (local form) and, as filaments in space, on the
+ * cables. Sections between two planes excite nothing (physics 11).
+ */
+export class NetCoupling {
+  /** Where the return filament of a section is missing and the sheet carries it, by section index, m from its node A. */
+  readonly gapsBySection: ReadonlyMap<number, readonly ReturnGap[]>;
+  readonly #sectionOfPiece: readonly number[];
+  readonly #pieces: readonly PairPiece[];
+  readonly #pair: PairCoupling;
+  readonly #filaments: readonly PairFilament[];
+  readonly #onWires: RegularField | null;
+
+  constructor(model: StructureModel, sections: readonly CoupledSection[], path: string) {
+    const { mesh, lookup } = model;
+    const own = sections.flatMap((section, index) => (section.planes.length === 1 ? [{ section, index }] : []));
+    this.#sectionOfPiece = own.map(({ index }) => index);
+    this.#pieces = own.map(({ section: { fromM, toM, planes, epsilonR } }) => ({
+      fromM,
+      toM,
+      heightM: planes[0]!.heightM,
+      side: planes[0]!.traceZM > planes[0]!.planeZM ? 1 : -1,
+      epsilonR,
+    }));
+    this.#pair = new PairCoupling(lookup, this.#pieces, path);
+    const gaps = new Map<number, ReturnGap[]>();
+    for (const gap of this.#pair.gaps) {
+      const section = this.#sectionOfPiece[gap.piece]!;
+      gaps.set(section, [...(gaps.get(section) ?? []), gap]);
+    }
+    this.gapsBySection = gaps;
+    const longestM = FILAMENT_CELLS * mesh.sheet.grid.cellM;
+    this.#filaments =
+      mesh.wires.length > 0 ? pairFilaments(this.#pieces, this.#pair.gaps, mesh.sheet.zM, longestM) : [];
+    this.#onWires =
+      this.#filaments.length > 0
+        ? new RegularField(
+            mesh,
+            this.#filaments.map(({ filament }) => filament),
+            wireEdges(model),
+            wireNodes(model),
+          )
+        : null;
+  }
+
+  /** Adds what a solved net does to the structure at one frequency. */
+  addTo(incident: Incident, frequencyHz: number, response: NetworkResponse): void {
+    const waves = this.#sectionOfPiece.map((section): LineWave => waveOf(response, section));
+    this.#pair.addTo(incident, frequencyHz, waves);
+    const omega = 2 * Math.PI * frequencyHz;
+    this.#onWires?.addTo(incident, frequencyHz, (index, out) => {
+      const filament = this.#filaments[index]!;
+      filamentSource(filament, this.#pieces[filament.piece]!, waves[filament.piece]!, omega, out);
+    });
+  }
+}
+
+const waveOf = ({ gamma, forward, backward }: NetworkResponse, section: number): LineWave => ({
+  gammaRePerM: gamma[2 * section]!,
+  gammaImPerM: gamma[2 * section + 1]!,
+  forwardReA: forward[2 * section]!,
+  forwardImA: forward[2 * section + 1]!,
+  backwardReA: backward[2 * section]!,
+  backwardImA: backward[2 * section + 1]!,
+});
+
+/** How a stated loop of current drives the structure: by its own field on every edge. */
+export class LoopCoupling {
+  readonly #field: RegularField;
+
+  constructor(model: StructureModel, loop: CurrentLoop) {
+    const { mesh } = model;
+    const edges = Array.from({ length: mesh.edgeCount }, (_, i) => i);
+    this.#field = new RegularField(mesh, loopFilaments(loop.pointsM, mesh.sheet.grid.cellM), edges, []);
+  }
+
+  /** Adds what a current (A, the same all around) does. */
+  addTo(incident: Incident, frequencyHz: number, re: number, im: number): void {
+    this.#field.addTo(incident, frequencyHz, (_, out) => {
+      out[0] = re;
+      out[1] = im;
+      out[2] = 0;
+      out[3] = 0;
+    });
+  }
+}
+
+function loopFilaments(pointsM: readonly Point3M[], longestM: number): Filament[] {
+  return pointsM.flatMap((from, i) => {
+    const to = pointsM[(i + 1) % pointsM.length]!;
+    const lengthM = Math.hypot(to[0] - from[0], to[1] - from[1], to[2] - from[2]);
+    const count = Math.max(1, Math.ceil(lengthM / longestM));
+    const at = (s: number): Point3M => [
+      from[0] + s * (to[0] - from[0]),
+      from[1] + s * (to[1] - from[1]),
+      from[2] + s * (to[2] - from[2]),
+    ];
+    return Array.from({ length: count }, (_, k) => ({ from: at(k / count), to: at((k + 1) / count) }));
+  });
+}

@@ -1,0 +1,253 @@
+import { EPSILON0_F_PER_M, MU0_H_PER_M } from '../units/constants.ts';
+import { type CopperRuns, copperRuns, profileRatio } from './edge-profile.ts';
+import { walkGrid } from './grid-walk.ts';
+import type { Incident } from './incident.ts';
+import { currentAt, currentIntegral, type LineWave } from './line-wave.ts';
+import type { Mesh } from './mesh.ts';
+import { checkPiece, type PairPiece, pieceLengthM } from './pair-piece.ts';
+import { findReturnGaps, type ReturnGap } from './return-gaps.ts';
+import { cellAtIndex, type Sheet } from './sheet.ts';
+
+/** Cells and edges of a sheet as a pair's weights need them. */
+export class SheetLookup {
+  readonly mesh: Mesh;
+  readonly runs: CopperRuns;
+  /** Edge to the right of (above) each cell, −1 where it does not conduct. */
+  readonly rightEdge: Int32Array;
+  readonly upEdge: Int32Array;
+
+  constructor(mesh: Mesh) {
+    this.mesh = mesh;
+    this.runs = copperRuns(mesh.sheet);
+    this.rightEdge = new Int32Array(mesh.sheet.cellCount).fill(-1);
+    this.upEdge = new Int32Array(mesh.sheet.cellCount).fill(-1);
+    for (let e = 0; e < mesh.xEdgeCount; e++) this.rightEdge[mesh.edgeFrom[e]!] = e;
+    for (let e = mesh.xEdgeCount; e < mesh.xEdgeCount + mesh.yEdgeCount; e++) this.upEdge[mesh.edgeFrom[e]!] = e;
+  }
+}
+
+/** What one short stretch of a piece acts on. */
+interface Stretch {
+  readonly piece: number;
+  readonly fromM: number;
+  readonly toM: number;
+  /** Edge and its factor of jωµ0/2 · ∫I ds (dimensionless: h/a times shares). */
+  readonly edges: readonly number[];
+  readonly edgeFactors: readonly number[];
+  /** Cell and its factor of −1/(2ε0) · ∫q ds, 1/m. */
+  readonly cells: readonly number[];
+  readonly cellFactors: readonly number[];
+}
+
+interface Injection {
+  readonly piece: number;
+  readonly atM: number;
+  /** −1 where the filament stops, +1 where it starts again; times the share of the cell. */
+  readonly cells: readonly number[];
+  readonly shares: readonly number[];
+}
+
+/**
+ * How the pairs of one net act on the sheet, prepared once for all frequencies.
+ *
+ * By reciprocity: next to a flat sheet its own currents make the tangential field J/2 only, its charges the normal field
+ * ρ/(2ε0). So a pair of height h puts on an edge of width a under it the e.m.f. jωµ0 (h/2) ∫I ds / a and on a cell the potential
+ * −(h/2ε0) ∫q ds / a², q = −(1/jω)(dI/ds)/ε_r. The sheet's density under the trace is taken linearly between the two
+ * nearest rows of cells (a trace between two rows acts on both by half) with the crowding towards edges (`profileRatio`),
+ * which also makes the result smooth in h and in position.
+ * Over an opening the return filament is missing: it injects −I where it stops, +I where it starts again (`ReturnGap`).
+ */
+export class PairCoupling {
+  readonly pieces: readonly PairPiece[];
+  readonly gaps: readonly ReturnGap[];
+  /** Ends of traces off the copper, where the return was kept as drawn. */
+  readonly terminalsOffCopper: number;
+  readonly #stretches: readonly Stretch[];
+  readonly #injections: readonly Injection[];
+
+  constructor(lookup: SheetLookup, pieces: readonly PairPiece[], path: string) {
+    for (const [index, piece] of pieces.entries()) checkPiece(piece, `${path}[${index}]`);
+    this.pieces = pieces;
+    const { gaps, terminals } = findReturnGaps(lookup.mesh.sheet, pieces);
+    this.gaps = gaps;
+    this.terminalsOffCopper = terminals;
+    this.#stretches = pieces.flatMap((piece, index) =>
+      stretchesOf(
+        lookup,
+        piece,
+        index,
+        gaps.filter((gap) => gap.piece === index),
+      ),
+    );
+    this.#injections = gaps.flatMap((gap) => injectionsOf(lookup, pieces[gap.piece]!, gap));
+  }
+
+  /** Adds what the currents (one wave a piece, A) do at one frequency. */
+  addTo(incident: Incident, frequencyHz: number, waves: readonly LineWave[]): void {
+    const omega = 2 * Math.PI * frequencyHz;
+    const emfScale = (omega * MU0_H_PER_M) / 2;
+    const start = new Float64Array(2);
+    const end = new Float64Array(2);
+    const integral = new Float64Array(2);
+    for (const { piece, fromM, toM, edges, edgeFactors, cells, cellFactors } of this.#stretches) {
+      const wave = waves[piece]!;
+      currentIntegral(wave, fromM, toM, integral);
+      currentAt(wave, fromM, start);
+      currentAt(wave, toM, end);
+      // jω(…): re −= im, im += re
+      const emfRe = -emfScale * integral[1]!;
+      const emfIm = emfScale * integral[0]!;
+      for (let i = 0; i < edges.length; i++) {
+        incident.emfRe[edges[i]!]! += edgeFactors[i]! * emfRe;
+        incident.emfIm[edges[i]!]! += edgeFactors[i]! * emfIm;
+      }
+      // −(1/2ε0) ∫q ds with ∫q ds = −ΔI/(jω ε_r) = j ΔI/(ω ε_r)
+      const chargeScale = 1 / (2 * EPSILON0_F_PER_M * omega * this.pieces[piece]!.epsilonR);
+      const potentialRe = chargeScale * (end[1]! - start[1]!);
+      const potentialIm = -chargeScale * (end[0]! - start[0]!);
+      for (let i = 0; i < cells.length; i++) {
+        incident.potentialRe[cells[i]!]! += cellFactors[i]! * potentialRe;
+        incident.potentialIm[cells[i]!]! += cellFactors[i]! * potentialIm;
+      }
+    }
+    for (const { piece, atM, cells, shares } of this.#injections) {
+      currentAt(waves[piece]!, atM, start);
+      for (let i = 0; i < cells.length; i++) {
+        incident.injectedRe[cells[i]!]! += shares[i]! * start[0]!;
+        incident.injectedIm[cells[i]!]! += shares[i]! * start[1]!;
+      }
+    }
+  }
+}
+
+/** Half-cell stretches of the parts with a return filament. */
+function stretchesOf(lookup: SheetLookup, piece: PairPiece, index: number, gaps: readonly ReturnGap[]): Stretch[] {
+  const { originXM, originYM, cellM } = lookup.mesh.sheet.grid;
+  const lengthM = pieceLengthM(piece);
+  const out: Stretch[] = [];
+  for (const { fromM, toM } of walkGrid(piece.fromM, piece.toM, originXM, originYM, cellM / 2)) {
+    let atM = fromM;
+    for (const gap of gaps) {
+      if (gap.toM <= atM || gap.fromM >= toM) continue;
+      if (gap.fromM > atM) out.push(stretchOf(lookup, piece, index, atM, gap.fromM, lengthM));
+      atM = Math.max(atM, gap.toM);
+    }
+    if (atM < toM) out.push(stretchOf(lookup, piece, index, atM, toM, lengthM));
+  }
+  return out;
+}
+
+function stretchOf(lookup: SheetLookup, piece: PairPiece, index: number, fromM: number, toM: number, lengthM: number): Stretch {
+  const { sheet } = lookup.mesh;
+  const { originXM, originYM, cellM } = sheet.grid;
+  const ux = (piece.toM[0] - piece.fromM[0]) / lengthM;
+  const uy = (piece.toM[1] - piece.fromM[1]) / lengthM;
+  const middleM = (fromM + toM) / 2;
+  // Position in cells: the square of cell (c, r) is [c, c + 1] × [r, r + 1].
+  const x = (piece.fromM[0] + ux * middleM - originXM) / cellM;
+  const y = (piece.fromM[1] + uy * middleM - originYM) / cellM;
+  const h = piece.heightM / cellM;
+  const edges: number[] = [];
+  const edgeFactors: number[] = [];
+  addEdgeShares(lookup, 'x', x, y, h, ux * h, edges, edgeFactors);
+  addEdgeShares(lookup, 'y', x, y, h, uy * h, edges, edgeFactors);
+  const cells: number[] = [];
+  const cellFactors: number[] = [];
+  for (const { cell, share } of cellShares(sheet, x, y)) {
+    const { firstColumn, endColumn, firstRow, endRow } = lookup.runs;
+    const ratio =
+      profileRatio(x, h, sheet.columnOf[cell]!, firstColumn[cell]!, endColumn[cell]!) *
+      profileRatio(y, h, sheet.rowOf[cell]!, firstRow[cell]!, endRow[cell]!);
+    cells.push(cell);
+    cellFactors.push((share * ratio * h) / cellM);
+  }
+  return { piece: index, fromM, toM, edges, edgeFactors, cells, cellFactors };
+}
+
+/** Shares of the edges of one direction under a point: linear between the two nearest rows (columns) that carry current. */
+function addEdgeShares(
+  { mesh, runs, rightEdge, upEdge }: SheetLookup,
+  direction: 'x' | 'y',
+  x: number,
+  y: number,
+  h: number,
+  factor: number,
+  edges: number[],
+  factors: number[],
+): void {
+  if (factor === 0) return;
+  const { sheet } = mesh;
+  const isX = direction === 'x';
+  const along = Math.floor((isX ? x : y) - 0.5);
+  const across = isX ? y : x;
+  const own = Math.floor(across);
+  const next = across - own < 0.5 ? own - 1 : own + 1;
+  const cellAt = (row: number): number => (isX ? cellAtIndex(sheet, along, row) : cellAtIndex(sheet, row, along));
+  const edgeOf = (cell: number): number => (cell < 0 ? -1 : (isX ? rightEdge : upEdge)[cell]!);
+  const ownCell = cellAt(own);
+  const ownEdge = edgeOf(ownCell);
+  if (ownEdge < 0) return;
+  const first = isX ? runs.firstRow[ownCell]! : runs.firstColumn[ownCell]!;
+  const end = isX ? runs.endRow[ownCell]! : runs.endColumn[ownCell]!;
+  const nextEdge = next >= first && next < end ? edgeOf(cellAt(next)) : -1;
+  const nextShare = nextEdge < 0 ? 0 : Math.abs(across - own - 0.5);
+  edges.push(ownEdge);
+  factors.push(factor * (1 - nextShare) * profileRatio(across, h, own, first, end));
+  if (nextEdge < 0) return;
+  edges.push(nextEdge);
+  factors.push(factor * nextShare * profileRatio(across, h, next, first, end));
+}
+
+/** Cells that share a charge at a point so that its centre stays: linear both ways, as far as copper connects. Shares sum to 1. */
+function cellShares(sheet: Sheet, x: number, y: number): { readonly cell: number; readonly share: number }[] {
+  const column = Math.floor(x);
+  const row = Math.floor(y);
+  const own = cellAtIndex(sheet, column, row);
+  if (own < 0) return [];
+  const stepX = x - column < 0.5 ? -1 : 1;
+  const stepY = y - row < 0.5 ? -1 : 1;
+  const isBesideX = isLinked(sheet, column, row, stepX, 0);
+  const isBesideY = isLinked(sheet, column, row, 0, stepY);
+  const shareX = isBesideX ? Math.abs(x - column - 0.5) : 0;
+  const isDiagonal =
+    (isBesideX && isLinked(sheet, column + stepX, row, 0, stepY)) ||
+    (isBesideY && isLinked(sheet, column, row + stepY, stepX, 0));
+  const shareY = isBesideY && (!isBesideX || isDiagonal) ? Math.abs(y - row - 0.5) : 0;
+  const out = [{ cell: own, share: (1 - shareX) * (1 - shareY) }];
+  if (shareX > 0) out.push({ cell: cellAtIndex(sheet, column + stepX, row), share: shareX * (1 - shareY) });
+  if (shareY > 0) out.push({ cell: cellAtIndex(sheet, column, row + stepY), share: (1 - shareX) * shareY });
+  if (shareX > 0 && shareY > 0) {
+    out.push({ cell: cellAtIndex(sheet, column + stepX, row + stepY), share: shareX * shareY });
+  }
+  return out;
+}
+
+/** Does the cell conduct to its neighbour one step away? */
+function isLinked(sheet: Sheet, column: number, row: number, stepX: number, stepY: number): boolean {
+  const cell = cellAtIndex(sheet, Math.min(column, column + stepX), Math.min(row, row + stepY));
+  if (cell < 0) return false;
+  return (stepX !== 0 ? sheet.conductsRight : sheet.conductsUp)[cell] === 1;
+}
+
+function injectionsOf({ mesh }: SheetLookup, piece: PairPiece, gap: ReturnGap): Injection[] {
+  const { sheet } = mesh;
+  const { originXM, originYM, cellM } = sheet.grid;
+  const lengthM = pieceLengthM(piece);
+  const at = (sM: number, cell: number, sign: 1 | -1): Injection => {
+    const x = (piece.fromM[0] + ((piece.toM[0] - piece.fromM[0]) * sM) / lengthM - originXM) / cellM;
+    const y = (piece.fromM[1] + ((piece.toM[1] - piece.fromM[1]) * sM) / lengthM - originYM) / cellM;
+    const shares = cellShares(sheet, x, y);
+    const isOwn = Math.floor(x) === sheet.columnOf[cell] && Math.floor(y) === sheet.rowOf[cell];
+    if (!isOwn) return { piece: gap.piece, atM: sM, cells: [cell], shares: [sign] };
+    return {
+      piece: gap.piece,
+      atM: sM,
+      cells: shares.map((share) => share.cell),
+      shares: shares.map(({ share }) => sign * share),
+    };
+  };
+  const out: Injection[] = [];
+  if (gap.fromCell >= 0) out.push(at(gap.fromM, gap.fromCell, -1));
+  if (gap.toCell >= 0) out.push(at(gap.toM, gap.toCell, 1));
+  return out;
+}
