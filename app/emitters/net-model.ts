@@ -2,6 +2,7 @@ import type { Board, Drive, Net } from '../board/board.ts';
 import { type Caveat, inputError } from '../errors.ts';
 import type { Finding } from '../estimate/result.ts';
 import type { Line } from '../lines/cross-section.ts';
+import { lineNotTemCaveat } from '../lines/validity.ts';
 import { buildNetGraph, type GraphSegment, type NetGraph } from '../network/net-graph.ts';
 import type { Network } from '../network/network.ts';
 import { viaInductanceH } from '../network/via.ts';
@@ -22,7 +23,7 @@ export interface NetModel {
   /** In the order of `network.drives`. */
   readonly drives: readonly Drive[];
   /** In the order of `network.sections`. */
-  readonly sections: readonly { readonly lengthM: number; readonly z0Ohm: number }[];
+  readonly sections: readonly { readonly lengthM: number; readonly z0Ohm: number; readonly planeCount: number }[];
   readonly pair: RuledElements;
   /** How the net drives planes and cables; null when they are not solved, or its return is a named path. */
   readonly coupling: NetCoupling | null;
@@ -53,7 +54,7 @@ export function buildNetModel(context: NetContext, net: Net): NetModel {
       name: net.name,
       network: withEnds(networkOf(board, graph, named.lines, terminals), named.ends),
       drives,
-      sections: [...named.sections, ...named.ends],
+      sections: [...named.sections, ...named.ends].map((section) => ({ ...section, planeCount: 0 })),
       pair: collector.finish(),
       coupling: null,
       findings: [],
@@ -65,8 +66,10 @@ export function buildNetModel(context: NetContext, net: Net): NetModel {
   const lines: Line[] = [];
   const sections = graph.segments.map((segment, index): PlacedSection => {
     const { planes } = served[index]!;
-    const line = lineWithOverrides(net, crossSectionOver(board, segment.layerIndex, segment.widthM, planes));
-    lines.push(line);
+    const crossSection = crossSectionOver(board, segment.layerIndex, segment.widthM, planes);
+    const line = lineWithOverrides(net, crossSection);
+    const notTem = lineNotTemCaveat(crossSection, line, context.maxHz);
+    lines.push(notTem ? { ...line, caveats: [...line.caveats, notTem] } : line);
     return {
       index,
       fromM: segment.fromM,
@@ -92,7 +95,7 @@ export function buildNetModel(context: NetContext, net: Net): NetModel {
     name: net.name,
     network: networkOf(board, graph, lines, terminals),
     drives,
-    sections,
+    sections: sections.map((section) => ({ ...section, planeCount: section.planes.length })),
     pair: collector.finish(),
     coupling,
     findings: [...gapFindings(board, context.planes, net, graph, references, served), ...placeFindings],

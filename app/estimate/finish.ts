@@ -20,6 +20,7 @@ export function finishEstimate(
 ): EstimateResult {
   const { limits, site } = request;
   const { points, sharedHz } = judge(levels, limits);
+  const roughHz = levels.filter(({ isRough }) => isRough).map(({ frequencyHz }) => frequencyHz);
   const findings = [...scene.nets.values()].flatMap((model) => model.findings);
   const worst = points[0];
   const uncertaintyDb = labUncertaintyDb(
@@ -27,7 +28,7 @@ export function finishEstimate(
     worst ? siteAt(scene, worst.frequencyHz) : site.kind,
   );
   const verdict = verdictOf(worst, request.requiredMarginDb, uncertaintyDb);
-  const caveats = modelCaveats(scene, request, range.fromHz, range.toHz, findings, sharedHz);
+  const caveats = modelCaveats(scene, request, range.fromHz, range.toHz, findings, sharedHz, roughHz);
   if (worst && worst.marginDb >= 0 && worst.marginDb < uncertaintyDb) caveats.push(uncertaintyCaveat(uncertaintyDb));
   if (!worst) caveats.push(noLineCaveat(range));
   return {

@@ -21,6 +21,8 @@ export interface LineLevel {
   /** Linear sum of all contributors at the maximum. */
   readonly upperBoundVPerM: number;
   readonly contributors: readonly Contributor[];
+  /** The structure's currents are interpolated with more error than allowed. */
+  readonly isRough: boolean;
 }
 
 /** The ground-plane site ends here; above, the test is done in free space (absorber on the floor). */
@@ -65,6 +67,7 @@ export function lineLevel(scene: Scene, lines: FrequencyLines, responder: Struct
     verticalVPerM,
     upperBoundVPerM: contributors.reduce((sum, { fieldVPerM }) => sum + fieldVPerM, 0),
     contributors: contributors.map(({ contributor }) => contributor),
+    isRough: responder !== null && !responder.isConverged,
   };
 }
 

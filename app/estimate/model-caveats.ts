@@ -4,7 +4,7 @@ import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
 import { hzToMhz } from '../units/convert.ts';
 import type { EstimateRequest } from './estimate-request.ts';
 import type { Finding } from './result.ts';
-import type { Scene } from './scene.ts';
+import { type Scene, SOLVED_TO_HZ } from './scene.ts';
 
 /** A trace loop counts as small up to a tenth of a wavelength around. */
 const SMALL_LOOP_WAVELENGTHS = 0.1;
@@ -17,6 +17,7 @@ export function modelCaveats(
   toHz: number,
   findings: readonly Finding[],
   sharedHz: readonly number[],
+  roughHz: readonly number[],
 ): Caveat[] {
   const { board } = scene;
   const everywhere = { fromHz: 0, toHz: 0 };
@@ -30,8 +31,10 @@ export function modelCaveats(
       ...everywhere,
     });
   }
+  if (scene.structure) caveats.push(...structureCaveats(scene, toHz, roughHz));
   caveats.push(...sizeCaveats(scene, toHz), ...cableCaveats(board, scene, fromHz, toHz), ...stackupCaveats(board));
-  caveats.push(...lineCaveats(scene, fromHz, toHz), ...undrivenCaveats(board), ...findingCaveats(findings));
+  caveats.push(...lineCaveats(scene, fromHz, toHz), ...undrivenCaveats(board));
+  caveats.push(...findingCaveats(findings, scene.structure !== null));
   if (sharedHz.length > 0) {
     caveats.push({
       code: 'several-lines-in-bandwidth',
@@ -44,14 +47,68 @@ export function modelCaveats(
   return caveats;
 }
 
+/** What the solved planes and cables leave out (physics 11, limits). */
+function structureCaveats(scene: Scene, toHz: number, roughHz: readonly number[]): Caveat[] {
+  const everywhere = { fromHz: 0, toHz: 0 };
+  const caveats: Caveat[] = [
+    {
+      code: 'structure-idealised',
+      message:
+        'all planes count as one thin sheet (no resonance between power and ground), cables as straight wires ideally joined to it; enclosure and connectors are absent',
+      where: '',
+      ...everywhere,
+    },
+  ];
+  if (toHz > SOLVED_TO_HZ) {
+    caveats.push({
+      code: 'structure-not-solved',
+      message: 'above 1 GHz planes and cables are not solved: traces radiate with their return only',
+      where: '',
+      fromHz: SOLVED_TO_HZ,
+      toHz,
+    });
+  }
+  const enclosed = [...scene.nets.values()].filter(({ sections }) => sections.some(({ planeCount }) => planeCount > 1));
+  if (enclosed.length > 0) {
+    caveats.push({
+      code: 'pair-between-planes',
+      message: 'sections between two planes drive nothing on the structure; where a plane ends they would',
+      where: listed(enclosed.map(({ name }) => name)),
+      ...everywhere,
+    });
+  }
+  const uncoupled = [...scene.nets.values()].filter(({ coupling }) => coupling === null);
+  if (uncoupled.length > 0) {
+    caveats.push({
+      code: 'named-return-not-coupled',
+      message: 'a net with a named return path radiates by itself; it drives no current on planes and cables here',
+      where: listed(uncoupled.map(({ name }) => name)),
+      ...everywhere,
+    });
+  }
+  if (roughHz.length > 0) {
+    caveats.push({
+      code: 'structure-interpolation-rough',
+      message:
+        'the currents of planes and cables are interpolated over frequency with more than 0.1 dB of error in places',
+      where: '',
+      fromHz: roughHz[0]!,
+      toHz: roughHz.at(-1)!,
+    });
+  }
+  return caveats;
+}
+
+const listed = (names: readonly string[]): string => names.slice(0, 6).join(', ') + (names.length > 6 ? ', …' : '');
+
 function sizeCaveats(scene: Scene, toHz: number): Caveat[] {
   const caveats: Caveat[] = [];
   const boardM = diagonalM(scene.board);
-  const halfWaveHz = SPEED_OF_LIGHT_M_PER_S / (2 * boardM);
+  const halfWaveHz = Math.max(SPEED_OF_LIGHT_M_PER_S / (2 * boardM), scene.structure ? SOLVED_TO_HZ : 0);
   if (halfWaveHz < toHz) {
     caveats.push({
       code: 'board-larger-than-half-wave',
-      message: `the board's diagonal of ${(boardM * 1e3).toFixed(0)} mm is half a wave at ${hzToMhz(halfWaveHz).toFixed(0)} MHz: plane resonances above are not in the trace pairs`,
+      message: `the board's diagonal of ${(boardM * 1e3).toFixed(0)} mm is more than half a wave: plane resonances are not in the trace pairs`,
       where: '',
       fromHz: halfWaveHz,
       toHz,
@@ -102,7 +159,7 @@ function cableCaveats(board: Board, scene: Scene, fromHz: number, toHz: number):
     ];
   }
   const caveats: Caveat[] = board.cables
-    .filter(({ commonModeRms }) => commonModeRms === undefined)
+    .filter(({ commonModeRms }) => commonModeRms === undefined && scene.structure === null)
     .map(({ name }) => ({
       code: 'cable-not-solved',
       message: 'no current is stated for this cable and planes and cables are not solved: it radiates nothing here',
@@ -162,24 +219,31 @@ function undrivenCaveats(board: Board): Caveat[] {
     {
       code: 'nets-without-drive',
       message: `${open.length} ${open.length === 1 ? 'net has' : 'nets have'} traces but no drive and radiate nothing here`,
-      where: open.slice(0, 6).join(', ') + (open.length > 6 ? ', …' : ''),
+      where: listed(open),
       fromHz: 0,
       toHz: 0,
     },
   ];
 }
 
-const FINDING_CAVEATS: Readonly<Record<string, string>> = {
-  'plane-gap':
+/** Message with planes left out, and with planes solved. */
+const FINDING_CAVEATS: readonly (readonly [code: string, pairOnly: string, solved: string])[] = [
+  [
+    'plane-gap',
     'a trace runs where its reference plane is missing; its return is taken straight on, though it must go around',
-  'return-changes-plane':
+    'a trace runs where its reference plane is missing; the solved plane finds the way around on cells, where the outline is coarse',
+  ],
+  [
+    'return-changes-plane',
     'a layer change leaves the return no near way between planes; it is taken to cross beside the via',
-};
+    'a layer change leaves the return no near way between planes; it is taken to cross beside the via',
+  ],
+];
 
-function findingCaveats(findings: readonly Finding[]): Caveat[] {
-  return Object.entries(FINDING_CAVEATS).flatMap(([code, message]) => {
+function findingCaveats(findings: readonly Finding[], isSolved: boolean): Caveat[] {
+  return FINDING_CAVEATS.flatMap(([code, pairOnly, solved]) => {
     const nets = [...new Set(findings.filter((finding) => finding.code === code).map(({ net }) => net))];
     if (nets.length === 0) return [];
-    return [{ code, message, where: nets.slice(0, 6).join(', ') + (nets.length > 6 ? ', …' : ''), fromHz: 0, toHz: 0 }];
+    return [{ code, message: isSolved ? solved : pairOnly, where: listed(nets), fromHz: 0, toHz: 0 }];
   });
 }

@@ -51,7 +51,7 @@ describe('estimate', () => {
     expect(result.site).toMatchObject({ distanceM: 10, measuredFrom: 'center', orientation: 'upright' });
     expect(result.points.every((point) => point.frequencyHz <= 400e6 * (1 + 1e-9))).toBe(true);
     expect(result.board.sha256).toBe(createHash('sha256').update(readFileSync(quiet)).digest('hex'));
-    expect(result.structure).toBe('pair-only');
+    expect(result.structure).toBe('solved');
   });
 
   it('judges by own limit lines, and scaling the drive by 2 moves every level by 6.02 dB', async () => {
@@ -92,12 +92,12 @@ describe('estimate', () => {
     expect(readFileSync(html, 'utf8')).toContain('Orchard valve controller');
   });
 
-  it('says so when this version cannot solve planes', async () => {
-    const asked = await runCli(['estimate', quiet, '--structure', 'solved']);
-    expect([asked.code, asked.stdout]).toEqual([2, '']);
-    expect(asked.stderr).toContain('it comes with the structure solver');
-    const inFile = write('solved.board.json', { ...clockBoard(0.1), structure: { planes: 'solved' } });
-    expect((await estimate(inFile)).result.notes.join()).toContain('asks for solved planes');
+  it('solves planes unless the file or the command line says pair-only', async () => {
+    expect((await estimate(quiet)).result.structure).toBe('solved');
+    expect((await estimate(quiet, '--structure', 'pair-only')).result.structure).toBe('pair-only');
+    const inFile = write('pair.board.json', { ...clockBoard(0.1), structure: { planes: 'pair-only' } });
+    expect((await estimate(inFile)).result.structure).toBe('pair-only');
+    expect((await estimate(inFile, '--structure', 'solved')).result.structure).toBe('solved');
   });
 
   it('asks for sources when a board has none', async () => {

@@ -29,7 +29,7 @@ export interface EstimateOptions {
   readonly measuredFrom: 'boundary' | 'center';
   readonly site: 'ground-plane' | 'free-space';
   readonly orientation: 'flat' | 'upright';
-  readonly structure?: string;
+  readonly structure?: 'solved' | 'pair-only';
   readonly maxMhz?: number;
   readonly requiredMargin: number;
   readonly top: number;
@@ -101,12 +101,12 @@ async function estimateFile(file: string, options: EstimateOptions): Promise<num
           measuredFrom: options.measuredFrom,
           orientation: options.orientation,
         },
-        structure: structure.choice,
+        structure,
         ...(options.maxMhz !== undefined && { maxHz: mhzToHz(options.maxMhz) }),
         requiredMarginDb: options.requiredMargin,
         boardSha256: loaded.sha256,
         programVersion: programVersion(),
-        notes: [...loaded.notes, ...structure.notes, ...chosen.notes],
+        notes: [...loaded.notes, ...chosen.notes],
       },
     },
     progress.show,
