@@ -1,5 +1,5 @@
 import type { Component } from '../site/power-map.ts';
-import { fieldAtAntenna, type ScanRequest, scanMaxima } from '../site/scan.ts';
+import { fieldsAtAntenna, type ScanRequest, scanMaxima } from '../site/scan.ts';
 import type { SiteKind } from '../site/site.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
 import { peakFieldToDbuvPerM, radToDeg } from '../units/convert.ts';
@@ -47,11 +47,11 @@ export function lineLevel(scene: Scene, lines: FrequencyLines, responder: Struct
     [...domains.values()].map((own) => own.map(({ radiator }) => radiator)),
     request,
   );
-  const fieldsAt = (component: Component) =>
-    parts.map((part) => {
-      const { angleRad, heightM } = maxima[component];
-      return fieldAtAntenna([part.radiator], component, angleRad, heightM, request);
-    });
+  const partRadiators = parts.map(({ radiator }) => [radiator]);
+  const fieldsAt = (component: Component) => {
+    const { angleRad, heightM } = maxima[component];
+    return fieldsAtAntenna(partRadiators, component, angleRad, heightM, request);
+  };
   const fields = { horizontal: fieldsAt('horizontal'), vertical: fieldsAt('vertical') };
   const horizontalVPerM = magnitude(parts, fields.horizontal);
   const verticalVPerM = magnitude(parts, fields.vertical);

@@ -1,6 +1,6 @@
 import type { FieldTerms } from '../fields/element-field.ts';
 import type { Radiator } from '../fields/element-set.ts';
-import { addSample, cylinderPlan, fieldOnCylinder, momentsOf, SAMPLE_STRIDE } from './cylinder-field.ts';
+import { addSample, cylinderPlan, fieldOnCylinder, groupByElements, SAMPLE_STRIDE } from './cylinder-field.ts';
 import { findMaximum, type ScanMaximum } from './find-maximum.ts';
 import type { Box } from './moment-grid.ts';
 import { type Component, PowerMap } from './power-map.ts';
@@ -40,29 +40,37 @@ export function scanMaxima(
 }
 
 /**
- * One component (complex, V/m) of radiators' field at an antenna position, by the plain sum over elements and, on the
+ * One component (complex, V/m) of each domain's field at an antenna position, by the plain sum over elements and, on the
  * ground-plane site, their images (E_φ reversed, E_z kept, seen from the mirrored height).
  */
-export function fieldAtAntenna(
-  radiators: readonly Radiator[],
+export function fieldsAtAntenna(
+  domains: readonly (readonly Radiator[])[],
   component: Component,
   angleRad: number,
   heightM: number,
   { kPerM, scanRadiusM, site, terms = 'all' }: ScanRequest,
-): [re: number, im: number] {
-  const total: [number, number] = [0, 0];
-  const sample = new Float64Array(SAMPLE_STRIDE);
+): (readonly [re: number, im: number])[] {
+  const groups = groupByElements(domains);
   const offset = component === 'horizontal' ? 0 : 2;
+  const totals = domains.map((): [number, number] => [0, 0]);
   for (const sign of site === 'ground-plane' ? [1, -1] : [1]) {
-    sample.fill(0);
+    const samples = domains.map(() => new Float64Array(SAMPLE_STRIDE));
     const place = { kPerM, radiusM: scanRadiusM, angleRad, zM: sign * heightM, referenceM: 0, factor: 1, terms };
-    for (const radiator of radiators) {
-      const shares = [{ domain: 0, moments: momentsOf(radiator) }];
-      addSample({ positionsM: radiator.elements.positionsM, shares }, place, [sample], 0);
-    }
+    for (const group of groups) addSample(group, place, samples, 0);
     const kept = component === 'horizontal' ? sign : 1;
-    total[0] += kept * sample[offset]!;
-    total[1] += kept * sample[offset + 1]!;
+    for (const [d, sample] of samples.entries()) {
+      totals[d]![0] += kept * sample[offset]!;
+      totals[d]![1] += kept * sample[offset + 1]!;
+    }
   }
-  return total;
+  return totals;
 }
+
+/** The field of one domain's radiators, as `fieldsAtAntenna`. */
+export const fieldAtAntenna = (
+  radiators: readonly Radiator[],
+  component: Component,
+  angleRad: number,
+  heightM: number,
+  request: ScanRequest,
+): readonly [re: number, im: number] => fieldsAtAntenna([radiators], component, angleRad, heightM, request)[0]!;
