@@ -1,5 +1,5 @@
 import type { Sheet } from './sheet.ts';
-import { stripDensities } from './strip-density.ts';
+import { stripDensity } from './strip-density.ts';
 
 /**
  * How current and charge crowd towards the edges of the copper, below the resolution of the cells.
@@ -48,7 +48,7 @@ export function copperRuns(sheet: Sheet): CopperRuns {
 export function profileRatio(at: number, h: number, cell: number, first: number, end: number): number {
   const w = (end - first) / 2;
   const u = Math.max(-1, Math.min(1, (at - (end + first) / 2) / w));
-  return fluxPerHeight(u, h / w) / (Math.PI * w * stripDensities(end - first)[cell - first]!);
+  return fluxPerHeight(u, h / w) / (Math.PI * w * stripDensity(end - first, cell - first));
 }
 
 /** Im arcsin(u + jv)/v for |u| ≤ 1, v > 0: acosh of half the sum of the distances to ±1, without cancellation for small v. */

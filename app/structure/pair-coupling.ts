@@ -137,7 +137,14 @@ function stretchesOf(lookup: SheetLookup, piece: PairPiece, index: number, gaps:
   return out;
 }
 
-function stretchOf(lookup: SheetLookup, piece: PairPiece, index: number, fromM: number, toM: number, lengthM: number): Stretch {
+function stretchOf(
+  lookup: SheetLookup,
+  piece: PairPiece,
+  index: number,
+  fromM: number,
+  toM: number,
+  lengthM: number,
+): Stretch {
   const { sheet } = lookup.mesh;
   const { originXM, originYM, cellM } = sheet.grid;
   const ux = (piece.toM[0] - piece.fromM[0]) / lengthM;

@@ -50,7 +50,11 @@ export function pairFilaments(
   });
 }
 
-function cutAtGaps(lengthM: number, gaps: readonly ReturnGap[], longestM: number): { fromM: number; toM: number; isGap: boolean }[] {
+function cutAtGaps(
+  lengthM: number,
+  gaps: readonly ReturnGap[],
+  longestM: number,
+): { fromM: number; toM: number; isGap: boolean }[] {
   const bounds: { fromM: number; toM: number; isGap: boolean }[] = [];
   let atM = 0;
   for (const gap of gaps) {

@@ -1,3 +1,4 @@
+import { applyChanges, boundaryCorrections, type KernelChanges } from './boundary-corrections.ts';
 import type { SymmetricMatrix } from './factor.ts';
 import type { Mesh } from './mesh.ts';
 import { retardedIm, retardedRe } from './retarded.ts';
@@ -19,12 +20,14 @@ export class PartialElements {
   readonly #sheet: SheetKernel;
   readonly #nodeStatic: Float64Array;
   readonly #edgeStatic: Float64Array;
+  readonly #changes: KernelChanges;
 
   constructor(mesh: Mesh) {
     this.mesh = mesh;
     this.#sheet = new SheetKernel(mesh.sheet, mesh.ground);
     this.#nodeStatic = wireNodeStatics(mesh);
     this.#edgeStatic = wireEdgeStatics(mesh);
+    this.#changes = boundaryCorrections(mesh);
   }
 
   /**
@@ -36,8 +39,10 @@ export class PartialElements {
     this.#sheet.update(kPerM);
     this.#fillCells(nodes);
     this.#fillWireNodes(kPerM, nodes);
+    applyChanges(this.#changes.nodes, nodes, true);
     this.#fillInductances(edges);
     this.#fillWireInductances(kPerM, edges);
+    applyChanges(this.#changes.edges, edges, false);
     addCharges(this.mesh, 1 / (kPerM * kPerM), nodes, edges);
   }
 

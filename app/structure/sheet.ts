@@ -1,4 +1,4 @@
-import type { PointM, RingM } from '../board/board.ts';
+import type { RingM } from '../board/board.ts';
 import { inputError } from '../errors.ts';
 import { coveredStretches, type Region, type Stretch } from '../geometry/polygon.ts';
 
@@ -9,6 +9,18 @@ export interface Grid {
   readonly cellM: number;
   readonly columns: number;
   readonly rows: number;
+}
+
+/** Two cells that face each other across an opening (a slot) of at most two missing cells. */
+export interface FacingCells {
+  /** The left or lower cell, and the right or upper one. */
+  readonly first: number;
+  readonly second: number;
+  /** 'x': the opening lies between a left and a right cell; 'y': between a lower and an upper one. */
+  readonly across: 'x' | 'y';
+  readonly missingCells: number;
+  /** True width on the line between the centres, m. */
+  readonly widthM: number;
 }
 
 /**
@@ -28,7 +40,11 @@ export interface Sheet {
   /** Does cell c conduct to its right (upper) neighbour? */
   readonly conductsRight: Uint8Array;
   readonly conductsUp: Uint8Array;
+  readonly facing: readonly FacingCells[];
 }
+
+/** Widest opening (in missing cells) across which cells are said to face each other. */
+const FACING_REACH_CELLS = 2;
 
 /**
  * Rasterises the union of the planes. A cell is copper when its centre is; two neighbours conduct when the straight line
@@ -45,29 +61,25 @@ export function rasterizePlanes(planes: readonly Region[], grid: Grid, zM: numbe
   }));
   const endXM = originXM + columns * cellM;
   const endYM = originYM + rows * cellM;
-  const cellAt = new Int32Array(columns * rows).fill(-1);
+  const isCopper = new Uint8Array(columns * rows);
   const right = new Uint8Array(columns * rows);
   const up = new Uint8Array(columns * rows);
+  const facing: FacingCells[] = [];
   for (let row = 0; row < rows; row++) {
     const yM = originYM + (row + 0.5) * cellM;
-    const covered = stretchOfCentres([originXM, yM], [endXM, yM], regions, columns);
-    for (let column = 0; column < columns; column++) {
-      const at = row * columns + column;
-      if (covered[column]! >= 0) cellAt[at] = 0;
-      if (column > 0 && covered[column]! >= 0 && covered[column] === covered[column - 1]) right[at - 1] = 1;
-    }
+    const stretches = coveredStretches([originXM, yM], [endXM, yM], regions);
+    const on = stretchOfCentres(stretches, columns);
+    for (let column = 0; column < columns; column++) isCopper[row * columns + column] = on[column]! >= 0 ? 1 : 0;
+    link(on, stretches, 'x', row * columns, 1, cellM, isCopper, right, facing);
   }
   for (let column = 0; column < columns; column++) {
     const xM = originXM + (column + 0.5) * cellM;
-    const covered = stretchOfCentres([xM, originYM], [xM, endYM], regions, rows);
-    for (let row = 1; row < rows; row++) {
-      const at = row * columns + column;
-      const isCopper = cellAt[at] === 0 && cellAt[at - columns] === 0;
-      if (isCopper && covered[row]! >= 0 && covered[row] === covered[row - 1]) up[at - columns] = 1;
-    }
+    const stretches = coveredStretches([xM, originYM], [xM, endYM], regions);
+    link(stretchOfCentres(stretches, rows), stretches, 'y', column, columns, cellM, isCopper, up, facing);
   }
+  const cellAt = new Int32Array(columns * rows).fill(-1);
   let cellCount = 0;
-  for (let at = 0; at < cellAt.length; at++) if (cellAt[at] === 0) cellAt[at] = cellCount++;
+  for (let at = 0; at < cellAt.length; at++) if (isCopper[at] === 1) cellAt[at] = cellCount++;
   if (cellCount === 0) throw inputError('planes', `copper at the centre of a cell of ${cellM} m`, 'none');
   const columnOf = new Int32Array(cellCount);
   const rowOf = new Int32Array(cellCount);
@@ -81,12 +93,40 @@ export function rasterizePlanes(planes: readonly Region[], grid: Grid, zM: numbe
     conductsRight[cell] = right[at]!;
     conductsUp[cell] = up[at]!;
   }
-  return { grid, zM, cellCount, cellAt, columnOf, rowOf, conductsRight, conductsUp };
+  const numbered = facing.map((pair) => ({ ...pair, first: cellAt[pair.first]!, second: cellAt[pair.second]! }));
+  return { grid, zM, cellCount, cellAt, columnOf, rowOf, conductsRight, conductsUp, facing: numbered };
+}
+
+/**
+ * Marks which neighbours on one line of centres conduct, and collects those that face each other across an opening. Places are
+ * first + i · step.
+ */
+function link(
+  on: Int32Array,
+  stretches: readonly Stretch[],
+  across: 'x' | 'y',
+  first: number,
+  step: number,
+  cellM: number,
+  isCopper: Uint8Array,
+  conducts: Uint8Array,
+  facing: FacingCells[],
+): void {
+  let last = -1;
+  for (let i = 0; i < on.length; i++) {
+    const at = first + i * step;
+    if (isCopper[at] === 0 || on[i]! < 0) continue;
+    if (last >= 0 && on[last] === on[i] && i === last + 1) conducts[at - step] = 1;
+    else if (last >= 0 && i - last - 1 <= FACING_REACH_CELLS && on[last] !== on[i]) {
+      const widthM = (stretches[on[i]!]!.from - stretches[on[last]!]!.to) * on.length * cellM;
+      facing.push({ first: first + last * step, second: at, across, missingCells: i - last - 1, widthM });
+    }
+    last = i;
+  }
 }
 
 /** For each of `count` cell centres on the line: the index of the copper stretch it lies on, −1 for none. */
-function stretchOfCentres(from: PointM, to: PointM, regions: readonly Region[], count: number): Int32Array {
-  const stretches: Stretch[] = coveredStretches(from, to, regions);
+function stretchOfCentres(stretches: readonly Stretch[], count: number): Int32Array {
   const out = new Int32Array(count).fill(-1);
   let next = 0;
   for (let i = 0; i < count; i++) {
