@@ -39,7 +39,8 @@ export class NetCoupling {
   readonly #pieces: readonly PairPiece[];
   readonly #pair: PairCoupling;
   readonly #filaments: readonly PairFilament[];
-  readonly #onWires: RegularField | null;
+  readonly #model: StructureModel;
+  #onWires: RegularField | null = null;
 
   constructor(model: StructureModel, sections: readonly CoupledSection[], path: string) {
     const { mesh, lookup } = model;
@@ -62,51 +63,66 @@ export class NetCoupling {
     const longestM = FILAMENT_CELLS * mesh.sheet.grid.cellM;
     this.#filaments =
       mesh.wires.length > 0 ? pairFilaments(this.#pieces, this.#pair.gaps, mesh.sheet.zM, longestM) : [];
-    this.#onWires =
-      this.#filaments.length > 0
-        ? new RegularField(
-            mesh,
-            this.#filaments.map(({ filament }) => filament),
-            wireEdges(model),
-            wireNodes(model),
-          )
-        : null;
+    this.#model = model;
   }
 
-  /** Adds what a solved net does to the structure at one frequency. */
-  addTo(incident: Incident, frequencyHz: number, response: NetworkResponse): void {
-    const waves = this.#sectionOfPiece.map((section): LineWave => waveOf(response, section));
+  /** The pair's field on the cables, worked out when first needed. */
+  #wireField(): RegularField | null {
+    if (this.#filaments.length === 0) return null;
+    this.#onWires ??= new RegularField(
+      this.#model.mesh,
+      this.#filaments.map(({ filament }) => filament),
+      wireEdges(this.#model),
+      wireNodes(this.#model),
+    );
+    return this.#onWires;
+  }
+
+  /** Adds what a solved net does to the structure at one frequency; the response times a phasor. */
+  addTo(incident: Incident, frequencyHz: number, response: NetworkResponse, re: number, im: number): void {
+    const waves = this.#sectionOfPiece.map((section): LineWave => waveOf(response, section, re, im));
     this.#pair.addTo(incident, frequencyHz, waves);
     const omega = 2 * Math.PI * frequencyHz;
-    this.#onWires?.addTo(incident, frequencyHz, (index, out) => {
+    this.#wireField()?.addTo(incident, frequencyHz, (index, out) => {
       const filament = this.#filaments[index]!;
       filamentSource(filament, this.#pieces[filament.piece]!, waves[filament.piece]!, omega, out);
     });
   }
 }
 
-const waveOf = ({ gamma, forward, backward }: NetworkResponse, section: number): LineWave => ({
-  gammaRePerM: gamma[2 * section]!,
-  gammaImPerM: gamma[2 * section + 1]!,
-  forwardReA: forward[2 * section]!,
-  forwardImA: forward[2 * section + 1]!,
-  backwardReA: backward[2 * section]!,
-  backwardImA: backward[2 * section + 1]!,
-});
+function waveOf({ gamma, forward, backward }: NetworkResponse, section: number, re: number, im: number): LineWave {
+  const at = 2 * section;
+  return {
+    gammaRePerM: gamma[at]!,
+    gammaImPerM: gamma[at + 1]!,
+    forwardReA: forward[at]! * re - forward[at + 1]! * im,
+    forwardImA: forward[at]! * im + forward[at + 1]! * re,
+    backwardReA: backward[at]! * re - backward[at + 1]! * im,
+    backwardImA: backward[at]! * im + backward[at + 1]! * re,
+  };
+}
 
 /** How a stated loop of current drives the structure: by its own field on every edge. */
 export class LoopCoupling {
-  readonly #field: RegularField;
+  readonly #model: StructureModel;
+  readonly #loop: CurrentLoop;
+  #known: RegularField | null = null;
 
   constructor(model: StructureModel, loop: CurrentLoop) {
-    const { mesh } = model;
-    const edges = Array.from({ length: mesh.edgeCount }, (_, i) => i);
-    this.#field = new RegularField(mesh, loopFilaments(loop.pointsM, mesh.sheet.grid.cellM), edges, []);
+    this.#model = model;
+    this.#loop = loop;
+  }
+
+  #field(): RegularField {
+    const { mesh } = this.#model;
+    const edges = () => Array.from({ length: mesh.edgeCount }, (_, i) => i);
+    this.#known ??= new RegularField(mesh, loopFilaments(this.#loop.pointsM, mesh.sheet.grid.cellM), edges(), []);
+    return this.#known;
   }
 
   /** Adds what a current (A, the same all around) does. */
   addTo(incident: Incident, frequencyHz: number, re: number, im: number): void {
-    this.#field.addTo(incident, frequencyHz, (_, out) => {
+    this.#field().addTo(incident, frequencyHz, (_, out) => {
       out[0] = re;
       out[1] = im;
       out[2] = 0;

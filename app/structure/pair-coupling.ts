@@ -1,30 +1,13 @@
 import { EPSILON0_F_PER_M, MU0_H_PER_M } from '../units/constants.ts';
-import { type CopperRuns, copperRuns, profileRatio } from './edge-profile.ts';
+import { profileRatio } from './edge-profile.ts';
 import { walkGrid } from './grid-walk.ts';
 import type { Incident } from './incident.ts';
 import { currentAt, currentIntegral, type LineWave } from './line-wave.ts';
-import type { Mesh } from './mesh.ts';
+import { filamentSource, type PairFilament, pairFilaments } from './pair-filaments.ts';
 import { checkPiece, type PairPiece, pieceLengthM } from './pair-piece.ts';
+import { RegularField } from './regular-field.ts';
 import { findReturnGaps, type ReturnGap } from './return-gaps.ts';
-import { cellAtIndex, type Sheet } from './sheet.ts';
-
-/** Cells and edges of a sheet as a pair's weights need them. */
-export class SheetLookup {
-  readonly mesh: Mesh;
-  readonly runs: CopperRuns;
-  /** Edge to the right of (above) each cell, −1 where it does not conduct. */
-  readonly rightEdge: Int32Array;
-  readonly upEdge: Int32Array;
-
-  constructor(mesh: Mesh) {
-    this.mesh = mesh;
-    this.runs = copperRuns(mesh.sheet);
-    this.rightEdge = new Int32Array(mesh.sheet.cellCount).fill(-1);
-    this.upEdge = new Int32Array(mesh.sheet.cellCount).fill(-1);
-    for (let e = 0; e < mesh.xEdgeCount; e++) this.rightEdge[mesh.edgeFrom[e]!] = e;
-    for (let e = mesh.xEdgeCount; e < mesh.xEdgeCount + mesh.yEdgeCount; e++) this.upEdge[mesh.edgeFrom[e]!] = e;
-  }
-}
+import { addEdgeShares, cellShares, type SheetLookup } from './sheet-lookup.ts';
 
 /** What one short stretch of a piece acts on. */
 interface Stretch {
@@ -55,7 +38,9 @@ interface Injection {
  * −(h/2ε0) ∫q ds / a², q = −(1/jω)(dI/ds)/ε_r. The sheet's density under the trace is taken linearly between the two
  * nearest rows of cells (a trace between two rows acts on both by half) with the crowding towards edges (`profileRatio`),
  * which also makes the result smooth in h and in position.
- * Over an opening the return filament is missing: it injects −I where it stops, +I where it starts again (`ReturnGap`).
+ * Over an opening the return filament is missing: it injects −I where it stops, +I where it starts again (`ReturnGap`), and
+ * the trace above, alone there, acts with its regular field on the whole sheet. (Without that part the return would not
+ * seek the trace's neighbourhood: on an intact plane a filament left out and injected would read 3–9 dB high, with it 0.0 dB.)
  */
 export class PairCoupling {
   readonly pieces: readonly PairPiece[];
@@ -64,6 +49,8 @@ export class PairCoupling {
   readonly terminalsOffCopper: number;
   readonly #stretches: readonly Stretch[];
   readonly #injections: readonly Injection[];
+  readonly #bareTraces: readonly PairFilament[];
+  readonly #bareField: RegularField | null;
 
   constructor(lookup: SheetLookup, pieces: readonly PairPiece[], path: string) {
     for (const [index, piece] of pieces.entries()) checkPiece(piece, `${path}[${index}]`);
@@ -80,6 +67,17 @@ export class PairCoupling {
       ),
     );
     this.#injections = gaps.flatMap((gap) => injectionsOf(lookup, pieces[gap.piece]!, gap));
+    const { mesh } = lookup;
+    this.#bareTraces = gaps.length === 0 ? [] : bareTraces(pieces, gaps, mesh.sheet.zM, mesh.sheet.grid.cellM / 2);
+    this.#bareField =
+      this.#bareTraces.length === 0
+        ? null
+        : new RegularField(
+            mesh,
+            this.#bareTraces.map(({ filament }) => filament),
+            Array.from({ length: mesh.xEdgeCount + mesh.yEdgeCount }, (_, edge) => edge),
+            Array.from({ length: mesh.sheet.cellCount }, (_, cell) => cell),
+          );
   }
 
   /** Adds what the currents (one wave a piece, A) do at one frequency. */
@@ -117,7 +115,23 @@ export class PairCoupling {
         incident.injectedIm[cells[i]!]! += shares[i]! * start[1]!;
       }
     }
+    this.#bareField?.addTo(incident, frequencyHz, (index, out) => {
+      const trace = this.#bareTraces[index]!;
+      filamentSource(trace, this.pieces[trace.piece]!, waves[trace.piece]!, omega, out);
+    });
   }
+}
+
+/** The trace over the gaps. */
+function bareTraces(
+  pieces: readonly PairPiece[],
+  gaps: readonly ReturnGap[],
+  sheetZM: number,
+  longestM: number,
+): PairFilament[] {
+  return pairFilaments(pieces, gaps, sheetZM, longestM).filter(
+    (filament) => filament.kind === 'trace' && filament.isOverGap,
+  );
 }
 
 /** Half-cell stretches of the parts with a return filament. */
@@ -169,71 +183,6 @@ function stretchOf(
     cellFactors.push((share * ratio * h) / cellM);
   }
   return { piece: index, fromM, toM, edges, edgeFactors, cells, cellFactors };
-}
-
-/** Shares of the edges of one direction under a point: linear between the two nearest rows (columns) that carry current. */
-function addEdgeShares(
-  { mesh, runs, rightEdge, upEdge }: SheetLookup,
-  direction: 'x' | 'y',
-  x: number,
-  y: number,
-  h: number,
-  factor: number,
-  edges: number[],
-  factors: number[],
-): void {
-  if (factor === 0) return;
-  const { sheet } = mesh;
-  const isX = direction === 'x';
-  const along = Math.floor((isX ? x : y) - 0.5);
-  const across = isX ? y : x;
-  const own = Math.floor(across);
-  const next = across - own < 0.5 ? own - 1 : own + 1;
-  const cellAt = (row: number): number => (isX ? cellAtIndex(sheet, along, row) : cellAtIndex(sheet, row, along));
-  const edgeOf = (cell: number): number => (cell < 0 ? -1 : (isX ? rightEdge : upEdge)[cell]!);
-  const ownCell = cellAt(own);
-  const ownEdge = edgeOf(ownCell);
-  if (ownEdge < 0) return;
-  const first = isX ? runs.firstRow[ownCell]! : runs.firstColumn[ownCell]!;
-  const end = isX ? runs.endRow[ownCell]! : runs.endColumn[ownCell]!;
-  const nextEdge = next >= first && next < end ? edgeOf(cellAt(next)) : -1;
-  const nextShare = nextEdge < 0 ? 0 : Math.abs(across - own - 0.5);
-  edges.push(ownEdge);
-  factors.push(factor * (1 - nextShare) * profileRatio(across, h, own, first, end));
-  if (nextEdge < 0) return;
-  edges.push(nextEdge);
-  factors.push(factor * nextShare * profileRatio(across, h, next, first, end));
-}
-
-/** Cells that share a charge at a point so that its centre stays: linear both ways, as far as copper connects. Shares sum to 1. */
-function cellShares(sheet: Sheet, x: number, y: number): { readonly cell: number; readonly share: number }[] {
-  const column = Math.floor(x);
-  const row = Math.floor(y);
-  const own = cellAtIndex(sheet, column, row);
-  if (own < 0) return [];
-  const stepX = x - column < 0.5 ? -1 : 1;
-  const stepY = y - row < 0.5 ? -1 : 1;
-  const isBesideX = isLinked(sheet, column, row, stepX, 0);
-  const isBesideY = isLinked(sheet, column, row, 0, stepY);
-  const shareX = isBesideX ? Math.abs(x - column - 0.5) : 0;
-  const isDiagonal =
-    (isBesideX && isLinked(sheet, column + stepX, row, 0, stepY)) ||
-    (isBesideY && isLinked(sheet, column, row + stepY, stepX, 0));
-  const shareY = isBesideY && (!isBesideX || isDiagonal) ? Math.abs(y - row - 0.5) : 0;
-  const out = [{ cell: own, share: (1 - shareX) * (1 - shareY) }];
-  if (shareX > 0) out.push({ cell: cellAtIndex(sheet, column + stepX, row), share: shareX * (1 - shareY) });
-  if (shareY > 0) out.push({ cell: cellAtIndex(sheet, column, row + stepY), share: (1 - shareX) * shareY });
-  if (shareX > 0 && shareY > 0) {
-    out.push({ cell: cellAtIndex(sheet, column + stepX, row + stepY), share: shareX * shareY });
-  }
-  return out;
-}
-
-/** Does the cell conduct to its neighbour one step away? */
-function isLinked(sheet: Sheet, column: number, row: number, stepX: number, stepY: number): boolean {
-  const cell = cellAtIndex(sheet, Math.min(column, column + stepX), Math.min(row, row + stepY));
-  if (cell < 0) return false;
-  return (stepX !== 0 ? sheet.conductsRight : sheet.conductsUp)[cell] === 1;
 }
 
 function injectionsOf({ mesh }: SheetLookup, piece: PairPiece, gap: ReturnGap): Injection[] {

@@ -16,6 +16,8 @@ export interface PairFilament {
   /** Stretch of the piece, m. */
   readonly fromM: number;
   readonly toM: number;
+  /** A stretch without return filament. */
+  readonly isOverGap: boolean;
 }
 
 /** Cuts the pieces into filaments no longer than `longestM`, at the sheet's height `sheetZM` and the trace's. */
@@ -35,12 +37,14 @@ export function pairFilaments(
       zM,
     ];
     const out: PairFilament[] = [];
+    let isOverGap = false;
     const add = (kind: PairFilament['kind'], from: Point3M, to: Point3M, fromM: number, toM: number): void => {
-      out.push({ piece: index, kind, filament: { from, to }, fromM, toM });
+      out.push({ piece: index, kind, filament: { from, to }, fromM, toM, isOverGap });
     };
     add('start', at(0, sheetZM), at(0, traceZM), 0, 0);
     add('end', at(lengthM, traceZM), at(lengthM, sheetZM), lengthM, lengthM);
     for (const { fromM, toM, isGap } of cutAtGaps(lengthM, own, longestM)) {
+      isOverGap = isGap;
       add('trace', at(fromM, traceZM), at(toM, traceZM), fromM, toM);
       if (!isGap) add('return', at(fromM, sheetZM), at(toM, sheetZM), fromM, toM);
       const middleM = (fromM + toM) / 2;

@@ -5,8 +5,8 @@ import { ringAreaM2 } from '../geometry/polygon.ts';
 import { type SiteFrame, type SiteKind, TABLE_HEIGHT_M, toSitePoint, toSiteVector } from '../site/site.ts';
 import { chooseGrid } from './cell-grid.ts';
 import { buildMesh, type Mesh } from './mesh.ts';
-import { SheetLookup } from './pair-coupling.ts';
 import { rasterizePlanes } from './sheet.ts';
+import { SheetLookup } from './sheet-lookup.ts';
 import { type EdgeCurrents, type SeriesImpedance, StructureSolver } from './structure-solver.ts';
 import { type GroundPlane, wireFromCable } from './wires.ts';
 
@@ -14,7 +14,7 @@ import { type GroundPlane, wireFromCable } from './wires.ts';
 const LONGEST_PIECE_M = 0.02;
 
 /** Edges of one part of the structure ("plane", or a cable's name) as radiating elements in site axes. */
-interface StructurePart {
+export interface StructurePart {
   readonly via: string;
   readonly edges: readonly number[];
   readonly elements: ElementSet;
@@ -64,14 +64,14 @@ export class StructureModel {
   }
 
   /** Currents of all edges (re, im pairs) as radiators, one for each part. */
-  radiators(currentsA: Float64Array): { via: string; radiator: Radiator }[] {
-    return this.parts.map(({ via, edges, elements }) => {
+  radiators(currentsA: Float64Array): Radiator[] {
+    return this.parts.map(({ edges, elements }) => {
       const own = new Float64Array(2 * edges.length);
       for (const [i, edge] of edges.entries()) {
         own[2 * i] = currentsA[2 * edge]!;
         own[2 * i + 1] = currentsA[2 * edge + 1]!;
       }
-      return { via, radiator: { elements, currentsA: own } };
+      return { elements, currentsA: own };
     });
   }
 }

@@ -54,6 +54,21 @@ export class StructureSolver {
 
   /** Currents for one excitation at the frequency set last. */
   solve(incident: Incident): EdgeCurrents {
+    const { re, im } = this.rightHandSide(incident);
+    this.solveInPlace(re, im);
+    return { re, im };
+  }
+
+  /**
+   * Turns a right-hand side into its solution. The matrix is symmetric: g·Z⁻¹v = (Z⁻¹g)·v, so the solution for the weights g
+   * of an observer serves every excitation v (reciprocity).
+   */
+  solveInPlace(re: Float64Array, im: Float64Array): void {
+    solveSymmetric(this.#edges, re, im);
+  }
+
+  /** Right-hand side of the edges' equations for one excitation at the frequency set last. */
+  rightHandSide(incident: Incident): EdgeCurrents {
     const { edgeCount, nodeCount, edgeFrom, edgeTo } = this.mesh;
     const omegaMu = this.#kPerM * SPEED_OF_LIGHT_M_PER_S * MU0_H_PER_M;
     const scale = (4 * Math.PI) / omegaMu;
@@ -72,7 +87,6 @@ export class StructureSolver {
       re[e] = scale * vIm + chargeScale * ((to < 0 ? 0 : gRe[to]!) - gRe[from]!);
       im[e] = -scale * vRe + chargeScale * ((to < 0 ? 0 : gIm[to]!) - gIm[from]!);
     }
-    solveSymmetric(this.#edges, re, im);
     return { re, im };
   }
 
