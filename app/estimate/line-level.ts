@@ -1,13 +1,15 @@
+import type { Radiator } from '../fields/element-set.ts';
 import type { Component } from '../site/power-map.ts';
-import { fieldsAtAntenna, type ScanRequest, scanMaxima } from '../site/scan.ts';
+import { fieldsAtAntenna, type ScanRequest, scanMaxima, unitFieldsAtAntenna } from '../site/scan.ts';
 import type { SiteKind } from '../site/site.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
-import { peakFieldToDbuvPerM, radToDeg } from '../units/convert.ts';
+import { radToDeg } from '../units/convert.ts';
+import { contributorsOf, type PathField } from './contributors.ts';
 import { type RadiatingPart, radiatingParts } from './radiating-parts.ts';
 import type { Contributor } from './result.ts';
 import type { Scene } from './scene.ts';
 import type { FrequencyLines } from './spectrum-table.ts';
-import type { StructureResponder } from './structure-responder.ts';
+import type { StructureAnswer, StructureResponder } from './structure-responder.ts';
 
 /** What the antenna would read at one frequency, and where. Fields are peak phasor magnitudes, V/m. */
 export interface LineLevel {
@@ -33,91 +35,106 @@ export const siteAt = (scene: Scene, frequencyHz: number): SiteKind =>
 
 /** Level of one frequency: maximum over height, angle and polarisation; null when nothing radiates there. */
 export function lineLevel(scene: Scene, lines: FrequencyLines, responder: StructureResponder | null): LineLevel | null {
-  const parts = radiatingParts(scene, lines, responder);
+  const parts = radiatingParts(scene, lines);
   if (parts.length === 0) return null;
+  const answer = responder?.answer(lines) ?? null;
   const request: ScanRequest = {
     kPerM: (2 * Math.PI * lines.frequencyHz) / SPEED_OF_LIGHT_M_PER_S,
     scanRadiusM: scene.scanRadiusM,
     site: siteAt(scene, lines.frequencyHz),
     box: scene.box,
   };
-  const domains = new Map<string, RadiatingPart[]>();
-  for (const part of parts) domains.set(part.domain, [...(domains.get(part.domain) ?? []), part]);
-  const maxima = scanMaxima(
-    [...domains.values()].map((own) => own.map(({ radiator }) => radiator)),
-    request,
-  );
-  const partRadiators = parts.map(({ radiator }) => [radiator]);
-  const fieldsAt = (component: Component) => {
+  const domains = radiatorsByDomain(scene, parts, answer);
+  const maxima = scanMaxima([...domains.values()], request);
+  const totalAt = (component: Component) => {
     const { angleRad, heightM } = maxima[component];
-    return fieldsAtAntenna(partRadiators, component, angleRad, heightM, request);
+    const fields = fieldsAtAntenna([...domains.values()], component, angleRad, heightM, request);
+    return Math.hypot(...fields.flat());
   };
-  const fields = { horizontal: fieldsAt('horizontal'), vertical: fieldsAt('vertical') };
-  const horizontalVPerM = magnitude(parts, fields.horizontal);
-  const verticalVPerM = magnitude(parts, fields.vertical);
+  const horizontalVPerM = totalAt('horizontal');
+  const verticalVPerM = totalAt('vertical');
   const polarization = verticalVPerM > horizontalVPerM ? 'vertical' : 'horizontal';
-  const contributors = contributorsOf(parts, fields[polarization]);
+  const place: AntennaPlace = { component: polarization, ...maxima[polarization], request };
+  const { contributors, linearSumVPerM } = contributorsOf([
+    ...pairFields(parts, place),
+    ...(answer ? structureFields(scene, answer, place) : []),
+  ]);
   return {
     frequencyHz: lines.frequencyHz,
     polarization,
-    antennaHeightM: maxima[polarization].heightM,
-    turntableDeg: radToDeg(maxima[polarization].angleRad),
+    antennaHeightM: place.heightM,
+    turntableDeg: radToDeg(place.angleRad),
     fieldVPerM: Math.max(horizontalVPerM, verticalVPerM),
     horizontalVPerM,
     verticalVPerM,
-    upperBoundVPerM: contributors.reduce((sum, { fieldVPerM }) => sum + fieldVPerM, 0),
-    contributors: contributors.map(({ contributor }) => contributor),
-    isRough: responder !== null && !responder.isConverged,
+    upperBoundVPerM: linearSumVPerM,
+    contributors,
+    isRough: answer !== null && !responder!.isConverged,
   };
 }
 
-type Complex = readonly [re: number, im: number];
-
-/** Phasors add within a domain, powers between domains. */
-function magnitude(parts: readonly RadiatingPart[], fields: readonly Complex[]): number {
-  const sums = new Map<string, [number, number]>();
-  for (const [i, { domain }] of parts.entries()) {
-    const sum = sums.get(domain) ?? [0, 0];
-    sum[0] += fields[i]![0];
-    sum[1] += fields[i]![1];
-    sums.set(domain, sum);
-  }
-  let power = 0;
-  for (const [re, im] of sums.values()) power += re * re + im * im;
-  return Math.sqrt(power);
+interface AntennaPlace {
+  readonly component: Component;
+  readonly angleRad: number;
+  readonly heightM: number;
+  readonly request: ScanRequest;
 }
 
-function contributorsOf(
+/** All radiating currents of each domain: pairs, loops, stated cables, and the structure's as one. */
+function radiatorsByDomain(
+  scene: Scene,
   parts: readonly RadiatingPart[],
-  fields: readonly Complex[],
-): { contributor: Contributor; fieldVPerM: number }[] {
-  const groups = new Map<string, number[]>();
-  for (const [i, { kind, name }] of parts.entries()) {
-    const key = JSON.stringify([kind, name]);
-    groups.set(key, [...(groups.get(key) ?? []), i]);
-  }
-  return [...groups.values()]
-    .map((indices) => {
-      const own = indices.map((i) => parts[i]!);
-      const fieldVPerM = magnitude(
-        own,
-        indices.map((i) => fields[i]!),
-      );
-      const vias = [...new Set(own.map(({ via }) => via))];
-      const viaDbuvPerM = Object.fromEntries(
-        vias.map((via) => {
-          const through = indices.filter((i) => parts[i]!.via === via);
-          const field = magnitude(
-            through.map((i) => parts[i]!),
-            through.map((i) => fields[i]!),
-          );
-          return [via, peakFieldToDbuvPerM(field)];
-        }),
-      );
-      const { kind, name } = own[0]!;
-      return { contributor: { kind, name, levelDbuvPerM: peakFieldToDbuvPerM(fieldVPerM), viaDbuvPerM }, fieldVPerM };
-    })
-    .sort(
-      (one, other) => other.fieldVPerM - one.fieldVPerM || (one.contributor.name < other.contributor.name ? -1 : 1),
-    );
+  answer: StructureAnswer | null,
+): Map<string, Radiator[]> {
+  const domains = new Map<string, Radiator[]>();
+  const add = (domain: string, radiators: readonly Radiator[]) => {
+    const known = domains.get(domain);
+    if (known) known.push(...radiators);
+    else domains.set(domain, [...radiators]);
+  };
+  for (const { domain, radiator } of parts) add(domain, [radiator]);
+  for (const [domain, currentsA] of answer?.currentsByDomain ?? []) add(domain, scene.structure!.radiators(currentsA));
+  return domains;
+}
+
+function pairFields(parts: readonly RadiatingPart[], place: AntennaPlace): PathField[] {
+  const { component, angleRad, heightM, request } = place;
+  const fields = fieldsAtAntenna(
+    parts.map(({ radiator }) => [radiator]),
+    component,
+    angleRad,
+    heightM,
+    request,
+  );
+  return parts.map(({ kind, name, domain, via }, i) => ({
+    kind,
+    name,
+    domain,
+    via,
+    re: fields[i]![0],
+    im: fields[i]![1],
+  }));
+}
+
+/** What each net and loop radiates through plane and cables, by weighing its drive with the antenna's view of each part. */
+function structureFields(scene: Scene, answer: StructureAnswer, place: AntennaPlace): PathField[] {
+  const { component, angleRad, heightM, request } = place;
+  return scene.structure!.parts.flatMap(({ via, edges, elements }) => {
+    const perAmpere = unitFieldsAtAntenna(elements, component, angleRad, heightM, request);
+    const observer = new Float64Array(2 * scene.structure!.mesh.edgeCount);
+    for (const [i, edge] of edges.entries()) {
+      observer[2 * edge] = perAmpere[2 * i]!;
+      observer[2 * edge + 1] = perAmpere[2 * i + 1]!;
+    }
+    const weights = answer.weigh(observer);
+    return answer.shares.map(({ kind, name, domain, vector }): PathField => {
+      let re = 0;
+      let im = 0;
+      for (let i = 0; i < weights.length; i += 2) {
+        re += weights[i]! * vector[i]! - weights[i + 1]! * vector[i + 1]!;
+        im += weights[i]! * vector[i + 1]! + weights[i + 1]! * vector[i]!;
+      }
+      return { kind, name, domain, via, re, im };
+    });
+  });
 }

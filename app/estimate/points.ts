@@ -1,8 +1,8 @@
 import type { LimitSet } from '../limits/choose.ts';
 import { bandwidthHz, combineInBandwidth } from '../receiver/combine.ts';
-import { peakFieldToDbuvPerM, rmsFieldToDbuvPerM } from '../units/convert.ts';
 import type { LineLevel } from './line-level.ts';
 import type { ResultPoint } from './result.ts';
+import { writtenLevelDbuvPerM } from './written-level.ts';
 
 export interface JudgedPoints {
   /** Worst margin first, ties by frequency. */
@@ -25,13 +25,17 @@ export function judge(levels: readonly LineLevel[], limits: LimitSet): JudgedPoi
     const judged = limits.limitsAt(frequencyHz);
     if (judged.length === 0) continue;
     const halfHz = bandwidthHz(frequencyHz) / 2;
+    // The bandwidth widens at 1 GHz: the window's start may move back.
+    while (first > 0 && fields[first - 1]!.frequencyHz >= frequencyHz - halfHz) first--;
     while (fields[first]!.frequencyHz < frequencyHz - halfHz) first++;
     let end = first;
     while (end < fields.length && fields[end]!.frequencyHz <= frequencyHz + halfHz) end++;
     const reading = combineInBandwidth(fields.slice(first, end), frequencyHz);
+    const upperBoundVPerM = levels.slice(first, end).reduce((sum, line) => sum + line.upperBoundVPerM, 0);
     if (reading.count > 1) sharedHz.push(frequencyHz);
     for (const { detector, limitDbuvPerM } of judged) {
-      const levelDbuvPerM = rmsFieldToDbuvPerM(detector === 'average' ? reading.averageRms : reading.peakRms);
+      const readRmsVPerM = detector === 'average' ? reading.averageRms : reading.peakRms;
+      const levelDbuvPerM = writtenLevelDbuvPerM(readRmsVPerM * Math.SQRT2);
       points.push({
         frequencyHz,
         detector,
@@ -41,9 +45,9 @@ export function judge(levels: readonly LineLevel[], limits: LimitSet): JudgedPoi
         polarization: level.polarization,
         antennaHeightM: level.antennaHeightM,
         turntableDeg: level.turntableDeg,
-        horizontalDbuvPerM: peakFieldToDbuvPerM(level.horizontalVPerM),
-        verticalDbuvPerM: peakFieldToDbuvPerM(level.verticalVPerM),
-        upperBoundDbuvPerM: peakFieldToDbuvPerM(level.upperBoundVPerM),
+        horizontalDbuvPerM: writtenLevelDbuvPerM(level.horizontalVPerM),
+        verticalDbuvPerM: writtenLevelDbuvPerM(level.verticalVPerM),
+        upperBoundDbuvPerM: writtenLevelDbuvPerM(upperBoundVPerM),
         contributors: level.contributors,
       });
     }

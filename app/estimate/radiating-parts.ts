@@ -2,35 +2,24 @@ import { addElementCurrents } from '../emitters/element-currents.ts';
 import { statedCableCurrents } from '../emitters/stated-cable.ts';
 import type { Radiator } from '../fields/element-set.ts';
 import { solveNetwork } from '../network/solve-network.ts';
-import { addScaled } from '../sweep/aaa.ts';
 import type { Scene } from './scene.ts';
 import type { FrequencyLines, SourceLine } from './spectrum-table.ts';
-import type { StructureResponder } from './structure-responder.ts';
 
 /** Currents of one contributor, in one domain, on one path they radiate through. */
 export interface RadiatingPart {
   readonly kind: 'net' | 'loop' | 'cable';
   readonly name: string;
   readonly domain: string;
-  /** "pair", "loop", "plane", or a cable's name. */
+  /** "pair", "loop", or a cable's name. */
   readonly via: string;
   readonly radiator: Radiator;
 }
 
-/** All radiating currents at one frequency; `responder`: planes and cables, null when they are not solved. */
-export function radiatingParts(
-  scene: Scene,
-  { frequencyHz, lines }: FrequencyLines,
-  responder: StructureResponder | null,
-): RadiatingPart[] {
+/** All stated currents at one frequency: trace pairs, loops, cables with a stated current (not planes and cables solved). */
+export function radiatingParts(scene: Scene, { frequencyHz, lines }: FrequencyLines): RadiatingPart[] {
   const parts: RadiatingPart[] = [];
-  const unitCurrents = lines.length > 0 ? (responder?.at(frequencyHz) ?? null) : null;
-  for (const kind of ['net', 'loop'] as const) {
-    for (const [name, own] of byName(lines, kind)) {
-      parts.push(...(kind === 'net' ? netParts(scene, name, own, frequencyHz) : loopParts(scene, name, own)));
-      if (unitCurrents) parts.push(...structureParts(scene, kind, name, own, unitCurrents));
-    }
-  }
+  for (const [name, own] of byName(lines, 'net')) parts.push(...netParts(scene, name, own, frequencyHz));
+  for (const [name, own] of byName(lines, 'loop')) parts.push(...loopParts(scene, name, own));
   for (const cable of scene.cables) {
     const currentsA = statedCableCurrents(cable, frequencyHz);
     if (currentsA.every((value) => value === 0)) continue;
@@ -63,21 +52,6 @@ function loopParts(scene: Scene, name: string, lines: readonly SourceLine[]): Ra
       currentsA[2 * i + 1] = im;
     }
     return { kind: 'loop', name, domain, via: 'loop', radiator: { elements, currentsA } };
-  });
-}
-
-/** What a net or loop drives through plane and cables: the unit responses times its phasors, one part for each path. */
-function structureParts(
-  scene: Scene,
-  kind: 'net' | 'loop',
-  name: string,
-  lines: readonly SourceLine[],
-  unitCurrents: (kind: 'net' | 'loop', name: string, driveIndex: number) => Float64Array,
-): RadiatingPart[] {
-  return [...byDomain(lines)].flatMap(([domain, own]) => {
-    const currentsA = new Float64Array(2 * scene.structure!.mesh.edgeCount);
-    for (const { driveIndex, re, im } of own) addScaled(currentsA, unitCurrents(kind, name, driveIndex), re, im);
-    return scene.structure!.radiators(currentsA).map(({ via, radiator }) => ({ kind, name, domain, via, radiator }));
   });
 }
 

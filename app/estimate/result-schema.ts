@@ -36,6 +36,19 @@ const finding = z.strictObject({
   layer: text,
 });
 
+const currentMap = z.strictObject({
+  frequencyHz: number,
+  cellM: number,
+  cells: z.array(z.strictObject({ atM: z.tuple([number, number]), densityRmsAPerM: number })),
+  cables: z.array(
+    z.strictObject({
+      name: text,
+      pointsM: z.array(z.tuple([number, number, number])),
+      currentRmsA: z.array(number),
+    }),
+  ),
+});
+
 const site = z.strictObject({
   kind: z.enum(['ground-plane', 'free-space']),
   distanceM: number,
@@ -72,6 +85,7 @@ export const resultSchema = z.strictObject({
   verdict: z.enum(['meets', 'exceeds', 'falls-short', 'within-uncertainty']),
   caveats: z.array(caveat),
   findings: z.array(finding),
+  currentMaps: z.array(currentMap).optional(),
   notes: z.array(text),
   cautions: z.array(text),
 });

@@ -43,6 +43,21 @@ export interface Finding {
   readonly layer: string;
 }
 
+/** Currents that the nets and loops drive over the planes and into the cables at one frequency. Board axes, rms; domains added as powers. */
+export interface StructureCurrentMap {
+  readonly frequencyHz: number;
+  /** Side of the square cells. */
+  readonly cellM: number;
+  /** Magnitude of the sheet current density at each cell's centre. */
+  readonly cells: readonly { readonly atM: readonly [number, number]; readonly densityRmsAPerM: number }[];
+  /** Solved cables: a chain of points from the board outwards, the current at each of them. */
+  readonly cables: readonly {
+    readonly name: string;
+    readonly pointsM: readonly (readonly [number, number, number])[];
+    readonly currentRmsA: readonly number[];
+  }[];
+}
+
 export interface EstimateResult {
   readonly format: 'quietboard-result';
   readonly version: 1;
@@ -80,6 +95,8 @@ export interface EstimateResult {
   readonly verdict: Verdict;
   readonly caveats: readonly Caveat[];
   readonly findings: readonly Finding[];
+  /** Of some of the worst lines; absent when the structure was not solved. */
+  readonly currentMaps?: readonly StructureCurrentMap[];
   /** What the user should know about choices the program made (pins chosen, drives without a net …). */
   readonly notes: readonly string[];
   /** The standing cautions that go with every estimate. */

@@ -52,7 +52,7 @@ export function spectrumTable(
     const spectrum = spectra.get(waveform.name) ?? spectrumOf(waveform, fromHz, toHz);
     spectra.set(waveform.name, spectrum);
     const { frequenciesHz, phasors } = applyDrive(spectrum, source);
-    const domain = clockDomainOf(waveform, driveKey);
+    const domain = `clock ${clockDomainOf(waveform, driveKey)}`;
     const strongest = strongestOf(phasors);
     for (let i = 0; i < frequenciesHz.length; i++) {
       const re = phasors[2 * i]!;
@@ -66,7 +66,7 @@ export function spectrumTable(
   for (const drive of board.drives) {
     const driveIndex = driveCounts.get(drive.net) ?? 0;
     driveCounts.set(drive.net, driveIndex + 1);
-    addSource(drive, { kind: 'net', name: drive.net, driveIndex }, `${drive.net}/${drive.pin}`);
+    addSource(drive, { kind: 'net', name: drive.net, driveIndex }, JSON.stringify([drive.net, drive.pin]));
   }
   for (const loop of board.loops) addSource(loop, { kind: 'loop', name: loop.name, driveIndex: 0 }, loop.name);
 

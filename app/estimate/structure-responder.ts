@@ -1,11 +1,30 @@
 import { solveNetwork } from '../network/solve-network.ts';
-import { emptyIncident } from '../structure/incident.ts';
+import { emptyIncident, type Incident } from '../structure/incident.ts';
 import { interleaved, type StructureModel } from '../structure/structure-model.ts';
+import type { StructureSolver } from '../structure/structure-solver.ts';
 import { addScaled } from '../sweep/aaa.ts';
 import { adaptiveSweep, type Solved, type Sweep } from '../sweep/adaptive-sweep.ts';
 import { type Scene, SOLVED_TO_HZ } from './scene.ts';
+import type { FrequencyLines, SourceLine } from './spectrum-table.ts';
 
-/** Structure currents (re, im per edge, A) for 1 V of each drive and 1 A in each loop, in the order of `units`. */
+/** What one net or loop does to the structure in one domain; `vector` is weighed by `StructureAnswer.weigh`. */
+export interface StructureShare {
+  readonly kind: SourceLine['kind'];
+  readonly name: string;
+  readonly domain: string;
+  readonly vector: Float64Array;
+}
+
+/** The structure at one frequency, driven by all lines there. Vectors: re, im per edge. */
+export interface StructureAnswer {
+  readonly shares: readonly StructureShare[];
+  /** Currents of every domain, A. */
+  readonly currentsByDomain: ReadonlyMap<string, Float64Array>;
+  /** Turns an observer's weights (answer per ampere of each edge) into weights of the shares' vectors. */
+  weigh(observer: Float64Array): Float64Array;
+}
+
+/** Structure currents for 1 V of each drive and 1 A in each loop. */
 type UnitCurrents = readonly Float64Array[];
 
 /** With no more lines than this every line is solved itself; more are interpolated between solved frequencies. */
@@ -17,8 +36,12 @@ const MOST_SOLUTIONS = 160;
 const SKETCHED_UNITS = 12;
 
 /**
- * The structure's response to every drive and loop over a set of frequencies: one factorisation per solved frequency for
- * all of them, interpolated by a rational function with a checked error where there are many lines.
+ * The structure's answer to the board's drives and loops over a set of frequencies, one factorisation per solved frequency
+ * for all of them.
+ *
+ * Few lines: each is solved, one right-hand side per domain; what a single net contributes at the antenna follows by
+ * reciprocity from one more solution for the observer. Many lines: every drive's response is solved where needed and
+ * interpolated by a rational function with a checked error.
  */
 export class StructureResponder {
   readonly #scene: Scene;
@@ -27,14 +50,13 @@ export class StructureResponder {
   readonly #sweep: Sweep<UnitCurrents> | null;
   readonly #onSolve: (() => void) | undefined;
 
-  /** `frequenciesHz`: the lines to be served, ascending. `onSolve` is called before each solution (stop, progress). */
+  /** `frequenciesHz`: the lines to be served, ascending. `onSolve` is called before each solution (stop). */
   constructor(scene: Scene, model: StructureModel, frequenciesHz: readonly number[], onSolve?: () => void) {
     this.#scene = scene;
     this.#model = model;
     this.#onSolve = onSolve;
-    for (const net of scene.nets.values()) {
-      for (const driveIndex of net.drives.keys())
-        this.#unitOf.set(unitKey('net', net.name, driveIndex), this.#unitOf.size);
+    for (const { name, drives } of scene.nets.values()) {
+      for (const driveIndex of drives.keys()) this.#unitOf.set(unitKey('net', name, driveIndex), this.#unitOf.size);
     }
     for (const name of scene.loops.keys()) this.#unitOf.set(unitKey('loop', name, 0), this.#unitOf.size);
     const served = frequenciesHz.filter((hz) => hz <= SOLVED_TO_HZ);
@@ -54,40 +76,73 @@ export class StructureResponder {
     return this.#sweep?.isConverged ?? true;
   }
 
-  /** Currents at a frequency as a function of the driver (a net's drive, or a loop); null above the solved range. */
-  at(frequencyHz: number): ((kind: 'net' | 'loop', name: string, driveIndex: number) => Float64Array) | null {
-    if (frequencyHz > SOLVED_TO_HZ) return null;
-    if (!this.#sweep) {
-      const currents = this.#solveUnits(frequencyHz);
-      return (kind, name, driveIndex) => currents[this.#unitOf.get(unitKey(kind, name, driveIndex))!]!;
-    }
-    const { contents, factors } = this.#sweep.blendAt(frequencyHz);
-    return (kind, name, driveIndex) => {
-      const unit = this.#unitOf.get(unitKey(kind, name, driveIndex))!;
-      const out = new Float64Array(2 * this.#model.mesh.edgeCount);
-      for (const [j, units] of contents.entries()) addScaled(out, units[unit]!, factors[2 * j]!, factors[2 * j + 1]!);
-      return out;
+  /** The answer to the lines of one frequency; null above the solved range, or when no line drives the structure. */
+  answer({ frequencyHz, lines }: FrequencyLines): StructureAnswer | null {
+    if (frequencyHz > SOLVED_TO_HZ || lines.length === 0) return null;
+    return this.#sweep ? this.#blended(this.#sweep, frequencyHz, lines) : this.#direct(frequencyHz, lines);
+  }
+
+  #direct(frequencyHz: number, lines: readonly SourceLine[]): StructureAnswer {
+    this.#onSolve?.();
+    const solver = this.#model.solverAt(frequencyHz);
+    const shares = groupShares(lines).map(({ kind, name, domain, own }): StructureShare => {
+      const incident = emptyIncident(this.#model.mesh);
+      this.#drive(incident, frequencyHz, kind, name, own);
+      return { kind, name, domain, vector: interleaved(solver.rightHandSide(incident)) };
+    });
+    return {
+      shares,
+      currentsByDomain: new Map([...sumByDomain(shares)].map(([domain, vector]) => [domain, solved(solver, vector)])),
+      weigh: (observer) => solved(solver, observer),
     };
+  }
+
+  #blended(sweep: Sweep<UnitCurrents>, frequencyHz: number, lines: readonly SourceLine[]): StructureAnswer {
+    const { contents, factors } = sweep.blendAt(frequencyHz);
+    const size = 2 * this.#model.mesh.edgeCount;
+    const shares = groupShares(lines).map(({ kind, name, domain, own }): StructureShare => {
+      const vector = new Float64Array(size);
+      for (const { driveIndex, re, im } of own) {
+        const unit = this.#unitOf.get(unitKey(kind, name, driveIndex))!;
+        for (const [j, units] of contents.entries()) {
+          const fRe = factors[2 * j]!;
+          const fIm = factors[2 * j + 1]!;
+          addScaled(vector, units[unit]!, fRe * re - fIm * im, fRe * im + fIm * re);
+        }
+      }
+      return { kind, name, domain, vector };
+    });
+    return { shares, currentsByDomain: sumByDomain(shares), weigh: (observer) => observer };
+  }
+
+  /** Adds what the lines of one net or loop do to the structure. */
+  #drive(
+    incident: Incident,
+    frequencyHz: number,
+    kind: SourceLine['kind'],
+    name: string,
+    own: readonly Pick<SourceLine, 'driveIndex' | 're' | 'im'>[],
+  ): void {
+    if (kind === 'loop') {
+      const { coupling } = this.#scene.loops.get(name)!;
+      for (const { re, im } of own) coupling?.addTo(incident, frequencyHz, re, im);
+      return;
+    }
+    const { network, coupling } = this.#scene.nets.get(name)!;
+    if (!coupling) return;
+    const responses = solveNetwork(network, frequencyHz);
+    for (const { driveIndex, re, im } of own) coupling.addTo(incident, frequencyHz, responses[driveIndex]!, re, im);
   }
 
   #solveUnits(frequencyHz: number): UnitCurrents {
     this.#onSolve?.();
     const solver = this.#model.solverAt(frequencyHz);
-    const currents: Float64Array[] = [];
-    for (const { network, coupling, drives } of this.#scene.nets.values()) {
-      const responses = solveNetwork(network, frequencyHz);
-      for (const driveIndex of drives.keys()) {
-        const incident = emptyIncident(this.#model.mesh);
-        coupling?.addTo(incident, frequencyHz, responses[driveIndex]!);
-        currents.push(interleaved(solver.solve(incident)));
-      }
-    }
-    for (const { coupling } of this.#scene.loops.values()) {
+    return [...this.#unitOf.keys()].map((key) => {
+      const { kind, name, driveIndex } = unitOfKey(key);
       const incident = emptyIncident(this.#model.mesh);
-      coupling?.addTo(incident, frequencyHz, 1, 0);
-      currents.push(interleaved(solver.solve(incident)));
-    }
-    return currents;
+      this.#drive(incident, frequencyHz, kind, name, [{ driveIndex, re: 1, im: 0 }]);
+      return interleaved(solver.solve(incident));
+    });
   }
 
   /** Moments of plane and cables stand for the currents: what radiates. */
@@ -114,5 +169,38 @@ export class StructureResponder {
   }
 }
 
-const unitKey = (kind: 'net' | 'loop', name: string, driveIndex: number): string =>
+const unitKey = (kind: SourceLine['kind'], name: string, driveIndex: number): string =>
   JSON.stringify([kind, name, driveIndex]);
+
+function unitOfKey(key: string): Pick<SourceLine, 'kind' | 'name' | 'driveIndex'> {
+  const [kind, name, driveIndex] = JSON.parse(key) as [SourceLine['kind'], string, number];
+  return { kind, name, driveIndex };
+}
+
+function groupShares(lines: readonly SourceLine[]) {
+  const groups = new Map<string, { kind: SourceLine['kind']; name: string; domain: string; own: SourceLine[] }>();
+  for (const line of lines) {
+    const key = JSON.stringify([line.kind, line.name, line.domain]);
+    const group = groups.get(key) ?? { kind: line.kind, name: line.name, domain: line.domain, own: [] };
+    group.own.push(line);
+    groups.set(key, group);
+  }
+  return [...groups.values()];
+}
+
+function sumByDomain(shares: readonly StructureShare[]): Map<string, Float64Array> {
+  const sums = new Map<string, Float64Array>();
+  for (const { domain, vector } of shares) {
+    const sum = sums.get(domain);
+    if (sum) addScaled(sum, vector, 1, 0);
+    else sums.set(domain, vector.slice());
+  }
+  return sums;
+}
+
+function solved(solver: StructureSolver, vector: Float64Array): Float64Array {
+  const re = vector.filter((_, i) => i % 2 === 0);
+  const im = vector.filter((_, i) => i % 2 === 1);
+  solver.solveInPlace(re, im);
+  return interleaved({ re, im });
+}

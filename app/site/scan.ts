@@ -1,5 +1,5 @@
 import type { FieldTerms } from '../fields/element-field.ts';
-import type { Radiator } from '../fields/element-set.ts';
+import type { ElementSet, Radiator } from '../fields/element-set.ts';
 import { addSample, cylinderPlan, fieldOnCylinder, groupByElements, SAMPLE_STRIDE } from './cylinder-field.ts';
 import { findMaximum, type ScanMaximum } from './find-maximum.ts';
 import type { Box } from './moment-grid.ts';
@@ -74,3 +74,30 @@ export const fieldAtAntenna = (
   heightM: number,
   request: ScanRequest,
 ): readonly [re: number, im: number] => fieldsAtAntenna([radiators], component, angleRad, heightM, request)[0]!;
+
+/** The field of each element of a set for 1 A on it, alone: re, im per element, V/m per A. */
+export function unitFieldsAtAntenna(
+  elements: ElementSet,
+  component: Component,
+  angleRad: number,
+  heightM: number,
+  { kPerM, scanRadiusM, site, terms = 'all' }: ScanRequest,
+): Float64Array {
+  const out = new Float64Array(2 * elements.count);
+  const offset = component === 'horizontal' ? 0 : 2;
+  const sample = [new Float64Array(SAMPLE_STRIDE)];
+  const moments = new Float64Array(6);
+  for (const sign of site === 'ground-plane' ? [1, -1] : [1]) {
+    const place = { kPerM, radiusM: scanRadiusM, angleRad, zM: sign * heightM, referenceM: 0, factor: 1, terms };
+    const kept = component === 'horizontal' ? sign : 1;
+    for (let e = 0; e < elements.count; e++) {
+      for (let axis = 0; axis < 3; axis++) moments[2 * axis] = elements.vectorsM[3 * e + axis]!;
+      sample[0]!.fill(0);
+      const positionsM = elements.positionsM.subarray(3 * e, 3 * e + 3);
+      addSample({ positionsM, shares: [{ domain: 0, moments }] }, place, sample, 0);
+      out[2 * e]! += kept * sample[0]![offset]!;
+      out[2 * e + 1]! += kept * sample[0]![offset + 1]!;
+    }
+  }
+  return out;
+}

@@ -2,21 +2,27 @@ import { writeFileSync } from 'node:fs';
 import { cpus, totalmem } from 'node:os';
 import type { BenchResult } from './bench-result.ts';
 import { scanBench } from './scan-bench.ts';
+import { largeStructureBench, smallStructureBench } from './structure-bench.ts';
 
-const BENCHES: readonly (() => BenchResult)[] = [scanBench];
+const BENCHES: readonly (() => BenchResult | Promise<BenchResult>)[] = [
+  scanBench,
+  smallStructureBench,
+  largeStructureBench,
+];
 
-function main(): void {
+async function main(): Promise<void> {
   const at = process.argv.indexOf('--json');
   const file = at >= 0 ? process.argv[at + 1] : undefined;
   if (at >= 0 && !file) {
     console.error('bench: --json needs a file name, or - for standard output');
     process.exit(2);
   }
-  const results = BENCHES.map((bench) => {
-    const result = bench();
+  const results: BenchResult[] = [];
+  for (const bench of BENCHES) {
+    const result = await bench();
     if (file !== '-') print(result);
-    return result;
-  });
+    results.push(result);
+  }
   const report = {
     machine: {
       node: process.version,
@@ -37,4 +43,4 @@ function print({ name, seconds, ratio, peakMb, detail }: BenchResult): void {
   for (const [key, value] of Object.entries(detail)) console.log(`  ${key}: ${value}`);
 }
 
-main();
+await main();

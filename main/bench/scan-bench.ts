@@ -36,7 +36,7 @@ export function scanBench(): BenchResult {
   let worstDb = 0;
   let evaluations = 0;
   for (const [i, lines] of table.entries()) {
-    const parts = radiatingParts(scene, lines, null);
+    const parts = radiatingParts(scene, lines);
     const kPerM = (2 * Math.PI * lines.frequencyHz) / SPEED_OF_LIGHT_M_PER_S;
     const domains = [...new Set(parts.map(({ domain }) => domain))].map((domain) =>
       parts.filter((part) => part.domain === domain).map(({ radiator }) => radiator),

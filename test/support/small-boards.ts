@@ -21,7 +21,7 @@ export function radiatorsAt(board: Board, frequencyHz: number): { scene: Scene; 
   const site = { kind: 'ground-plane', distanceM: 3, measuredFrom: 'boundary', orientation: 'flat' } as const;
   const scene = buildScene(board, site, Math.max(frequencyHz, 1e9), 'pair-only');
   const lines = spectrumTable(board, frequencyHz * 0.999, frequencyHz * 1.001, [])[0]!;
-  return { scene, radiators: radiatingParts(scene, lines, null).map(({ radiator }) => radiator) };
+  return { scene, radiators: radiatingParts(scene, lines).map(({ radiator }) => radiator) };
 }
 
 /** Σ I·dl and Σ |I·dl| of radiators: [x re, x im, y re, y im, z re, z im], A·m. */
