@@ -1,8 +1,9 @@
 import type { LimitSet } from '../limits/choose.ts';
 import { bandwidthHz, combineInBandwidth } from '../receiver/combine.ts';
+import { peakFieldToDbuvPerM, rmsFieldToDbuvPerM } from '../units/convert.ts';
+import { finiteLevelDbuvPerM } from './finite-level.ts';
 import type { LineLevel } from './line-level.ts';
 import type { ResultPoint } from './result.ts';
-import { writtenLevelDbuvPerM } from './written-level.ts';
 
 export interface JudgedPoints {
   /** Worst margin first, ties by frequency. */
@@ -35,7 +36,7 @@ export function judge(levels: readonly LineLevel[], limits: LimitSet): JudgedPoi
     if (reading.count > 1) sharedHz.push(frequencyHz);
     for (const { detector, limitDbuvPerM } of judged) {
       const readRmsVPerM = detector === 'average' ? reading.averageRms : reading.peakRms;
-      const levelDbuvPerM = writtenLevelDbuvPerM(readRmsVPerM * Math.SQRT2);
+      const levelDbuvPerM = finiteLevelDbuvPerM(rmsFieldToDbuvPerM(readRmsVPerM));
       points.push({
         frequencyHz,
         detector,
@@ -45,9 +46,9 @@ export function judge(levels: readonly LineLevel[], limits: LimitSet): JudgedPoi
         polarization: level.polarization,
         antennaHeightM: level.antennaHeightM,
         turntableDeg: level.turntableDeg,
-        horizontalDbuvPerM: writtenLevelDbuvPerM(level.horizontalVPerM),
-        verticalDbuvPerM: writtenLevelDbuvPerM(level.verticalVPerM),
-        upperBoundDbuvPerM: writtenLevelDbuvPerM(upperBoundVPerM),
+        horizontalDbuvPerM: finiteLevelDbuvPerM(peakFieldToDbuvPerM(level.horizontalVPerM)),
+        verticalDbuvPerM: finiteLevelDbuvPerM(peakFieldToDbuvPerM(level.verticalVPerM)),
+        upperBoundDbuvPerM: finiteLevelDbuvPerM(peakFieldToDbuvPerM(upperBoundVPerM)),
         contributors: level.contributors,
       });
     }
