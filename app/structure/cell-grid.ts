@@ -7,8 +7,8 @@ const USUAL_CELL_M = 5e-3;
 /** Cells per wavelength, and across the smaller side of the planes, at least. */
 const CELLS_PER_WAVELENGTH = 20;
 const CELLS_ACROSS = 6;
-/** Cells at most: twice as many unknowns, 16 bytes each squared, about 0.2 GB of matrices. */
-const MOST_CELLS = 1300;
+/** Cells at most, so that a factorisation stays under a second; a large board gets larger cells (cellMm overrides). */
+const MOST_CELLS = 460;
 
 /**
  * Square cells over the planes' bounding box: as large as wavelength and outline allow, as small as memory must have it, and

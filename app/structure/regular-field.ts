@@ -137,9 +137,26 @@ const centreOf = (centresM: Float64Array, index: number): Point3M => [
   centresM[3 * index + 2]!,
 ];
 
+/** From this many times their sizes apart, 1/R between the middles stands for the mean: (size/R)²/24 below 1e-3. */
+const FAR_SIZES = 7;
+
+/** 1/R between the middles when they are far against the filament and the target's size, else null. */
+function farInverse(centresM: Float64Array, target: number, sizeM: number, { from, to }: Filament): number | null {
+  const distanceM = Math.hypot(
+    centresM[3 * target]! - (from[0] + to[0]) / 2,
+    centresM[3 * target + 1]! - (from[1] + to[1]) / 2,
+    centresM[3 * target + 2]! - (from[2] + to[2]) / 2,
+  );
+  const lengthM = Math.hypot(to[0] - from[0], to[1] - from[1], to[2] - from[2]);
+  return distanceM > FAR_SIZES * Math.max(lengthM, sizeM) ? 1 / distanceM : null;
+}
+
 /** Static mean of 1/R between a filament and the patch or wire piece of an edge. */
 function meanToEdge(mesh: Mesh, edge: number, source: Filament): number {
-  const { firstWireEdge, wirePieces, edgeCentreM, sheet } = mesh;
+  const { firstWireEdge, wirePieces, edgeCentreM, edgeVectorM, sheet } = mesh;
+  const sizeM = Math.hypot(edgeVectorM[3 * edge]!, edgeVectorM[3 * edge + 1]!, edgeVectorM[3 * edge + 2]!);
+  const far = farInverse(edgeCentreM, edge, sizeM, source);
+  if (far !== null) return far;
   if (edge < firstWireEdge) {
     return meanInverseOfSquareAndFilament(centreOf(edgeCentreM, edge), sheet.grid.cellM, source, 0);
   }
@@ -154,6 +171,12 @@ function meanToNode(mesh: Mesh, node: number, source: Filament): number {
     return meanInverseOfSquareAndFilament(centreOf(nodeCentreM, node), sheet.grid.cellM, source, 0);
   }
   const { halves, radiusM } = wireNodes[node - sheet.cellCount]!;
+  const sizeM = halves.reduce(
+    (most, { from, to }) => Math.max(most, Math.hypot(to[0] - from[0], to[1] - from[1], to[2] - from[2])),
+    0,
+  );
+  const far = halves.length === 1 ? farInverse(nodeCentreM, node, sizeM, source) : null;
+  if (far !== null) return far;
   let sum = 0;
   let total = 0;
   for (const half of halves) {
