@@ -1,4 +1,5 @@
 import { peakFieldToDbuvPerM } from '../units/convert.ts';
+import { finiteLevelDbuvPerM } from './finite-level.ts';
 import type { Contributor } from './result.ts';
 
 /** Field at the antenna of one contributor in one domain through one path, peak phasor, V/m. */
@@ -11,8 +12,8 @@ export interface PathField {
   readonly im: number;
 }
 
-/** Phasors add within a domain, powers between domains. V/m. */
-export function magnitude(fields: readonly Pick<PathField, 'domain' | 're' | 'im'>[]): number {
+/** Magnitude of each domain's sum: phasors add within a domain. V/m. */
+function domainMagnitudes(fields: readonly PathField[]): number[] {
   const sums = new Map<string, [number, number]>();
   for (const { domain, re, im } of fields) {
     const sum = sums.get(domain) ?? [0, 0];
@@ -20,12 +21,13 @@ export function magnitude(fields: readonly Pick<PathField, 'domain' | 're' | 'im
     sum[1] += im;
     sums.set(domain, sum);
   }
-  let power = 0;
-  for (const [re, im] of sums.values()) power += re * re + im * im;
-  return Math.sqrt(power);
+  return [...sums.values()].map(([re, im]) => Math.hypot(re, im));
 }
 
-/** Contributors with their paths, strongest first, and the linear sum of their fields (V/m). */
+/** Phasors add within a domain, powers between domains. V/m. */
+const magnitude = (fields: readonly PathField[]): number => Math.hypot(...domainMagnitudes(fields));
+
+/** Contributors with their paths, strongest first, and the linear sum of their fields in every domain (V/m). */
 export function contributorsOf(fields: readonly PathField[]): { contributors: Contributor[]; linearSumVPerM: number } {
   const groups = new Map<string, PathField[]>();
   for (const field of fields) {
@@ -36,20 +38,27 @@ export function contributorsOf(fields: readonly PathField[]): { contributors: Co
   }
   const found = [...groups.values()].map((own) => {
     const { kind, name } = own[0]!;
-    const fieldVPerM = magnitude(own);
+    const domains = domainMagnitudes(own);
+    const fieldVPerM = Math.hypot(...domains);
     const viaDbuvPerM = Object.fromEntries(
       [...new Set(own.map(({ via }) => via))].map((via) => [
         via,
-        peakFieldToDbuvPerM(magnitude(own.filter((field) => field.via === via))),
+        levelOf(magnitude(own.filter((field) => field.via === via))),
       ]),
     );
-    return { contributor: { kind, name, levelDbuvPerM: peakFieldToDbuvPerM(fieldVPerM), viaDbuvPerM }, fieldVPerM };
+    return {
+      contributor: { kind, name, levelDbuvPerM: levelOf(fieldVPerM), viaDbuvPerM },
+      fieldVPerM,
+      linearSumVPerM: domains.reduce((sum, field) => sum + field, 0),
+    };
   });
   found.sort(
     (one, other) => other.fieldVPerM - one.fieldVPerM || (one.contributor.name < other.contributor.name ? -1 : 1),
   );
   return {
     contributors: found.map(({ contributor }) => contributor),
-    linearSumVPerM: found.reduce((sum, { fieldVPerM }) => sum + fieldVPerM, 0),
+    linearSumVPerM: found.reduce((sum, { linearSumVPerM }) => sum + linearSumVPerM, 0),
   };
 }
+
+const levelOf = (fieldVPerM: number): number => finiteLevelDbuvPerM(peakFieldToDbuvPerM(fieldVPerM));

@@ -20,15 +20,15 @@ export interface LineLevel {
   readonly fieldVPerM: number;
   readonly horizontalVPerM: number;
   readonly verticalVPerM: number;
-  /** Linear sum of all contributors at the maximum. */
+  /** Linear sum of all contributors in all domains at the maximum. */
   readonly upperBoundVPerM: number;
   readonly contributors: readonly Contributor[];
   /** The structure's currents are interpolated with more error than allowed. */
   readonly isRough: boolean;
 }
 
-/** The ground-plane site ends here; above, the test is done in free space (absorber on the floor). */
-const GROUND_SITE_MAX_HZ = 1e9;
+/** The ground-plane site ends here (a harmonic m·f0 is rounded); above, the test is done in free space (absorber on the floor). */
+const GROUND_SITE_MAX_HZ = 1e9 * (1 + 1e-9);
 
 export const siteAt = (scene: Scene, frequencyHz: number): SiteKind =>
   frequencyHz > GROUND_SITE_MAX_HZ ? 'free-space' : scene.site.kind;
