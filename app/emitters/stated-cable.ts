@@ -1,4 +1,4 @@
-import type { Cable } from '../board/board.ts';
+import type { Cable, Point3M } from '../board/board.ts';
 import { inputError } from '../errors.ts';
 import { type SiteFrame, type SiteKind, TABLE_HEIGHT_M, toSitePoint } from '../site/site.ts';
 import { ETA0_OHM, SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
@@ -6,16 +6,21 @@ import { elementsAlong, type StraightElements } from './straight-elements.ts';
 
 /** The last point of a grounded cable must be this close to the site's ground, m. */
 const GROUND_TOLERANCE_M = 1e-3;
+/** Legs that rise less than this per length count as level. */
+const LEVEL_SLOPE = 1e-6;
+/** A wire that lies on the ground is no wire over it: 60 Ω. */
+const LEAST_LOGARITHM = 1;
 
 /** A cable whose common-mode current is stated (measured by a clamp, or assumed). */
 export interface StatedCable {
   readonly name: string;
   readonly along: StraightElements;
   readonly table: NonNullable<Cable['commonModeRms']>;
-  /** Reflection of the current wave's voltage at the far end: 1 open, −1 grounded. */
+  /** Reflection of the wave's voltage at the far end: 1 open, −1 grounded. */
   readonly farReflection: number;
 }
 
+/** Throws `input` for points below the ground plane, and for an end joined to a ground that is not there. */
 export function buildStatedCable(cable: Cable, frame: SiteFrame, site: SiteKind, maxHz: number): StatedCable {
   const sitePoints = cable.pointsM.map((point) => toSitePoint(frame, point));
   const endZM = sitePoints.at(-1)![2];
@@ -29,9 +34,10 @@ export function buildStatedCable(cable: Cable, frame: SiteFrame, site: SiteKind,
       );
     }
   }
-  if (cable.farEnd === 'ground') {
+  if (cable.farEnd !== 'open') {
     if (site !== 'ground-plane') {
-      throw inputError(`cable ${cable.name}: farEnd`, 'open in free space, where there is no ground to join', 'ground');
+      const received = cable.farEnd === 'ground' ? 'ground' : `a resistance of ${cable.farEnd.resistanceOhm} Ω to it`;
+      throw inputError(`cable ${cable.name}: farEnd`, 'open in free space, where there is no ground to join', received);
     }
     if (Math.abs(endZM) > GROUND_TOLERANCE_M) {
       throw inputError(
@@ -46,16 +52,38 @@ export function buildStatedCable(cable: Cable, frame: SiteFrame, site: SiteKind,
     name: cable.name,
     along,
     table: cable.commonModeRms ?? [],
-    farReflection: farReflection(cable, endZM),
+    farReflection: farReflection(cable, sitePoints),
   };
 }
 
-/** A wire over ground at height H: Z = (η0/2π)·acosh(H/radius) (Pozar, Microwave Engineering, table 2.1, by imaging). */
-function farReflection({ farEnd, radiusM }: Cable, endZM: number): number {
+/** Reflection of the wave's voltage at the far end, Γ = (R − Z)/(R + Z), Z the mean impedance of the wire over ground. */
+function farReflection({ farEnd, radiusM }: Cable, sitePoints: readonly Point3M[]): number {
   if (farEnd === 'open') return 1;
   if (farEnd === 'ground') return -1;
-  const waveOhm = (ETA0_OHM / (2 * Math.PI)) * Math.acosh(Math.max(2, endZM / radiusM));
+  const waveOhm = meanWaveOhm(sitePoints, radiusM);
   return (farEnd.resistanceOhm - waveOhm) / (farEnd.resistanceOhm + waveOhm);
+}
+
+/**
+ * Mean over the cable of Z = (η0/2π) ln(2z/a), z the height over ground, a the radius; per straight leg in closed form,
+ * since ∫ ln(2z/a) dz = z (ln(2z/a) − 1). A vertical wire on the ground has 60 Ω·(ln(2h/a) − 1) so.
+ * Source: the mean characteristic impedance of antennas, S. A. Schelkunoff, Electromagnetic Waves, chapter 11.
+ */
+function meanWaveOhm(sitePoints: readonly Point3M[], radiusM: number): number {
+  const integral = (zM: number) => (zM > 0 ? zM * (Math.log((2 * zM) / radiusM) - 1) : 0);
+  let sum = 0;
+  let lengthM = 0;
+  for (let leg = 1; leg < sitePoints.length; leg++) {
+    const [x1, y1, z1] = sitePoints[leg - 1]!;
+    const [x2, y2, z2] = sitePoints[leg]!;
+    const legM = Math.hypot(x2 - x1, y2 - y1, z2 - z1);
+    const riseM = z2 - z1;
+    const isLevel = Math.abs(riseM) < LEVEL_SLOPE * legM;
+    const mean = isLevel ? Math.log(Math.max(radiusM, z1 + z2) / radiusM) : (integral(z2) - integral(z1)) / riseM;
+    sum += legM * mean;
+    lengthM += legM;
+  }
+  return (ETA0_OHM / (2 * Math.PI)) * Math.max(LEAST_LOGARITHM, sum / lengthM);
 }
 
 /** Stated current (rms, A) at a frequency, linear over log frequency between the points; 0 outside them. */
