@@ -1,22 +1,32 @@
 import type { Contributor, EstimateResult, ResultPoint } from '../estimate/result.ts';
 import { mainContributor } from './contributor-text.ts';
 import { type Cell, csvText } from './csv-text.ts';
+import { inListOrder, type Mechanism, MechanismList, mechanismText } from './mechanisms.ts';
+import { mechanismLevels } from './radiation.ts';
 import { standingOf } from './verdict.ts';
 
 /**
  * The points as a table for a spreadsheet (`csvText`).
- * One row a point, worst margin first; after the fixed columns one column a contributor with its level at that point,
- * empty where it has none. Numbers are unrounded; what is not finite is an empty cell. Text that a spreadsheet would
- * take for a formula gets a leading apostrophe. Where a contributor radiates from stands in the JSON result.
+ * One row a point, worst margin first; after the fixed columns one column a mechanism with what all contributors radiate
+ * through it (added as powers), then one a contributor with its level at that point; empty where there is none. Numbers are unrounded; what is not finite is an empty cell. Text that a spreadsheet would
+ * take for a formula gets a leading apostrophe. Each contributor's own paths stand in the JSON result.
  */
 export function csvReport(result: EstimateResult): string {
   const contributors = contributorColumns(result.points);
+  const list = new MechanismList();
+  const byMechanism = result.points.map((point) => mechanismLevels(point, list));
+  const mechanisms = [...new Set(byMechanism.flatMap((levels) => [...levels.keys()]))].sort(inListOrder);
   const rows: Cell[][] = [
-    [...FIXED_COLUMNS.map(([head]) => head), ...contributors.map(({ kind, name }) => `${kind} ${name} (dBuV/m)`)],
-    ...result.points.map((point) => {
+    [
+      ...FIXED_COLUMNS.map(([head]) => head),
+      ...mechanisms.map((mechanism) => `via ${mechanismHead(mechanism)} (dBuV/m)`),
+      ...contributors.map(({ kind, name }) => `${kind} ${name} (dBuV/m)`),
+    ],
+    ...result.points.map((point, i) => {
       const levels = new Map(point.contributors.map((each) => [keyOf(each), each.levelDbuvPerM]));
       return [
         ...FIXED_COLUMNS.map(([, cell]) => cell(point, result)),
+        ...mechanisms.map((mechanism) => byMechanism[i]!.get(mechanism) ?? ''),
         ...contributors.map((column) => levels.get(keyOf(column)) ?? ''),
       ];
     }),
@@ -41,6 +51,8 @@ const FIXED_COLUMNS: readonly (readonly [head: string, cell: (point: ResultPoint
     ['main contributor', (point) => mainContributor(point)?.contributor.name ?? ''],
     ['radiates mainly from', (point) => mainContributor(point)?.path?.name ?? ''],
   ];
+
+const mechanismHead = (mechanism: Mechanism): string => mechanismText(mechanism, (name) => `cable ${name}`);
 
 const keyOf = ({ kind, name }: Contributor): string => JSON.stringify([kind, name]);
 

@@ -49,6 +49,14 @@ export function rangeText(fromHz: number, toHz: number): string {
   return fromHz === toHz ? frequencyText(fromHz) : `${frequencyText(fromHz)}–${frequencyText(toHz)}`;
 }
 
+/** A band of the spectrum, its unit once where both ends share it: "30–210 MHz", "640 MHz–1 GHz". */
+export function bandText(fromHz: number, toHz: number): string {
+  const [from, to] = [frequencyText(fromHz), frequencyText(toHz)];
+  if (from === to) return from;
+  const [number, unit] = from.split(' ');
+  return to.endsWith(` ${unit}`) ? `${number}–${to}` : `${from}–${to}`;
+}
+
 const PREFIXES: readonly (readonly [factor: number, prefix: string])[] = [
   [1e9, 'G'],
   [1e6, 'M'],

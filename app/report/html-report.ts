@@ -5,7 +5,9 @@ import { Markup, markup, shortName } from './markup.ts';
 import { boardSection } from './sections/board-section.ts';
 import { findingsSection, modelSection } from './sections/caveats-section.ts';
 import { closingSection } from './sections/closing-section.ts';
+import { currentsSection } from './sections/currents-section.ts';
 import { pointsSection } from './sections/points-section.ts';
+import { radiationSection } from './sections/radiation-section.ts';
 import { setupSection } from './sections/setup-section.ts';
 import { sharesSection } from './sections/shares-section.ts';
 import { sourcesSection } from './sections/sources-section.ts';
@@ -41,9 +43,11 @@ export function htmlReport(
 ${titleSection(result, board, options.dateText)}
 ${verdictSection(result)}
 ${spectrumSection(result, limitLines)}
+${radiationSection(result, limitLines)}
 ${boardSection(board, result)}
 ${pointsSection(result)}
 ${sharesSection(result)}
+${currentsSection(result, board)}
 ${findingsSection(result)}
 ${setupSection(board, result, limitLines)}
 ${sourcesSection(board)}

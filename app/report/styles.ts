@@ -1,7 +1,9 @@
+import { LEVEL_COLOURS, LEVEL_STYLES, levelVariables } from './figures/level-colours.ts';
+
 /** Style of the report: one sheet, no font or picture from outside. Colours are Okabe–Ito; print is forced to the light set. */
 
-const LIGHT = `--paper:#fff;--ink:#16191d;--quiet:#5c646d;--hair:#c9ced4;--grid:#e3e6ea;--plane:#ececec;--copper:#bfc3c8;--over:#d55e00;--short:#b87700;--short-fill:#e69f00;--h:#0072b2;--v:#009e73;--loop:#a3457a;--bar:#5a6570;--bar-path:#9aa3ad;--bar-back:#eef0f2`;
-const DARK = `--paper:#14171a;--ink:#e4e7ea;--quiet:#98a1ab;--hair:#3d444c;--grid:#272c32;--plane:#22272c;--copper:#4a525b;--over:#ff8a3c;--short:#e69f00;--short-fill:#e69f00;--h:#56b4e9;--v:#2fc79b;--loop:#d995ba;--bar:#aab3bd;--bar-path:#6c7681;--bar-back:#23282d`;
+const LIGHT = `--paper:#fff;--ink:#16191d;--quiet:#5c646d;--hair:#c9ced4;--grid:#e3e6ea;--plane:#ececec;--copper:#bfc3c8;--over:#d55e00;--short:#b87700;--short-fill:#e69f00;--h:#0072b2;--v:#009e73;--loop:#a3457a;--bar:#5a6570;--bar-path:#9aa3ad;--bar-back:#eef0f2;${levelVariables(LEVEL_COLOURS)}`;
+const DARK = `--paper:#14171a;--ink:#e4e7ea;--quiet:#98a1ab;--hair:#3d444c;--grid:#272c32;--plane:#22272c;--copper:#4a525b;--over:#ff8a3c;--short:#e69f00;--short-fill:#e69f00;--h:#56b4e9;--v:#2fc79b;--loop:#d995ba;--bar:#aab3bd;--bar-path:#6c7681;--bar-back:#23282d;${levelVariables(LEVEL_COLOURS.toReversed())}`;
 
 const PAGE = `
 *{box-sizing:border-box}
@@ -44,6 +46,7 @@ th:last-child,td:last-child{padding-right:0}
 .points td:first-child{width:18px;padding-right:4px}
 .points td:last-child{min-width:150px}
 .points th,.points td{padding-right:9px}
+.bands{margin-top:10px}
 .narrow{width:auto;min-width:360px;margin-top:10px}
 .shares{columns:2;column-gap:28px}
 .share{break-inside:avoid;margin:0 0 14px}
@@ -112,9 +115,21 @@ const FIGURE = `
 .boom{stroke:var(--ink);stroke-width:.8}
 .antenna-dot,.arrow-head{fill:var(--over)}
 .arrow{stroke:var(--over);stroke-width:1.4}
+.stack,.limit-line,.ruling-band,.casing,.over-line,.cable-current{fill:none}
+.stack.other{stroke:var(--bar-path);stroke-width:1.1}
+.stack.ruling{stroke:var(--ink);stroke-width:1.9}
+.limit-line{stroke:var(--over);stroke-width:.9}
+.ruling-band{stroke:var(--ink);stroke-width:3.4}
+.casing{stroke:var(--paper);stroke-width:4.4;stroke-linejoin:round;stroke-linecap:round}
+.over-line{stroke:var(--ink);stroke-width:1.8;stroke-linejoin:round;stroke-linecap:round}
+.cable-joint.rimmed{stroke:var(--paper);stroke-width:1.2}
+.cable-area{fill:var(--bar-back)}
+.cable-current{stroke:var(--h);stroke-width:1.7;stroke-linejoin:round}
+.far-end{fill:var(--paper);stroke:var(--ink);stroke-width:1.3}
 .bar-back{fill:var(--bar-back)}
 .bar-whole{fill:var(--bar)}
-.bar-path{fill:var(--bar-path)}`;
+.bar-path{fill:var(--bar-path)}
+${LEVEL_STYLES}`;
 
 const PRINT = `
 @page{size:A4;margin:14mm 14mm 16mm;@bottom-right{content:counter(page) " / " counter(pages);font:8pt "Helvetica Neue",Arial,"Liberation Sans",sans-serif;color:#5c646d}}

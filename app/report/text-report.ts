@@ -2,6 +2,9 @@ import type { EstimateResult } from '../estimate/result.ts';
 import { CAUTIONS_SHORT, DEFERENCE } from './cautions.ts';
 import { byCode, groupCaveats } from './caveat-groups.ts';
 import { countText, fixed, frequencyText, levelText, placeText, rangeText, trimmed } from './format.ts';
+import { radiationOf } from './radiation.ts';
+import { bandsText, unsolvedText } from './rules-text.ts';
+import { rulingBands } from './ruling-bands.ts';
 import { safeTerminalText, terminalWidth, visibleText } from './safe-text.ts';
 import { pointTable, TABLE_UNITS } from './text-table.ts';
 import { limitName, readingsText, standingsText, verdictText, worstText } from './verdict.ts';
@@ -17,6 +20,8 @@ export interface TextReportOptions {
 /** Places named per caveat, findings listed: the rest is counted. */
 const PLACES_SHOWN = 4;
 const FINDINGS_SHOWN = 8;
+/** Bands of the spectrum named. */
+const BANDS_SHOWN = 5;
 const NAME_WIDTH = 24;
 
 /** The result for a terminal: at most 80 columns, no control characters, rounded to 0.1 dB. Ends with a line feed. */
@@ -72,9 +77,20 @@ function table(result: EstimateResult, top: number, width: number): string[] {
   const left = result.points.length - shown.length;
   return [
     ...wrapText(`${readingsText(result.points)}: ${standingsText(result)}.`, width),
+    ...rules(result, width),
     ...(shown.length > 0 ? [...wrapText(TABLE_UNITS, width), '', ...pointTable(shown, result, width)] : []),
     ...(left > 0 && shown.length > 0 ? [`${left} more, with larger margins`] : []),
   ];
+}
+
+/** Which mechanism is the strongest in which band. */
+function rules(result: EstimateResult, width: number): string[] {
+  const radiation = radiationOf(result);
+  const bands = rulingBands(radiation);
+  if (bands.length === 0) return [];
+  const unsolved = unsolvedText(radiation);
+  const text = bandsText(bands, BANDS_SHOWN, (name) => safeTerminalText(name, NAME_WIDTH));
+  return wrapText(`What rules: ${text}${unsolved === '' ? '' : ` (${unsolved})`}`, width, '', '  ');
 }
 
 function caveats(result: EstimateResult, width: number): string[] {

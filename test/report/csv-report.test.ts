@@ -59,6 +59,28 @@ describe('csvReport', () => {
     }
   });
 
+  it('has a column for each mechanism: the contributors’ shares of it added as powers', () => {
+    const result = sampleResult();
+    const [head, ...rows] = parseCsv(csvReport(result));
+    const heads = head!.filter((title) => title.startsWith('via '));
+    expect(heads).toEqual([
+      'via trace pairs (dBuV/m)',
+      'via current loops (dBuV/m)',
+      'via plane (dBuV/m)',
+      'via cable damper cable (dBuV/m)',
+      'via cable sensor cable (stated current) (dBuV/m)',
+    ]);
+    const column = head!.indexOf('via plane (dBuV/m)');
+    for (const [i, row] of rows.entries()) {
+      const power = result.points[i]!.contributors.reduce(
+        (sum, { viaDbuvPerM }) => sum + 10 ** ((viaDbuvPerM.plane ?? -Infinity) / 10),
+        0,
+      );
+      expect(Number(row[column])).toBeCloseTo(10 * Math.log10(power), 9);
+      expect(row[head!.indexOf(heads[4]!)] === '').toBe(result.points[i]!.frequencyHz > 300e6);
+    }
+  });
+
   it('leaves a contributor that a point does not have empty', () => {
     const result = sampleResult();
     const [head, ...rows] = parseCsv(csvReport(result));

@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import type { EstimateResult } from '../../app/estimate/result.ts';
 import { terminalWidth } from '../../app/report/safe-text.ts';
 import { textReport } from '../../app/report/text-report.ts';
 import { wrapText } from '../../app/report/wrap.ts';
@@ -20,6 +21,20 @@ describe('textReport', () => {
     expect(text).toContain('CLK_25M at (56.75, 33.2) mm on L4 BOT');
     expect(text.replace(/\s+/g, ' ')).toContain('An estimate, not a measurement');
     expect(text.replace(/\s+/g, ' ')).toContain('Compliance is decided by the text of the standard in force');
+  });
+
+  it('says in one line which mechanism rules in which band, and whether planes and cables were solved', () => {
+    const result = sampleResult();
+    const lines = (each: EstimateResult) => textReport(each, { top: 5, width: 80 }).split('\n');
+    expect(lines(result)).toContain('What rules: 50–160 MHz damper cable; 160 MHz–1 GHz plane');
+    const points = result.points.map((point) => ({
+      ...point,
+      contributors: [{ kind: 'net' as const, name: 'CLK', levelDbuvPerM: 40, viaDbuvPerM: { pair: 40 } }],
+    }));
+    expect(lines({ ...result, points, structure: 'pair-only' })).toContain(
+      'What rules: 50 MHz–1 GHz trace pairs (planes and cables not solved)',
+    );
+    expect(lines(emptyResult()).join(' ')).not.toContain('What rules');
   });
 
   it('prints the worst point first, rounded to 0.1 dB, in aligned columns', () => {

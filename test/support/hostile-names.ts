@@ -50,6 +50,10 @@ export function hostileResult(): EstimateResult {
       atM: [0.01 * (i % 7), 0.005 * i],
     })),
     notes: HOSTILE_NAMES,
+    currentMaps: sample.currentMaps!.map((map, m) => ({
+      ...map,
+      cables: HOSTILE_NAMES.map((name, i) => ({ ...map.cables[(i + m) % map.cables.length]!, name })),
+    })),
   };
 }
 

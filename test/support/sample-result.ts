@@ -1,5 +1,6 @@
 import type { Contributor, Detector, EstimateResult, ResultPoint, Verdict } from '../../app/estimate/result.ts';
 import { CAUTIONS } from '../../app/report/cautions.ts';
+import { sampleCurrentMap } from './sample-current-map.ts';
 
 /**
  * Invented results for tests of reports: shaped as an estimate shapes them (order, signs, levels that add up), but no
@@ -40,7 +41,7 @@ function pointAt(frequencyHz: number, detector: Detector, limitDbuvPerM: number,
       kind: 'loop',
       name: 'converter loop',
       levelDbuvPerM: 22 - 30 * Math.log10(mhz / 30),
-      viaDbuvPerM: { pair: 22 - 30 * Math.log10(mhz / 30) },
+      viaDbuvPerM: { loop: 22 - 30 * Math.log10(mhz / 30) },
     },
   ];
   if (mhz <= 300) {
@@ -105,7 +106,7 @@ export function sampleResult(): EstimateResult {
     const frequencyHz = 25e6 * (i + 2);
     return pointAt(frequencyHz, 'quasi-peak', quasiPeakLimit(frequencyHz));
   });
-  return resultWith(points);
+  return resultWith(points, { currentMaps: [125e6, 375e6, 75e6].map((hz) => sampleCurrentMap(hz)) });
 }
 
 /** As many readings as asked for, evenly spaced to 1 GHz and beyond it with average and peak. */

@@ -131,7 +131,8 @@ function labels(board: Board, result: EstimateResult, driven: readonly Net[], fr
   )}`;
 }
 
-function middleOfLongestPiece({ traces }: Net): PointM | undefined {
+/** Where a net's name is put first. */
+export function middleOfLongestPiece({ traces }: Net): PointM | undefined {
   let longest = -1;
   let middle: PointM | undefined;
   for (const { pointsM } of traces) {

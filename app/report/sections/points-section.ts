@@ -1,10 +1,10 @@
 import type { EstimateResult, ResultPoint } from '../../estimate/result.ts';
-import { isItself, mainContributor, pathText } from '../contributor-text.ts';
 import { inlineMark } from '../figures/marks.ts';
 import { fixed, levelText, marginText, mhzText } from '../format.ts';
-import { type Markup, markup, nameMarkup } from '../markup.ts';
+import { type Markup, markup } from '../markup.ts';
 import { DETECTOR_SHORT } from '../text-table.ts';
 import { type Standing, standingOf } from '../verdict.ts';
+import { mainMarkup } from './main-markup.ts';
 import { numberCell } from './number.ts';
 
 /** Rows before the table stops. */
@@ -26,7 +26,6 @@ export function pointsSection(result: EstimateResult): Markup {
 
 function row(point: ResultPoint, requiredMarginDb: number): Markup {
   const standing = standingOf(point, requiredMarginDb);
-  const main = mainContributor(point);
   return markup`<tr><td>${inlineMark(standing, STANDING_WORD[standing])}</td>${numberCell(mhzText(point.frequencyHz))}<td>${DETECTOR_SHORT[point.detector]}</td>${[
     levelText(point.levelDbuvPerM),
     levelText(point.limitDbuvPerM),
@@ -37,7 +36,5 @@ function row(point: ResultPoint, requiredMarginDb: number): Markup {
   ].map(numberCell)}<td>${point.polarization === 'horizontal' ? 'H' : 'V'}</td>${[
     fixed(point.antennaHeightM, 2),
     fixed(point.turntableDeg, 0),
-  ].map(numberCell)}<td>${main && nameMarkup(main.contributor.name, 28)}${
-    main?.path && !isItself(main.contributor, main.path) && markup` via ${nameMarkup(pathText(main.path.name), 24)}`
-  }</td></tr>`;
+  ].map(numberCell)}<td>${mainMarkup(point)}</td></tr>`;
 }

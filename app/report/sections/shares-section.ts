@@ -4,26 +4,21 @@ import { BAR_SPAN_DB, levelBar } from '../figures/bars.ts';
 import { frequencyText, levelText, marginText } from '../format.ts';
 import { type Markup, markup, nameMarkup } from '../markup.ts';
 import { DETECTOR_SHORT } from '../text-table.ts';
+import { worstOfEachFrequency } from '../worst-readings.ts';
 import { printed } from './number.ts';
 
 /** Frequencies taken apart, contributors and paths listed for each. */
 const MOST_FREQUENCIES = 6;
 const MOST_CONTRIBUTORS = 5;
-const MOST_PATHS = 4;
+const MOST_PATHS = 5;
 
 /** What the worst lines are made of: contributor by path, as bars in dB with the law of their sum. */
 export function sharesSection(result: EstimateResult): Markup {
   const worst = worstOfEachFrequency(result.points).slice(0, MOST_FREQUENCIES);
   if (worst.every(({ contributors }) => contributors.length === 0)) return markup``;
   return markup`<section><h2>What the worst lines are made of</h2>
-<p class="note lead">Levels at the height, angle and polarisation of each maximum. Within one clock domain contributors add as phasors (they may cancel: a part can be larger than the sum); different domains add as powers. The paths of one contributor always add as phasors. A full bar is the strongest part, an empty one ${BAR_SPAN_DB} dB below it; what is weaker is not listed.</p>
+<p class="note lead">Levels at the height, angle and polarisation of each maximum. The light bars under a contributor are its paths: trace pair, plane, each cable. Within one clock domain contributors, and the paths of each, add as phasors: they may cancel, so that a part can be larger than the sum; different domains add as powers. A full bar is the strongest part, an empty one ${BAR_SPAN_DB} dB below it; what is weaker is not listed.</p>
 <div class="shares">${worst.map((point) => shareBlock(point))}</div></section>`;
-}
-
-function worstOfEachFrequency(points: readonly ResultPoint[]): ResultPoint[] {
-  const first = new Map<number, ResultPoint>();
-  for (const point of points) if (!first.has(point.frequencyHz)) first.set(point.frequencyHz, point);
-  return [...first.values()];
 }
 
 function shareBlock(point: ResultPoint): Markup {
