@@ -4,7 +4,7 @@ import { upperFrequency } from '../limits/upper-frequency.ts';
 import { fundamentalHz } from '../sources/clock.ts';
 import { hzToMhz } from '../units/convert.ts';
 import type { EstimateRequest } from './estimate-request.ts';
-import { buildScene, type Scene } from './scene.ts';
+import { buildScene, drivenNets, type Scene } from './scene.ts';
 import { type FrequencyLines, spectrumTable } from './spectrum-table.ts';
 
 /** What is judged, what radiates and at which frequencies: everything before the first field is computed. */
@@ -47,7 +47,11 @@ function judgedRange(board: Board, { limits, maxHz }: EstimateRequest): JudgedRa
 
 function requireSources(board: Board): void {
   const stated = board.cables.filter(({ commonModeRms }) => commonModeRms !== undefined);
-  if (board.drives.length + board.loops.length + stated.length > 0) return;
+  if (drivenNets(board).length + board.loops.length + stated.length > 0) return;
+  if (board.drives.length > 0) {
+    const driven = [...new Set(board.drives.map(({ net }) => net))].slice(0, 5).join(', ');
+    throw inputError('drives', 'on at least one net with a trace', driven);
+  }
   const nets = board.nets.filter(({ traces, pins }) => traces.length > 0 && pins.length > 0);
   const examples = nets
     .slice(0, 5)

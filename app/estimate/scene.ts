@@ -1,4 +1,4 @@
-import type { Board } from '../board/board.ts';
+import type { Board, Net } from '../board/board.ts';
 import { buildLoop, type LoopModel } from '../emitters/current-loop.ts';
 import { buildNetModel, type NetModel } from '../emitters/net-model.ts';
 import { buildStatedCable, type StatedCable } from '../emitters/stated-cable.ts';
@@ -37,9 +37,7 @@ export function buildScene(board: Board, site: SiteRequest, maxHz: number, mode:
       : null;
   const context = { board, frame, planes: new PlaneIndex(board), stitches: new StitchIndex(board), structure, maxHz };
   const nets = new Map<string, NetModel>();
-  for (const net of board.nets) {
-    if (board.drives.some((drive) => drive.net === net.name)) nets.set(net.name, buildNetModel(context, net));
-  }
+  for (const net of drivenNets(board)) nets.set(net.name, buildNetModel(context, net));
   const loops = new Map(board.loops.map((loop) => [loop.name, buildLoop(loop, frame, maxHz, structure)]));
   const cables = board.cables
     .filter((cable) => cable.commonModeRms !== undefined)
@@ -49,9 +47,13 @@ export function buildScene(board: Board, site: SiteRequest, maxHz: number, mode:
   if (antennaM <= radiusM) {
     throw inputError('distance', `more than the board's and cables' own radius of ${radiusM.toFixed(2)} m`, antennaM);
   }
-  const boardElements: ElementSet[] = [
-    ...[...nets.values()].map(({ pair }) => pair.elements),
-    ...[...loops.values()].map(({ elements }) => elements),
+  const named: (readonly [path: string, elements: ElementSet])[] = [
+    ...[...nets.values()].map(({ name, pair }) => [`net ${name}`, pair.elements] as const),
+    ...[...loops.values()].map(({ name, elements }) => [`loop ${name}`, elements] as const),
+  ];
+  for (const [path, elements] of named) requireOnSite(path, elements, site, antennaM);
+  const boardElements = [
+    ...named.map(([, elements]) => elements),
     ...(structure ? [structure.parts[0]!.elements] : []),
   ];
   return {
@@ -65,4 +67,27 @@ export function buildScene(board: Board, site: SiteRequest, maxHz: number, mode:
     structure,
     box: boxOf(boardElements.map((elements) => ({ elements, currentsA: new Float64Array(0) }))),
   };
+}
+
+/** Nets that are modelled: driven and drawn. A driven net without a trace radiates nothing by itself. */
+export function drivenNets(board: Board): Net[] {
+  const driven = new Set(board.drives.map(({ net }) => net));
+  return board.nets.filter(({ name, traces }) => traces.length > 0 && driven.has(name));
+}
+
+/** Throws `input` for a source under the ground plane, or as far from the turntable's axis as the antenna. */
+function requireOnSite(path: string, { positionsM }: ElementSet, { kind }: SiteRequest, antennaM: number): void {
+  let lowestM = Infinity;
+  let farthestM = 0;
+  for (let i = 0; i < positionsM.length; i += 3) {
+    lowestM = Math.min(lowestM, positionsM[i + 2]!);
+    farthestM = Math.max(farthestM, Math.hypot(positionsM[i]!, positionsM[i + 1]!));
+  }
+  if (kind === 'ground-plane' && lowestM < 0) {
+    throw inputError(path, 'above the ground plane', `a place ${(-lowestM * 1e3).toFixed(1)} mm below it`);
+  }
+  if (farthestM >= antennaM) {
+    const must = `within ${antennaM.toFixed(2)} m of the turntable axis, where the antenna stands`;
+    throw inputError(path, must, `${farthestM.toFixed(2)} m`);
+  }
 }

@@ -2,6 +2,7 @@ import type { Board } from '../board/board.ts';
 import { inputError } from '../errors.ts';
 import { clockDomainOf } from '../sources/clock.ts';
 import { applyDrive, type LineSpectrum, spectrumOf } from '../sources/spectrum.ts';
+import { drivenNets } from './scene.ts';
 
 /** A source's spectral line: its peak phasor (V or A) and the domain within which phasors add. */
 export interface SourceLine {
@@ -27,7 +28,8 @@ const NEGLIGIBLE = 1e-10;
 const SAME_FREQUENCY = 1e-9;
 
 /**
- * Every spectral line of the board's drives and loops between two frequencies, grouped by frequency, ascending.
+ * Every spectral line of the board's drives (on nets with traces) and loops between two frequencies, grouped by
+ * frequency, ascending.
  * `extraHz` are frequencies that must appear even without lines (points of stated cable currents).
  */
 export function spectrumTable(
@@ -62,8 +64,10 @@ export function spectrumTable(
     }
   };
 
+  const modelled = new Set(drivenNets(board).map(({ name }) => name));
   const driveCounts = new Map<string, number>();
   for (const drive of board.drives) {
+    if (!modelled.has(drive.net)) continue;
     const driveIndex = driveCounts.get(drive.net) ?? 0;
     driveCounts.set(drive.net, driveIndex + 1);
     addSource(drive, { kind: 'net', name: drive.net, driveIndex }, JSON.stringify([drive.net, drive.pin]));
