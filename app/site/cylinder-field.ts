@@ -29,19 +29,19 @@ export function cylinderPlan(
   const box = boxOf(radiators);
   const centreZM = box ? (box.lowM[2] + box.highM[2]) / 2 : 0;
   let sourceRadiusM = 0;
+  let axisRadiusM = 0;
   for (const { elements } of radiators) {
     const { positionsM } = elements;
     for (let e = 0; e < elements.count; e++) {
-      sourceRadiusM = Math.max(
-        sourceRadiusM,
-        Math.hypot(positionsM[3 * e]!, positionsM[3 * e + 1]!, positionsM[3 * e + 2]! - centreZM),
-      );
+      const fromAxisM = Math.hypot(positionsM[3 * e]!, positionsM[3 * e + 1]!);
+      axisRadiusM = Math.max(axisRadiusM, fromAxisM);
+      sourceRadiusM = Math.max(sourceRadiusM, Math.hypot(fromAxisM, positionsM[3 * e + 2]! - centreZM));
     }
   }
   return {
     kPerM,
     radiusM: scanRadiusM,
-    order: angularOrder(kPerM, sourceRadiusM, scanRadiusM),
+    order: angularOrder(kPerM, axisRadiusM, scanRadiusM),
     heightsM: chebyshevNodes(heightCount(kPerM, sourceRadiusM, scanRadiusM), ANTENNA_LOWEST_M, ANTENNA_HIGHEST_M),
     centreZM,
     partCount: site === 'ground-plane' ? 2 : 1,

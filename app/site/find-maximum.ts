@@ -12,6 +12,8 @@ export interface ScanMaximum {
 /** Grid maxima within this factor of the best are refined: 1 dB is what half a grid step can hide at five samples a period. */
 const REFINE_FACTOR = 10 ** -0.1;
 const MAX_CANDIDATES = 16;
+/** Powers closer than this, relative, are equal: rounding does not choose between places that see the same. */
+const SAME_POWER = 1e-9;
 
 /**
  * Maximum of a power map over all angles and the antenna's travel: a grid of about five samples a period of what the
@@ -52,20 +54,22 @@ export function findMaximum(map: PowerMap): ScanMaximum {
       stepAngleRad,
       stepHeightM,
     );
-    if (refined.power > best.power * (1 + 1e-9)) best = refined;
+    if (refined.power > best.power * (1 + SAME_POWER)) best = refined;
   }
   return best;
 }
 
 /** Grid indices that are not below their neighbours and near the best, in order of height, then angle. */
-function candidates(grid: Float64Array, heightCount: number, angleCount: number): number[] {
+function candidates(powers: Float64Array, heightCount: number, angleCount: number): number[] {
   let highest = 0;
-  for (const power of grid) highest = Math.max(highest, power);
+  for (const power of powers) highest = Math.max(highest, power);
+  if (highest === 0) return [0];
+  const grid = powers.map((power) => Math.round(power / (highest * SAME_POWER)));
   const found: number[] = [];
   for (let h = 0; h < heightCount; h++) {
     for (let a = 0; a < angleCount; a++) {
       const here = grid[h * angleCount + a]!;
-      if (here < highest * REFINE_FACTOR) continue;
+      if (here < REFINE_FACTOR / SAME_POWER) continue;
       const left = grid[h * angleCount + ((a + angleCount - 1) % angleCount)]!;
       const right = grid[h * angleCount + ((a + 1) % angleCount)]!;
       const below = h > 0 ? grid[(h - 1) * angleCount + a]! : -Infinity;
@@ -73,7 +77,7 @@ function candidates(grid: Float64Array, heightCount: number, angleCount: number)
       if (here >= left && here >= right && here >= below && here >= above) found.push(h * angleCount + a);
     }
   }
-  if (found.length <= MAX_CANDIDATES) return found.length > 0 ? found : [0];
+  if (found.length <= MAX_CANDIDATES) return found;
   return found
     .sort((one, other) => grid[other]! - grid[one]! || one - other)
     .slice(0, MAX_CANDIDATES)
@@ -94,11 +98,11 @@ function refine(map: PowerMap, startRad: number, startM: number, stepRad: number
   for (let round = 0; round < MOST_ROUNDS; round++) {
     const before = power;
     const byAngle = highest(map.alongAngle(height), angle - stepRad, angle + stepRad);
-    if (byAngle.value > power) [angle, power] = [byAngle.at, byAngle.value];
+    if (byAngle.value > power * (1 + SAME_POWER)) [angle, power] = [byAngle.at, byAngle.value];
     const low = Math.max(ANTENNA_LOWEST_M, height - stepM);
     const high = Math.min(ANTENNA_HIGHEST_M, height + stepM);
     const byHeight = highest(map.alongHeight(angle), low, high);
-    if (byHeight.value > power) [height, power] = [byHeight.at, byHeight.value];
+    if (byHeight.value > power * (1 + SAME_POWER)) [height, power] = [byHeight.at, byHeight.value];
     if (power <= before * (1 + GAIN)) break;
   }
   const turn = 2 * Math.PI;

@@ -4,13 +4,13 @@
  * Source: O. M. Bucci, G. Franceschetti, On the degrees of freedom of scattered fields, IEEE Trans. AP 37(7), 1989.
  */
 
-/** Highest angular harmonic that matters: ka + max(5, 9/ln(D/a)), sources within radius a seen from distance D. */
+/** Highest angular harmonic that matters: ka + max(5, 9/ln(D/a)), sources within radius a about the axis, seen from distance D > a. */
 export function angularOrder(kPerM: number, radiusM: number, distanceM: number): number {
   if (radiusM <= 0) return 2;
   return Math.ceil(kPerM * radiusM + 1.2 * Math.cbrt(kPerM * radiusM) + Math.max(5, 9 / Math.log(distanceM / radiusM)));
 }
 
-/** Chebyshev heights over the travel (1–4 m); found by comparison with the direct scan (see its property test). */
+/** Chebyshev heights over the travel (1–4 m), sources within radius a of their middle; found by comparison with the direct scan (see its property test). */
 export function heightCount(kPerM: number, radiusM: number, distanceM: number): number {
   return Math.ceil(7 + 0.9 * kPerM * radiusM + (12 * radiusM) / distanceM);
 }
