@@ -4,6 +4,7 @@ import { gaussLegendre } from '../fields/quadrature.ts';
 import type { Line } from '../lines/cross-section.ts';
 import { effectiveDielectric } from '../lines/dielectric.ts';
 import { lineOf } from '../lines/line.ts';
+import { lineNotTemCaveat } from '../lines/validity.ts';
 import type { NetGraph } from '../network/net-graph.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
 import { type Chain, chainFrom, PolylineM } from './chain.ts';
@@ -54,7 +55,14 @@ export function addNamedReturn(
     const [x, y] = back.at(fraction);
     return [x, y, middleZM(named.layerIndex)];
   };
-  const line = namedReturnLine(board, net, graph, chain, returnAt);
+  const line = withTemCaveat(
+    namedReturnLine(board, net, graph, chain, returnAt),
+    graph,
+    chain,
+    returnAt,
+    middleZM,
+    maxHz,
+  );
   const sections = graph.segments.map(
     (segment, index): PlacedSection => ({
       index,
@@ -198,6 +206,32 @@ function namedReturnLine(
     substrateM: rows.reduce((sum, row) => sum + row.thicknessM, 0),
   });
   return { ...strips, z0Ohm: net.z0Ohm ?? strips.z0Ohm, epsilonEff: net.epsilonEff ?? strips.epsilonEff };
+}
+
+/** The line with a caveat when trace and return are too far apart for one at the upper end. */
+function withTemCaveat(
+  line: Line,
+  graph: NetGraph,
+  chain: Chain,
+  returnAt: (fraction: number) => Point3M,
+  middleZM: (layer: number) => number,
+  maxHz: number,
+): Line {
+  let apartM = 0;
+  for (const link of chain.links) {
+    const { fromM, toM, layerIndex, lengthM } = graph.segments[link.section]!;
+    for (const [s, [x, y]] of [
+      [0, fromM],
+      [1, toM],
+    ] as const) {
+      const across = minus([x, y, middleZM(layerIndex)], returnAt(chain.fractionAt(link, s * lengthM)));
+      apartM = Math.max(apartM, Math.hypot(...across));
+    }
+  }
+  const { widthM } = graph.segments[0]!;
+  const section = { kind: 'coplanar-strips', widthM, thicknessM: 0, centreDistanceM: apartM, substrateM: 0 } as const;
+  const caveat = lineNotTemCaveat({ ...section, epsilonR: 1, tanDelta: 0 }, line, maxHz);
+  return caveat ? { ...line, caveats: [...line.caveats, caveat] } : line;
 }
 
 const minus = (a: Point3M, b: Point3M): Point3M => [a[0] - b[0], a[1] - b[1], a[2] - b[2]];
