@@ -4,6 +4,7 @@ import { labUncertaintyDb } from '../limits/lab-uncertainty.ts';
 import { CAUTIONS } from '../report/cautions.ts';
 import { TABLE_HEIGHT_M } from '../site/site.ts';
 import { hzToMhz, mhzToHz } from '../units/convert.ts';
+import { currentMaps } from './current-maps.ts';
 import type { EstimateRequest } from './estimate-request.ts';
 import { type LineLevel, siteAt } from './line-level.ts';
 import { modelCaveats } from './model-caveats.ts';
@@ -15,9 +16,10 @@ import type { EstimateResult, ResultPoint, Verdict } from './result.ts';
 export function finishEstimate(
   board: Board,
   request: EstimateRequest,
-  { range, scene }: EstimatePlan,
+  plan: EstimatePlan,
   levels: readonly LineLevel[],
 ): EstimateResult {
+  const { range, scene } = plan;
   const { limits, site } = request;
   const { points, sharedHz } = judge(levels, limits);
   const roughHz = levels.filter(({ isRough }) => isRough).map(({ frequencyHz }) => frequencyHz);
@@ -31,6 +33,7 @@ export function finishEstimate(
   const caveats = modelCaveats(scene, request, range.fromHz, range.toHz, findings, sharedHz, roughHz);
   if (worst && worst.marginDb >= 0 && worst.marginDb < uncertaintyDb) caveats.push(uncertaintyCaveat(uncertaintyDb));
   if (!worst) caveats.push(noLineCaveat(range));
+  const maps = currentMaps(plan, points);
   return {
     format: 'quietboard-result',
     version: 1,
@@ -56,6 +59,7 @@ export function finishEstimate(
     verdict,
     caveats,
     findings,
+    ...(maps.length > 0 && { currentMaps: maps }),
     notes: request.notes,
     cautions: CAUTIONS,
   };
