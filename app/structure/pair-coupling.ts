@@ -7,7 +7,7 @@ import { filamentSource, type PairFilament, pairFilaments } from './pair-filamen
 import { checkPiece, type PairPiece, pieceLengthM } from './pair-piece.ts';
 import { RegularField } from './regular-field.ts';
 import { findReturnGaps, type ReturnGap } from './return-gaps.ts';
-import { addEdgeShares, cellShares, type SheetLookup } from './sheet-lookup.ts';
+import { addEdgeShares, cellShares, pointShares, type SheetLookup } from './sheet-lookup.ts';
 
 /** What one short stretch of a piece acts on. */
 interface Stretch {
@@ -192,9 +192,7 @@ function injectionsOf({ mesh }: SheetLookup, piece: PairPiece, gap: ReturnGap): 
   const at = (sM: number, cell: number, sign: 1 | -1): Injection => {
     const x = (piece.fromM[0] + ((piece.toM[0] - piece.fromM[0]) * sM) / lengthM - originXM) / cellM;
     const y = (piece.fromM[1] + ((piece.toM[1] - piece.fromM[1]) * sM) / lengthM - originYM) / cellM;
-    const shares = cellShares(sheet, x, y);
-    const isOwn = Math.floor(x) === sheet.columnOf[cell] && Math.floor(y) === sheet.rowOf[cell];
-    if (!isOwn) return { piece: gap.piece, atM: sM, cells: [cell], shares: [sign] };
+    const shares = pointShares(sheet, cell, x, y);
     return {
       piece: gap.piece,
       atM: sM,

@@ -137,52 +137,69 @@ const centreOf = (centresM: Float64Array, index: number): Point3M => [
   centresM[3 * index + 2]!,
 ];
 
-/** From this many times their sizes apart, 1/R between the middles stands for the mean: (size/R)²/24 below 1e-3. */
+/** From this many times their sizes apart, the second-order series stands for the mean of 1/R (error below 1e-5). */
 const FAR_SIZES = 7;
 
-/** 1/R between the middles when they are far against the filament and the target's size, else null. */
-function farInverse(centresM: Float64Array, target: number, sizeM: number, { from, to }: Filament): number | null {
-  const distanceM = Math.hypot(
-    centresM[3 * target]! - (from[0] + to[0]) / 2,
-    centresM[3 * target + 1]! - (from[1] + to[1]) / 2,
-    centresM[3 * target + 2]! - (from[2] + to[2]) / 2,
-  );
-  const lengthM = Math.hypot(to[0] - from[0], to[1] - from[1], to[2] - from[2]);
-  return distanceM > FAR_SIZES * Math.max(lengthM, sizeM) ? 1 / distanceM : null;
+/** 1/24 of the mean square extent of a source or target along a direction, times the second derivative of 1/R, over 1/R. */
+const extentTerm = (lengthM: number, alongM: number, distance2: number): number =>
+  (lengthM * lengthM * ((3 * alongM * alongM) / distance2 - 1)) / (24 * distance2);
+
+/**
+ * Mean of 1/R between a filament and a far target, null when it is near. The target is a square (`squareM` > 0, normal to z) or
+ * a straight piece with length vector `vectorM`. Second order, because trace and return nearly cancel.
+ */
+function farMean(centreM: Point3M, squareM: number, vectorM: Point3M, { from, to }: Filament): number | null {
+  const rx = centreM[0] - (from[0] + to[0]) / 2;
+  const ry = centreM[1] - (from[1] + to[1]) / 2;
+  const rz = centreM[2] - (from[2] + to[2]) / 2;
+  const lx = to[0] - from[0];
+  const ly = to[1] - from[1];
+  const lz = to[2] - from[2];
+  const lengthM = Math.sqrt(lx * lx + ly * ly + lz * lz);
+  const targetM = Math.sqrt(vectorM[0] * vectorM[0] + vectorM[1] * vectorM[1] + vectorM[2] * vectorM[2]);
+  const r2 = rx * rx + ry * ry + rz * rz;
+  const far = FAR_SIZES * Math.max(lengthM, targetM, squareM);
+  if (r2 < far * far) return null;
+  let factor = 1 + extentTerm(lengthM, (rx * lx + ry * ly + rz * lz) / lengthM, r2);
+  if (squareM > 0) factor += extentTerm(squareM, rx, r2) + extentTerm(squareM, ry, r2);
+  else factor += extentTerm(targetM, (rx * vectorM[0] + ry * vectorM[1] + rz * vectorM[2]) / targetM, r2);
+  return factor / Math.sqrt(r2);
 }
+
+const NO_VECTOR: Point3M = [0, 0, 0];
+const vectorOf = ({ from, to }: Filament): Point3M => [to[0] - from[0], to[1] - from[1], to[2] - from[2]];
+const middleOf = ({ from, to }: Filament): Point3M => [
+  (from[0] + to[0]) / 2,
+  (from[1] + to[1]) / 2,
+  (from[2] + to[2]) / 2,
+];
 
 /** Static mean of 1/R between a filament and the patch or wire piece of an edge. */
 function meanToEdge(mesh: Mesh, edge: number, source: Filament): number {
-  const { firstWireEdge, wirePieces, edgeCentreM, edgeVectorM, sheet } = mesh;
-  const sizeM = Math.hypot(edgeVectorM[3 * edge]!, edgeVectorM[3 * edge + 1]!, edgeVectorM[3 * edge + 2]!);
-  const far = farInverse(edgeCentreM, edge, sizeM, source);
-  if (far !== null) return far;
-  if (edge < firstWireEdge) {
-    return meanInverseOfSquareAndFilament(centreOf(edgeCentreM, edge), sheet.grid.cellM, source, 0);
-  }
+  const { firstWireEdge, wirePieces, edgeCentreM } = mesh;
+  if (edge < firstWireEdge) return meanToSquare(mesh, centreOf(edgeCentreM, edge), source);
   const { filament, radiusM } = wirePieces[edge - firstWireEdge]!;
-  return meanInverseOfFilaments(filament, source, radiusM * radiusM);
+  return meanToPiece(filament, radiusM, source);
 }
 
 /** Static mean of 1/R between a filament and a cell or wire node. */
 function meanToNode(mesh: Mesh, node: number, source: Filament): number {
   const { sheet, wireNodes, nodeCentreM } = mesh;
-  if (node < sheet.cellCount) {
-    return meanInverseOfSquareAndFilament(centreOf(nodeCentreM, node), sheet.grid.cellM, source, 0);
-  }
+  if (node < sheet.cellCount) return meanToSquare(mesh, centreOf(nodeCentreM, node), source);
   const { halves, radiusM } = wireNodes[node - sheet.cellCount]!;
-  const sizeM = halves.reduce(
-    (most, { from, to }) => Math.max(most, Math.hypot(to[0] - from[0], to[1] - from[1], to[2] - from[2])),
-    0,
-  );
-  const far = halves.length === 1 ? farInverse(nodeCentreM, node, sizeM, source) : null;
-  if (far !== null) return far;
   let sum = 0;
   let total = 0;
   for (const half of halves) {
-    const lengthM = Math.hypot(half.to[0] - half.from[0], half.to[1] - half.from[1], half.to[2] - half.from[2]);
-    sum += lengthM * meanInverseOfFilaments(half, source, radiusM * radiusM);
+    const lengthM = Math.hypot(...vectorOf(half));
+    sum += lengthM * meanToPiece(half, radiusM, source);
     total += lengthM;
   }
   return sum / total;
 }
+
+const meanToSquare = ({ sheet }: Mesh, centreM: Point3M, source: Filament): number =>
+  farMean(centreM, sheet.grid.cellM, NO_VECTOR, source) ??
+  meanInverseOfSquareAndFilament(centreM, sheet.grid.cellM, source, 0);
+
+const meanToPiece = (piece: Filament, radiusM: number, source: Filament): number =>
+  farMean(middleOf(piece), 0, vectorOf(piece), source) ?? meanInverseOfFilaments(piece, source, radiusM * radiusM);

@@ -1,7 +1,7 @@
 import type { PointM } from '../board/board.ts';
-import { type GridStretch, walkGrid } from './grid-walk.ts';
+import { walkGrid } from './grid-walk.ts';
 import { type PairPiece, pieceLengthM } from './pair-piece.ts';
-import { cellAtIndex, cellCentreXM, cellCentreYM, type Sheet } from './sheet.ts';
+import { cellCentreXM, cellCentreYM, cellUnder, isLinked, type Sheet } from './sheet.ts';
 
 /** Part of a piece whose return filament is missing: from the centre of the last cell before an opening to the first behind it. */
 export interface ReturnGap {
@@ -55,29 +55,30 @@ const isSamePoint = (a: PointM, b: PointM): boolean => Math.hypot(a[0] - b[0], a
 
 function gapsOfPiece(sheet: Sheet, piece: PairPiece, index: number): ReturnGap[] {
   const { originXM, originYM, cellM } = sheet.grid;
-  const stretches = walkGrid(piece.fromM, piece.toM, originXM, originYM, cellM);
   const lengthM = pieceLengthM(piece);
   const gaps: ReturnGap[] = [];
   let lastCell = -1;
   let isBroken = false;
-  for (const [at, stretch] of stretches.entries()) {
-    const cell = cellAtIndex(sheet, stretch.column, stretch.row);
+  for (const { fromM, toM } of walkGrid(piece.fromM, piece.toM, originXM, originYM, cellM / 2)) {
+    const t = (fromM + toM) / 2 / lengthM;
+    const x = (piece.fromM[0] + t * (piece.toM[0] - piece.fromM[0]) - originXM) / cellM;
+    const y = (piece.fromM[1] + t * (piece.toM[1] - piece.fromM[1]) - originYM) / cellM;
+    const cell = cellUnder(sheet, x, y);
     if (cell < 0) {
       isBroken = true;
       continue;
     }
-    const isCut = at > 0 && !isBroken && !conducts(sheet, stretches[at - 1]!, stretch);
-    if (isBroken || isCut) {
-      const fromM = lastCell < 0 ? 0 : projectionM(sheet, piece, lastCell, lengthM);
-      const toM = projectionM(sheet, piece, cell, lengthM);
-      if (toM > fromM || lastCell >= 0) gaps.push({ piece: index, fromM, toM, fromCell: lastCell, toCell: cell });
+    if (isBroken || (lastCell >= 0 && !conducts(sheet, lastCell, cell))) {
+      const startM = lastCell < 0 ? 0 : projectionM(sheet, piece, lastCell, lengthM);
+      const endM = projectionM(sheet, piece, cell, lengthM);
+      gaps.push({ piece: index, fromM: startM, toM: endM, fromCell: lastCell, toCell: cell });
     }
     lastCell = cell;
     isBroken = false;
   }
   if (isBroken) {
-    const fromM = lastCell < 0 ? 0 : projectionM(sheet, piece, lastCell, lengthM);
-    gaps.push({ piece: index, fromM, toM: lengthM, fromCell: lastCell, toCell: -1 });
+    const startM = lastCell < 0 ? 0 : projectionM(sheet, piece, lastCell, lengthM);
+    gaps.push({ piece: index, fromM: startM, toM: lengthM, fromCell: lastCell, toCell: -1 });
   }
   return gaps;
 }
@@ -90,20 +91,18 @@ function projectionM(sheet: Sheet, { fromM, toM }: PairPiece, cell: number, leng
   return Math.max(0, Math.min(lengthM, along));
 }
 
-/** Do the squares of two consecutive stretches conduct? Over a corner: by way of either neighbour. */
-function conducts(sheet: Sheet, a: GridStretch, b: GridStretch): boolean {
-  const { conductsRight, conductsUp } = sheet;
-  const right = (column: number, row: number): boolean => {
-    const cell = cellAtIndex(sheet, column, row);
-    return cell >= 0 && conductsRight[cell] === 1;
-  };
-  const up = (column: number, row: number): boolean => {
-    const cell = cellAtIndex(sheet, column, row);
-    return cell >= 0 && conductsUp[cell] === 1;
-  };
-  const column = Math.min(a.column, b.column);
-  const row = Math.min(a.row, b.row);
-  if (a.row === b.row) return right(column, a.row);
-  if (a.column === b.column) return up(a.column, row);
-  return (right(column, a.row) && up(b.column, row)) || (up(a.column, row) && right(column, b.row));
+/** Does current pass between two cells that follow each other under a trace? Over a corner: by way of either neighbour. */
+function conducts(sheet: Sheet, a: number, b: number): boolean {
+  if (a === b) return true;
+  const columns = sheet.columnOf[b]! - sheet.columnOf[a]!;
+  const rows = sheet.rowOf[b]! - sheet.rowOf[a]!;
+  if (Math.abs(columns) > 1 || Math.abs(rows) > 1) return false;
+  const column = sheet.columnOf[a]!;
+  const row = sheet.rowOf[a]!;
+  if (rows === 0) return isLinked(sheet, column, row, columns, 0);
+  if (columns === 0) return isLinked(sheet, column, row, 0, rows);
+  return (
+    (isLinked(sheet, column, row, columns, 0) && isLinked(sheet, column + columns, row, 0, rows)) ||
+    (isLinked(sheet, column, row, 0, rows) && isLinked(sheet, column, row + rows, columns, 0))
+  );
 }

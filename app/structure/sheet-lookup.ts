@@ -1,6 +1,6 @@
 import { type CopperRuns, copperRuns, profileRatio } from './edge-profile.ts';
 import type { Mesh } from './mesh.ts';
-import { cellAtIndex, type Sheet } from './sheet.ts';
+import { cellAtIndex, cellUnder, isLinked, type Sheet } from './sheet.ts';
 
 /** Cells and edges of a sheet as a pair's weights need them. */
 export class SheetLookup {
@@ -36,8 +36,10 @@ export function addEdgeShares(
   const isX = direction === 'x';
   const along = Math.floor((isX ? x : y) - 0.5);
   const across = isX ? y : x;
-  const own = Math.floor(across);
-  const next = across - own < 0.5 ? own - 1 : own + 1;
+  const under = cellUnder(sheet, x, y);
+  if (under < 0) return;
+  const own = (isX ? sheet.rowOf : sheet.columnOf)[under]!;
+  const next = across < own + 0.5 ? own - 1 : own + 1;
   const cellAt = (row: number): number => (isX ? cellAtIndex(sheet, along, row) : cellAtIndex(sheet, row, along));
   const edgeOf = (cell: number): number => (cell < 0 ? -1 : (isX ? rightEdge : upEdge)[cell]!);
   const ownCell = cellAt(own);
@@ -46,7 +48,7 @@ export function addEdgeShares(
   const first = isX ? runs.firstRow[ownCell]! : runs.firstColumn[ownCell]!;
   const end = isX ? runs.endRow[ownCell]! : runs.endColumn[ownCell]!;
   const nextEdge = next >= first && next < end ? edgeOf(cellAt(next)) : -1;
-  const nextShare = nextEdge < 0 ? 0 : Math.abs(across - own - 0.5);
+  const nextShare = nextEdge < 0 ? 0 : Math.min(0.5, Math.abs(across - own - 0.5));
   edges.push(ownEdge);
   factors.push(factor * (1 - nextShare) * profileRatio(across, h, own, first, end));
   if (nextEdge < 0) return;
@@ -54,21 +56,21 @@ export function addEdgeShares(
   factors.push(factor * nextShare * profileRatio(across, h, next, first, end));
 }
 
-/** Cells that share a charge at a point so that its centre stays: linear both ways, as far as copper connects. Shares sum to 1. */
+/** Cells among which the charge on a stretch of trace is taken, linear both ways as far as copper connects. Shares sum to 1. */
 export function cellShares(sheet: Sheet, x: number, y: number): { readonly cell: number; readonly share: number }[] {
-  const column = Math.floor(x);
-  const row = Math.floor(y);
-  const own = cellAtIndex(sheet, column, row);
+  const own = cellUnder(sheet, x, y);
   if (own < 0) return [];
-  const stepX = x - column < 0.5 ? -1 : 1;
-  const stepY = y - row < 0.5 ? -1 : 1;
+  const column = sheet.columnOf[own]!;
+  const row = sheet.rowOf[own]!;
+  const stepX = x < column + 0.5 ? -1 : 1;
+  const stepY = y < row + 0.5 ? -1 : 1;
   const isBesideX = isLinked(sheet, column, row, stepX, 0);
   const isBesideY = isLinked(sheet, column, row, 0, stepY);
-  const shareX = isBesideX ? Math.abs(x - column - 0.5) : 0;
+  const shareX = isBesideX ? Math.min(0.5, Math.abs(x - column - 0.5)) : 0;
   const isDiagonal =
     (isBesideX && isLinked(sheet, column + stepX, row, 0, stepY)) ||
     (isBesideY && isLinked(sheet, column, row + stepY, stepX, 0));
-  const shareY = isBesideY && (!isBesideX || isDiagonal) ? Math.abs(y - row - 0.5) : 0;
+  const shareY = isBesideY && (!isBesideX || isDiagonal) ? Math.min(0.5, Math.abs(y - row - 0.5)) : 0;
   const out = [{ cell: own, share: (1 - shareX) * (1 - shareY) }];
   if (shareX > 0) out.push({ cell: cellAtIndex(sheet, column + stepX, row), share: shareX * (1 - shareY) });
   if (shareY > 0) out.push({ cell: cellAtIndex(sheet, column, row + stepY), share: (1 - shareX) * shareY });
@@ -78,9 +80,37 @@ export function cellShares(sheet: Sheet, x: number, y: number): { readonly cell:
   return out;
 }
 
-/** Does the cell conduct to its neighbour one step away? */
-function isLinked(sheet: Sheet, column: number, row: number, stepX: number, stepY: number): boolean {
-  const cell = cellAtIndex(sheet, Math.min(column, column + stepX), Math.min(row, row + stepY));
-  if (cell < 0) return false;
-  return (stepX !== 0 ? sheet.conductsRight : sheet.conductsUp)[cell] === 1;
+/**
+ * Shares of a point charge near a cell that keep its centre exactly: linear towards the point where copper connects there, else
+ * extrapolated from the other side (negative share). Shares sum to 1. A charge off its place by part of a cell would
+ * radiate more than the pair itself.
+ */
+export function pointShares(
+  sheet: Sheet,
+  cell: number,
+  x: number,
+  y: number,
+): { readonly cell: number; readonly share: number }[] {
+  const column = sheet.columnOf[cell]!;
+  const row = sheet.rowOf[cell]!;
+  const [stepX, shareX] = axisShare(x - column - 0.5, (step) => isLinked(sheet, column, row, step, 0));
+  const [stepY, shareY] = axisShare(
+    y - row - 0.5,
+    (step) => isLinked(sheet, column, row, 0, step) && (shareX === 0 || isLinked(sheet, column + stepX, row, 0, step)),
+  );
+  return [
+    { cell, share: (1 - shareX) * (1 - shareY) },
+    { cell: cellAtIndex(sheet, column + stepX, row), share: shareX * (1 - shareY) },
+    { cell: cellAtIndex(sheet, column, row + stepY), share: (1 - shareX) * shareY },
+    { cell: cellAtIndex(sheet, column + stepX, row + stepY), share: shareX * shareY },
+  ].filter(({ share }) => share !== 0);
+}
+
+/** Neighbour (step) and its share for a charge `offset` cells from a cell's centre. */
+function axisShare(offset: number, isLinkedTo: (step: -1 | 1) => boolean): [step: -1 | 1, share: number] {
+  const towards = offset < 0 ? -1 : 1;
+  if (Math.abs(offset) < 1e-9) return [towards, 0];
+  if (isLinkedTo(towards)) return [towards, Math.abs(offset)];
+  const back = -towards as -1 | 1;
+  return isLinkedTo(back) ? [back, -Math.abs(offset)] : [towards, 0];
 }

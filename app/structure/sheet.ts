@@ -161,3 +161,37 @@ export function cellAtIndex({ grid, cellAt }: Sheet, column: number, row: number
   if (column < 0 || row < 0 || column >= grid.columns || row >= grid.rows) return -1;
   return cellAt[row * grid.columns + column]!;
 }
+
+/** A point off the copper cells still counts for the nearest one this near (in cells): outlines rarely follow the grid. */
+const UNDER_REACH_CELLS = 0.75;
+
+/**
+ * Copper cell under a point (x, y in cells from the grid's origin): the one it lies in, else the nearest whose centre is within
+ * three quarters of a cell, else −1.
+ */
+export function cellUnder(sheet: Sheet, x: number, y: number): number {
+  const column = Math.floor(x);
+  const row = Math.floor(y);
+  const own = cellAtIndex(sheet, column, row);
+  if (own >= 0) return own;
+  let nearest = -1;
+  let least = UNDER_REACH_CELLS;
+  for (let r = row - 1; r <= row + 1; r++) {
+    for (let c = column - 1; c <= column + 1; c++) {
+      const cell = cellAtIndex(sheet, c, r);
+      const distance = Math.hypot(x - c - 0.5, y - r - 0.5);
+      if (cell >= 0 && distance < least) {
+        nearest = cell;
+        least = distance;
+      }
+    }
+  }
+  return nearest;
+}
+
+/** Does the cell conduct to its neighbour one step away? */
+export function isLinked(sheet: Sheet, column: number, row: number, stepX: number, stepY: number): boolean {
+  const cell = cellAtIndex(sheet, Math.min(column, column + stepX), Math.min(row, row + stepY));
+  if (cell < 0) return false;
+  return (stepX !== 0 ? sheet.conductsRight : sheet.conductsUp)[cell] === 1;
+}
