@@ -76,8 +76,10 @@ function placesOf(
       const place = placeOf(isAtB ? segment.nodeB : segment.nodeA);
       for (const plane of sections[i]!.planes) {
         place.planes.push(plane);
-        place.leaving.push({ zM: plane.traceZM, term: { section: i, isAtB, factor: plane.share } });
-        place.leaving.push({ zM: plane.planeZM, term: { section: i, isAtB, factor: -plane.share } });
+        place.leaving.push(
+          { zM: plane.traceZM, isReturn: false, term: { section: i, isAtB, factor: plane.share } },
+          { zM: plane.planeZM, isReturn: true, term: { section: i, isAtB, factor: -plane.share } },
+        );
       }
     }
   }

@@ -4,6 +4,8 @@ import type { EndTerm } from './element-currents.ts';
 /** Current that leaves a place at one height (board z): what flows out into traces, or into their return. */
 export interface Leaving {
   readonly zM: number;
+  /** On a plane; else on a trace, which may lie at the same height. */
+  readonly isReturn: boolean;
   readonly term: EndTerm;
 }
 
@@ -23,7 +25,7 @@ const LEVEL_M = 1e-7;
  * the current from level l up to l + 1 is minus all that leaves at l and below. One rule serves pins (trace and plane),
  * via barrels, the return's change of plane and the split between two planes; no charge is left over.
  */
-export function postsAt(atM: PointM, leaving: readonly Leaving[]): Post[] {
+export function postsAt(atM: PointM, leaving: readonly Omit<Leaving, 'isReturn'>[]): Post[] {
   const levels = levelsOf(leaving);
   const posts: Post[] = [];
   let below: readonly EndTerm[] = [];
@@ -35,7 +37,7 @@ export function postsAt(atM: PointM, leaving: readonly Leaving[]): Post[] {
 }
 
 /** What leaves at each level, lowest first. */
-export function levelsOf(leaving: readonly Leaving[]): { zM: number; terms: EndTerm[] }[] {
+export function levelsOf(leaving: readonly Omit<Leaving, 'isReturn'>[]): { zM: number; terms: EndTerm[] }[] {
   const levels: { zM: number; terms: EndTerm[] }[] = [];
   for (const { zM, term } of [...leaving].sort((one, other) => one.zM - other.zM)) {
     const last = levels.at(-1);

@@ -50,9 +50,8 @@ export function placeCurrents(board: Board, stitches: StitchIndex, place: NetPla
       finding: transitionFinding(board, place, nets, stitch?.distanceM ?? null),
     };
   }
-  const planeHeights = new Set(place.planes.map(({ planeZM }) => planeZM));
-  const onTrace = place.leaving.filter(({ zM }) => !planeHeights.has(zM));
-  const onPlanes = place.leaving.filter(({ zM }) => planeHeights.has(zM));
+  const onTrace = place.leaving.filter(({ isReturn }) => !isReturn);
+  const onPlanes = place.leaving.filter(({ isReturn }) => isReturn);
   const detours = levelsOf(onPlanes).map(
     ({ zM, terms }): Detour => ({ fromM: stitch.via.atM, toM: place.atM, zM, terms: mergeTerms(terms) }),
   );
