@@ -44,9 +44,9 @@ ${titleSection(result, board, options.dateText)}
 ${verdictSection(result)}
 ${spectrumSection(result, limitLines)}
 ${radiationSection(result, limitLines)}
+${sharesSection(result)}
 ${boardSection(board, result)}
 ${pointsSection(result)}
-${sharesSection(result)}
 ${currentsSection(result, board)}
 ${findingsSection(result)}
 ${setupSection(board, result, limitLines)}

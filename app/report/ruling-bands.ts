@@ -4,7 +4,7 @@ import type { RadiatingLine, Radiation } from './radiation.ts';
 /** A stretch of the spectrum in which one mechanism is the strongest, or nearly so. */
 export interface RulingBand {
   readonly mechanism: Mechanism;
-  /** Its ends for a reader: round numbers between the last line of one band and the first of the next. */
+  /** Its ends for a reader: round numbers between (or within 0.5 % of) the last line of one band and the first of the next. */
   readonly fromHz: number;
   readonly toHz: number;
   readonly lines: readonly RadiatingLine[];
@@ -113,12 +113,12 @@ function moveEdge(before: Stretch, after: Stretch): void {
 
 const threeDigits = (frequencyHz: number): number => Number(frequencyHz.toPrecision(3));
 
-/** A number of few digits strictly between two frequencies, near their geometric mean. */
+/** A number of few digits between two frequencies, near their geometric mean; of three where they are too close for that. */
 function roundBetween(lowHz: number, highHz: number): number {
   const middleHz = Math.sqrt(lowHz * highHz);
-  for (let stepHz = 10 ** Math.floor(Math.log10(highHz)); stepHz >= 1; stepHz /= 10) {
+  for (let stepHz = 10 ** Math.floor(Math.log10(highHz)); stepHz > highHz / 1000; stepHz /= 10) {
     const rounded = Math.round(middleHz / stepHz) * stepHz;
     if (rounded > lowHz && rounded < highHz) return rounded;
   }
-  return middleHz;
+  return threeDigits(middleHz);
 }

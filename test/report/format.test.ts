@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import {
   amountText,
+  bandText,
   fixed,
   frequencyText,
   levelText,
@@ -49,6 +50,9 @@ describe('numbers for people', () => {
     expect(rangeText(400e6, 0)).toBe('from 400 MHz');
     expect(rangeText(0, 1e9)).toBe('up to 1 GHz');
     expect(rangeText(75e6, 75e6)).toBe('75 MHz');
+    expect(bandText(30e6, 210e6)).toBe('30–210 MHz');
+    expect(bandText(640e6, 1e9)).toBe('640 MHz–1 GHz');
+    expect(bandText(75e6, 75e6)).toBe('75 MHz');
   });
 
   it('chooses the SI prefix after rounding', () => {

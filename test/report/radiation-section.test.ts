@@ -107,7 +107,7 @@ describe('strip of mechanisms', () => {
 describe('What radiates', () => {
   it('says the bands in a sentence and a table, and the laws of the sums', () => {
     const text = sectionText(sampleResult());
-    expect(text).toContain('What rules: 50–160 MHz damper cable; 160 MHz–1 GHz plane');
+    expect(text).toContain('What rules: 50–160 MHz damper cable ; 160 MHz–1 GHz plane');
     expect(text).toMatch(/50–160 MHz damper cable 4 of 5 lines 125 MHz −2\.3 plane , 14\.7 dB weaker/);
     expect(text).toMatch(/34 of 34 lines 675 MHz 4\.1 trace pairs/);
     expect(text).toMatch(/added as powers.* add as phasors and may cancel/);

@@ -169,7 +169,7 @@ describe('bands', () => {
     );
   });
 
-  it('hold every line once, in order, with edges between their lines', () => {
+  it('hold every line once, in order, with edges of at most three digits between their lines', () => {
     const lines = fc.uniqueArray(
       fc.tuple(
         fc.integer({ min: 30_000, max: 1_000_000 }),
@@ -192,8 +192,10 @@ describe('bands', () => {
           if (!next) continue;
           expect(band.mechanism).not.toBe(next.mechanism);
           expect(band.toHz).toBe(next.fromHz);
-          expect(band.toHz).toBeGreaterThan(band.lines.at(-1)!.frequencyHz);
-          expect(band.toHz).toBeLessThan(next.lines[0]!.frequencyHz);
+          // Three digits: within half a unit of the third, 0.5 % at worst.
+          expect(band.toHz).toBeGreaterThan(band.lines.at(-1)!.frequencyHz * 0.995);
+          expect(band.toHz).toBeLessThan(next.lines[0]!.frequencyHz * 1.005);
+          expect(Number(band.toHz.toPrecision(3))).toBe(band.toHz);
         }
       }),
       { seed: 82, numRuns: 80 },

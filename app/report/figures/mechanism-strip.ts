@@ -29,7 +29,7 @@ export function stripRangeDb({ lines, countedMarginDb }: Radiation): [lowDb: num
   return [-countedMarginDb, Math.max(0, Math.ceil(strongestDb / 10) * 10)];
 }
 
-/** One row a mechanism over log frequency: its level against the limit at every line, dark where it is the strongest. */
+/** One row a mechanism over log frequency: its level against the limit at every line, heavy where it is the strongest. */
 export function mechanismStrip(
   radiation: Radiation,
   bands: readonly RulingBand[],
