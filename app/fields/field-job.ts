@@ -3,9 +3,17 @@ import { parseWith } from '../schema/parse-with.ts';
 
 /** The field job: given current elements, given points; SI, phasors are peak values, e^(+jωt). */
 
-const point = z.tuple([z.number(), z.number(), z.number()]);
+/** Beyond these the sums over- or underflow; no job of this kind needs them. */
+const FARTHEST_M = 1e5;
+const MOST_A = 1e9;
+const LOWEST_HZ = 1;
+const HIGHEST_HZ = 1e12;
+
+const coordinateM = z.number().min(-FARTHEST_M).max(FARTHEST_M);
+const point = z.tuple([coordinateM, coordinateM, coordinateM]);
+const partA = z.number().min(-MOST_A).max(MOST_A);
 /** Real and imaginary part. */
-const complex = z.tuple([z.number(), z.number()]);
+const complex = z.tuple([partA, partA]);
 
 const element = z.strictObject({
   fromM: point,
@@ -22,7 +30,7 @@ export const fieldJobSchema = z
   .strictObject({
     format: z.literal('quietboard-field'),
     version: z.literal(1),
-    frequenciesHz: z.array(z.number().positive()).min(1).max(100_000),
+    frequenciesHz: z.array(z.number().min(LOWEST_HZ).max(HIGHEST_HZ)).min(1).max(100_000),
     /** `perfect`: reflection at z = 0, everything at z ≥ 0. */
     ground: z.enum(['perfect', 'none']),
     elements: z.array(element).min(1).max(1_000_000),
