@@ -75,9 +75,9 @@ const loop = z.strictObject({
 });
 
 const cable = z.strictObject({
-  /** Results list where a current radiates from: "pair" (trace and return), "plane", or a cable by its name. */
-  name: name.refine((text) => text !== 'pair' && text !== 'plane', {
-    error: 'another name than "pair" and "plane" (results use these two)',
+  /** Results list where a current radiates from: "pair" (trace and return), "plane", "loop", or a cable by its name. */
+  name: name.refine((text) => !['pair', 'plane', 'loop'].includes(text), {
+    error: 'another name than "pair", "plane" and "loop" (results use them)',
   }),
   pointsMm: z.array(point3Mm).min(2),
   radiusMm: positive.default(1),

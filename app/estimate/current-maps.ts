@@ -47,17 +47,15 @@ function mapOf(model: StructureModel, frequencyHz: number, domains: readonly Flo
       atM: [mesh.nodeCentreM[3 * cell]!, mesh.nodeCentreM[3 * cell + 1]!] as const,
       densityRmsAPerM: Math.sqrt(power[cell]! / 2),
     })),
-    cables: mesh.wires.map(({ name, pieces }, w) => {
+    cables: mesh.wires.map(({ name, pieces, jointM }, w) => {
       const edges = pieces.map((_, i) => mesh.wireEdgeStart[w]! + i);
-      return {
-        name,
-        pointsM: edges.map(
-          (e) => [mesh.edgeCentreM[3 * e]!, mesh.edgeCentreM[3 * e + 1]!, mesh.edgeCentreM[3 * e + 2]!] as const,
-        ),
-        currentRmsA: edges.map((e) =>
-          Math.sqrt(domains.reduce((sum, i) => sum + i[2 * e]! ** 2 + i[2 * e + 1]! ** 2, 0) / 2),
-        ),
-      };
+      const middleM = (e: number) =>
+        [0, 1, 2].map((axis) => mesh.edgeCentreM[3 * e + axis]!) as [number, number, number];
+      const currentRmsA = edges.map((e) =>
+        Math.sqrt(domains.reduce((sum, i) => sum + i[2 * e]! ** 2 + i[2 * e + 1]! ** 2, 0) / 2),
+      );
+      // From the joint (with the first piece's current) through the middles of the pieces.
+      return { name, pointsM: [jointM, ...edges.map(middleM)], currentRmsA: [currentRmsA[0]!, ...currentRmsA] };
     }),
   };
 }

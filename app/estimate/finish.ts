@@ -3,7 +3,7 @@ import type { Caveat } from '../errors.ts';
 import { labUncertaintyDb } from '../limits/lab-uncertainty.ts';
 import { CAUTIONS } from '../report/cautions.ts';
 import { TABLE_HEIGHT_M } from '../site/site.ts';
-import { hzToMhz, mhzToHz } from '../units/convert.ts';
+import { hzToMhz } from '../units/convert.ts';
 import { currentMaps } from './current-maps.ts';
 import type { EstimateRequest } from './estimate-request.ts';
 import { type LineLevel, siteAt } from './line-level.ts';
@@ -84,6 +84,6 @@ const noLineCaveat = ({ fromHz, toHz }: JudgedRange): Caveat => ({
   code: 'no-line-in-range',
   message: `no source has a spectral line between ${hzToMhz(fromHz)} and ${hzToMhz(toHz)} MHz`,
   where: '',
-  fromHz: Math.min(fromHz, mhzToHz(30)),
+  fromHz,
   toHz,
 });
