@@ -197,19 +197,25 @@ function stackupCaveats(board: Board): Caveat[] {
   ];
 }
 
-/** One row for each kind of line caveat, however many segments share it. */
+/** One row for each line caveat of a net, however many segments share it, over all their frequencies. */
 function lineCaveats(scene: Scene, fromHz: number, toHz: number): Caveat[] {
   const merged = new Map<string, Caveat>();
   for (const model of scene.nets.values()) {
     for (const caveat of model.caveats) {
       if (caveat.toHz > 0 && (caveat.fromHz > toHz || caveat.toHz < fromHz)) continue;
-      const key = JSON.stringify([caveat.code, model.name]);
+      const key = JSON.stringify([caveat.code, caveat.message, model.name]);
       const known = merged.get(key);
-      merged.set(key, known ? { ...known, fromHz: Math.min(known.fromHz, caveat.fromHz) } : caveat);
+      merged.set(key, known ? { ...known, ...unionOf(known, caveat) } : caveat);
     }
   }
   return [...merged.values()];
 }
+
+/** Smallest range that holds both; 0 as the upper end of either means every frequency. */
+const unionOf = (one: Caveat, other: Caveat): Pick<Caveat, 'fromHz' | 'toHz'> =>
+  one.toHz === 0 || other.toHz === 0
+    ? { fromHz: 0, toHz: 0 }
+    : { fromHz: Math.min(one.fromHz, other.fromHz), toHz: Math.max(one.toHz, other.toHz) };
 
 function undrivenCaveats(board: Board): Caveat[] {
   const driven = new Set(board.drives.map(({ net }) => net));

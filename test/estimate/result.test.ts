@@ -170,6 +170,14 @@ describe('nothing radiates', () => {
   });
 });
 
+describe('a range that begins above the lines', () => {
+  it('is said as it is', () => {
+    const lines = limitSet().lines.slice(1);
+    const { caveats } = estimateOf(one([100]), { request: { limits: limitSet(lines), maxHz: 2e9 } });
+    expect(caveats.find(({ code }) => code === 'no-line-in-range')).toMatchObject({ fromHz: 1e9, toHz: 2e9 });
+  });
+});
+
 describe('verdict', () => {
   const level = pointAt(estimateOf(one([100])), 100e6).levelDbuvPerM;
   /** The limit so that the margin is as asked. */
