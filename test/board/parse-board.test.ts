@@ -74,7 +74,7 @@ describe('parseBoardFile', () => {
             },
           ],
         }),
-      'cables[0].name must be another name than "pair" and "plane"',
+      'cables[0].name must be another name than "pair", "plane" and "loop"',
     ],
     [
       'coordinates in another unit',
