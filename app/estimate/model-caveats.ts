@@ -1,5 +1,6 @@
 import type { Board } from '../board/board.ts';
 import type { Caveat } from '../errors.ts';
+import { largestParts } from '../structure/copper-parts.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
 import { hzToMhz } from '../units/convert.ts';
 import type { EstimateRequest } from './estimate-request.ts';
@@ -66,6 +67,15 @@ function structureCaveats(scene: Scene, toHz: number, roughHz: readonly number[]
       where: '',
       fromHz: SOLVED_TO_HZ,
       toHz,
+    });
+  }
+  const partCount = largestParts(scene.structure!.mesh.sheet);
+  if (partCount > 1) {
+    caveats.push({
+      code: 'planes-apart',
+      message: `the planes fall into ${partCount} parts that no copper joins; capacitors and other parts across the gap are not known: a trace that crosses it radiates here as if nothing joined them`,
+      where: '',
+      ...everywhere,
     });
   }
   const enclosed = [...scene.nets.values()].filter(({ sections }) => sections.some(({ planeCount }) => planeCount > 1));
