@@ -4,9 +4,10 @@ import { gaussLegendre } from '../../app/fields/quadrature.ts';
 import type { Filament } from '../../app/structure/filament-kernel.ts';
 import { buildMesh, type Mesh } from '../../app/structure/mesh.ts';
 import { PartialElements } from '../../app/structure/partials.ts';
+import { cellAtIndex } from '../../app/structure/sheet.ts';
 import { type GroundPlane, wireFromCable } from '../../app/structure/wires.ts';
 import { expectClose } from '../support/expect-close.ts';
-import { rectangle, sheetOf } from './support.ts';
+import { rectangle, rectangleRing, sheetOf } from './support.ts';
 
 const CELL_M = 0.01;
 /** Low over the ground, so that images near and far matter; flat (under −z) and upright (under −y). */
@@ -190,5 +191,39 @@ describe('images close to the ground', () => {
       rel: 1e-5,
       because: 'kR = 1e-5; 1/k² times rounding of the charge part',
     });
+  });
+});
+
+describe('edges and slots of the copper', () => {
+  it('change currents along them and charges beside them by the same kernel', () => {
+    // Six columns, four rows; a slot between rows 1 and 2 under columns 1 to 4.
+    const slot = rectangleRing(0.0101, 0.0199, 0.0499, 0.0201);
+    const sheet = sheetOf([rectangle(0.06, 0.04, [slot])], 0.06, 0.04, CELL_M);
+    const mesh = buildMesh(sheet, [], null);
+    const nodes = matrix(mesh.nodeCount);
+    const edges = matrix(mesh.edgeCount);
+    const k = 0.1;
+    new PartialElements(mesh).fill(k, nodes, edges);
+    const g = (i: number, j: number): number => nodes.re[i * mesh.nodeCount + j]!;
+    /** Inductive kernel of two edges, 1/m. */
+    const kernel = (e: number, f: number): number => {
+      const [a, b, c, d] = [mesh.edgeFrom[e]!, mesh.edgeTo[e]!, mesh.edgeFrom[f]!, mesh.edgeTo[f]!];
+      const charge = (g(a, c) - g(a, d) - g(b, c) + g(b, d)) / (k * k);
+      return (edges.re[Math.max(e, f) * mesh.edgeCount + Math.min(e, f)]! + charge) / CELL_M ** 2;
+    };
+    const edgeFrom = (column: number, row: number): number => mesh.edgeFrom.indexOf(cellAtIndex(sheet, column, row));
+    const cell = (column: number, row: number): number => cellAtIndex(sheet, column, row);
+    const because = 'squares of the same size and place; 1/k² costs digits';
+    const plain = kernel(edgeFrom(2, 3), edgeFrom(2, 3));
+    for (const row of [0, 1, 2, 3]) {
+      const edge = edgeFrom(2, row);
+      expectClose(kernel(edge, edge), g(cell(2, row), cell(2, row)), { rel: 1e-6, because });
+    }
+    expectClose(kernel(edgeFrom(2, 1), edgeFrom(2, 2)), g(cell(2, 1), cell(2, 2)), { rel: 1e-6, because });
+    // Below the closed form of a square at the outline, further below it at the slot.
+    const square = 2.973_209_8 / CELL_M;
+    expect(plain).toBeLessThan(0.95 * square);
+    expect(g(cell(2, 1), cell(2, 1))).toBeLessThan(0.9 * square);
+    expectClose(kernel(edgeFrom(1, 0), edgeFrom(1, 0)), plain, { rel: 1e-6, because: 'one open side each' });
   });
 });
