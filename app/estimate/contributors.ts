@@ -27,8 +27,16 @@ function domainMagnitudes(fields: readonly PathField[]): number[] {
 /** Phasors add within a domain, powers between domains. V/m. */
 const magnitude = (fields: readonly PathField[]): number => Math.hypot(...domainMagnitudes(fields));
 
-/** Contributors with their paths, strongest first, and the linear sum of their fields in every domain (V/m). */
-export function contributorsOf(fields: readonly PathField[]): { contributors: Contributor[]; linearSumVPerM: number } {
+export interface ContributorSums {
+  /** With their paths, strongest first. */
+  readonly contributors: Contributor[];
+  /** Linear sum of their fields in every domain. */
+  readonly linearSumVPerM: number;
+  /** Magnitude of those of kind "cable". */
+  readonly statedCablesVPerM: number;
+}
+
+export function contributorsOf(fields: readonly PathField[]): ContributorSums {
   const groups = new Map<string, PathField[]>();
   for (const field of fields) {
     const key = JSON.stringify([field.kind, field.name]);
@@ -58,6 +66,7 @@ export function contributorsOf(fields: readonly PathField[]): { contributors: Co
   return {
     contributors: found.map(({ contributor }) => contributor),
     linearSumVPerM: found.reduce((sum, { linearSumVPerM }) => sum + linearSumVPerM, 0),
+    statedCablesVPerM: magnitude(fields.filter(({ kind }) => kind === 'cable')),
   };
 }
 

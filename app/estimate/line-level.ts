@@ -22,6 +22,8 @@ export interface LineLevel {
   readonly verticalVPerM: number;
   /** Linear sum of all contributors in all domains at the maximum. */
   readonly upperBoundVPerM: number;
+  /** Part of `fieldVPerM` that is of stated cable currents, domains added as powers. */
+  readonly statedCablesVPerM: number;
   readonly contributors: readonly Contributor[];
   /** The structure's currents are interpolated with more error than allowed. */
   readonly isRough: boolean;
@@ -55,7 +57,7 @@ export function lineLevel(scene: Scene, lines: FrequencyLines, responder: Struct
   const verticalVPerM = totalAt('vertical');
   const polarization = verticalVPerM > horizontalVPerM ? 'vertical' : 'horizontal';
   const place: AntennaPlace = { component: polarization, ...maxima[polarization], request };
-  const { contributors, linearSumVPerM } = contributorsOf([
+  const { contributors, linearSumVPerM, statedCablesVPerM } = contributorsOf([
     ...pairFields(parts, place),
     ...(answer ? structureFields(scene, answer, place) : []),
   ]);
@@ -68,6 +70,7 @@ export function lineLevel(scene: Scene, lines: FrequencyLines, responder: Struct
     horizontalVPerM,
     verticalVPerM,
     upperBoundVPerM: linearSumVPerM,
+    statedCablesVPerM,
     contributors,
     isRough: answer !== null && !responder!.isConverged,
   };

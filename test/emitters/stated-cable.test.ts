@@ -41,14 +41,32 @@ const down: Point3M[] = [
   [0.2, -0.1, -TABLE_HEIGHT_M],
 ];
 
-/** Magnitude of every element's current, with its distance from the far end, m. */
+/** Magnitude of every element's current, with its distance along the cable from the far end, found by its place, m. */
 function profile(given: Cable, frequencyHz: number): { fromEndM: number; peakA: number }[] {
   const built = build(given);
   const currents = statedCableCurrents(built, frequencyHz);
-  return [...built.along.alongM].map((alongM, i) => ({
-    fromEndM: built.along.lengthM - alongM,
+  const { positionsM, count } = built.along.elements;
+  return Array.from({ length: count }, (_, i) => ({
+    fromEndM: distanceFromEnd(given.pointsM, [
+      positionsM[3 * i]!,
+      positionsM[3 * i + 1]!,
+      positionsM[3 * i + 2]! - TABLE_HEIGHT_M,
+    ]),
     peakA: Math.hypot(currents[2 * i]!, currents[2 * i + 1]!),
   }));
+}
+
+function distanceFromEnd(pointsM: readonly Point3M[], at: Point3M): number {
+  const apart = (a: Point3M, b: Point3M) => Math.hypot(a[0] - b[0], a[1] - b[1], a[2] - b[2]);
+  let pastM = 0;
+  for (let leg = pointsM.length - 1; leg > 0; leg--) {
+    const [from, to] = [pointsM[leg - 1]!, pointsM[leg]!];
+    const [aheadM, behindM] = [apart(at, to), apart(at, from)];
+    // On the leg when the way over the place is no detour.
+    if (aheadM + behindM < apart(from, to) + 1e-9) return pastM + aheadM;
+    pastM += apart(from, to);
+  }
+  throw new Error('a place off the cable');
 }
 
 describe('standing wave of a stated current', () => {

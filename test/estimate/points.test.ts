@@ -18,6 +18,7 @@ const line = (frequencyHz: number, levelDb: number, upperBoundDb = levelDb): Lin
   horizontalVPerM: peakOf(levelDb - 7),
   verticalVPerM: peakOf(levelDb),
   upperBoundVPerM: peakOf(upperBoundDb),
+  statedCablesVPerM: 0,
   contributors: [],
   isRough: false,
 });
@@ -97,6 +98,44 @@ describe('several lines in the bandwidth', () => {
     }
     const [middle] = judge(levels, cispr32).points.filter(({ frequencyHz }) => frequencyHz === 1.2004e9);
     near(middle!.upperBoundDbuvPerM, 20 * Math.log10(10 ** (31 / 20) + 10 ** (33 / 20) + 10 ** (30 / 20)));
+  });
+});
+
+describe('a stated cable current is what a receiver saw of the cable, so it counts once in a bandwidth', () => {
+  /** Lines of a board and a cable of 34 dBµV/m at each: powers. */
+  const cableDb = 34;
+  const withCable = (frequencyHz: number, ownDb: number): LineLevel => {
+    const totalDb = 10 * Math.log10(10 ** (ownDb / 10) + 10 ** (cableDb / 10));
+    const linearDb = 20 * Math.log10(10 ** (ownDb / 20) + 10 ** (cableDb / 20));
+    return { ...line(frequencyHz, totalDb, linearDb), statedCablesVPerM: peakOf(cableDb) };
+  };
+
+  it('lines add, the cable is added to them as a power', () => {
+    const { points } = judge([withCable(1.2e9, 20), withCable(1.2003e9, 26), withCable(1.2006e9, 23)], cispr32);
+    const middle = (detector: string) =>
+      points.find((point) => point.frequencyHz === 1.2003e9 && point.detector === detector)!;
+    const linear = 10 ** (20 / 20) + 10 ** (26 / 20) + 10 ** (23 / 20);
+    const power = 10 ** (20 / 10) + 10 ** (26 / 10) + 10 ** (23 / 10);
+    const cable = 10 ** (cableDb / 20);
+    near(middle('peak').levelDbuvPerM, 20 * Math.log10(Math.hypot(linear, cable)));
+    near(middle('average').levelDbuvPerM, 10 * Math.log10(power + cable ** 2));
+    expect(middle('peak').upperBoundDbuvPerM).toBeGreaterThanOrEqual(20 * Math.log10(linear + cable) - 1e-9);
+    expect(middle('peak').upperBoundDbuvPerM).toBeLessThan(20 * Math.log10(linear + cable) + 0.01);
+  });
+
+  it('fifteen weak lines beside a strong cable read the cable', () => {
+    const levels = Array.from({ length: 15 }, (_, i) => withCable(100e6 + 8e3 * i, -60));
+    const [middle] = judge(levels, cispr32).points.filter(({ frequencyHz }) => frequencyHz === 100.056e6);
+    // 15 lines of −60 dBµV/m are −36.5 dBµV/m.
+    expect(Math.abs(middle!.levelDbuvPerM - cableDb)).toBeLessThan(1e-6);
+  });
+
+  it('at a point of its own beside a line it is no line of the board', () => {
+    const own = { ...line(100.02e6, cableDb), statedCablesVPerM: peakOf(cableDb) };
+    const { points, sharedHz } = judge([withCable(100e6, 30), own], cispr32);
+    const both = 10 * Math.log10(10 ** (30 / 10) + 10 ** (cableDb / 10));
+    for (const { levelDbuvPerM } of points) expect(levelDbuvPerM).toBeCloseTo(both, 6);
+    expect(sharedHz).toEqual([]);
   });
 });
 

@@ -200,6 +200,31 @@ describe('stated cables bring their own frequencies', () => {
     expect([30, 88, 120, 1000].map(names)).toEqual([['cable'], ['cable', 'net'], ['cable', 'net'], ['cable']]);
   });
 
+  it('counts once in a bandwidth, however many lines of the board are in it', () => {
+    // 1 Mbit/s over 127 bits: a line every 7.9 kHz, 15 in 120 kHz, of a microvolt.
+    const file = drivenBoard(
+      [netFile('A')],
+      [driveFile('A', 'd')],
+      [
+        {
+          name: 'd',
+          kind: 'random-data',
+          bitRateMbps: 1,
+          lowV: 0,
+          highV: 1e-6,
+          riseNs: 1,
+          fallNs: 1,
+          sequenceBits: 127,
+        },
+      ],
+      { cables: [cable] },
+    );
+    for (const { levelDbuvPerM, contributors } of estimateOf(file, { request: { maxHz: 30.3e6 } }).points) {
+      expect(contributors[0]!.name).toBe('c');
+      expect(Math.abs(levelDbuvPerM - contributors[0]!.levelDbuvPerM)).toBeLessThan(1e-6);
+    }
+  });
+
   it('adds as a power', () => {
     const net = drivenBoard([netFile('A')], [driveFile('A', 'w')], [linesVoltage('w', [[88, 40]])]);
     const [both, alone] = [{ ...net, cables: [cable] }, boardFile({ cables: [cable] })].map((file) =>
