@@ -90,12 +90,15 @@ describe('planes that carry a return', () => {
     expect(less.gaps).toEqual([]);
   });
 
-  it('when none covers half, the one that covers most, with its gap', () => {
+  it.each([
+    ['L2', 'L4'],
+    ['L4', 'L2'],
+  ])('when none covers half, the one that covers most (%s, not %s), with its gap', (most, least) => {
     const { planes, gaps } = referenceOn('L3', [
-      { layer: 'L2', net: 'GND', pointsMm: box(10, 0, 14, 40) },
-      { layer: 'L4', net: 'GND', pointsMm: box(0, 0, 20, 40) },
+      { layer: least, net: 'GND', pointsMm: box(10, 0, 14, 40) },
+      { layer: most, net: 'GND', pointsMm: box(0, 0, 20, 40) },
     ]);
-    expect(planes.map(({ layerIndex, share }) => [layerIndex, share])).toEqual([[layer('L4'), 1]]);
+    expect(planes.map(({ layerIndex, share }) => [layerIndex, share])).toEqual([[layer(most), 1]]);
     expect(gaps.map(({ from, to }) => [from, to])).toEqual([[expect.closeTo(0.25, 9), 1]]);
   });
 
