@@ -13,7 +13,7 @@ import { edgeDot, imageDot, wireEdgeStatics, wireNodeStatics } from './wire-kern
  *   G = mean of 1/R over both patches + (e^(−jkR) − 1)/R between centres (−jk at R = 0),
  * and the same for the image: charge reversed, current reversed along the ground and kept across it.
  * The static part is computed once; only the retarded part depends on frequency.
- * Source: A. E. Ruehli, IEEE Trans. MTT 22(3), 1974 (partial elements); retardation as in the docstring of `fill`.
+ * Source: A. E. Ruehli, IEEE Trans. MTT 22(3), 1974. Copper edges and slots: `boundaryCorrections`.
  */
 export class PartialElements {
   readonly mesh: Mesh;

@@ -35,7 +35,7 @@ export class SheetKernel {
       this.imageKind === 2
         ? (row) => [2 * (originYM - positionM) + (row + 1) * cellM, 0]
         : (row) => [row * cellM, 2 * (zM - positionM)];
-    // Two y edges of the uppermost rows lie half a cell higher each: one row index more than for cells.
+    // Upright: sums of row numbers up to 2 rows − 2 for cells (y edges, half a cell higher each, have one row fewer).
     const imageRows = this.imageKind === 0 ? 0 : this.imageKind === 1 ? rows : 2 * rows;
     this.#imageStatic = new Float64Array(columns * imageRows);
     for (let row = 0; row < imageRows; row++) {

@@ -13,7 +13,6 @@ import type { GroundPlane, Wire } from '../../app/structure/wires.ts';
 
 export const C_M_PER_S = 299_792_458;
 export const MU0 = 1.256_637_062_12e-6;
-export const EPSILON0 = 1 / (MU0 * C_M_PER_S ** 2);
 export const ETA0_OHM = MU0 * C_M_PER_S;
 
 export const rectangleRing = (lowX: number, lowY: number, highX: number, highY: number): PointM[] => [
@@ -51,12 +50,6 @@ export const uniform = (currentA: number): LineWave => ({
   forwardImA: 0,
   backwardReA: 0,
   backwardImA: 0,
-});
-
-/** Lossless line in air, matched: I e^(−jks) (A). */
-export const travelling = (frequencyHz: number, currentA = 1): LineWave => ({
-  ...uniform(currentA),
-  gammaImPerM: (2 * Math.PI * frequencyHz) / C_M_PER_S,
 });
 
 /** Lossless line in air driven by 1 V without resistance, terminated by `loadOhm`. */
