@@ -3,7 +3,7 @@ import { emptyIncident } from '../../app/structure/incident.ts';
 import { buildMesh } from '../../app/structure/mesh.ts';
 import { StructureSolver } from '../../app/structure/structure-solver.ts';
 import { itNeedsNec2c } from '../support/it-needs-nec2c.ts';
-import { type NecSource, type NecWire, runNec2c } from '../support/nec2c.ts';
+import { type NecDeck, runNec2c } from '../support/nec2c.ts';
 import { rectangle, sheetOf } from './support.ts';
 
 const LENGTH_M = 0.15;
@@ -39,8 +39,8 @@ function ownReactance(cellsAcross: number, frequencyHz: number): number {
 async function gridReactances(rows: number): Promise<number[]> {
   const pitchM = WIDTH_M / rows;
   const columns = Math.round(LENGTH_M / pitchM);
-  const wires: NecWire[] = [];
-  const sources: NecSource[] = [];
+  const wires: NecDeck['wires'][number][] = [];
+  const sources: NecDeck['sources'][number][] = [];
   const add = (x1: number, y1: number, x2: number, y2: number): void => {
     wires.push({
       tag: wires.length + 1,

@@ -11,8 +11,8 @@ import { SheetLookup } from '../../app/structure/sheet-lookup.ts';
 import { StructureSolver } from '../../app/structure/structure-solver.ts';
 import type { GroundPlane, Wire } from '../../app/structure/wires.ts';
 
-export const C_M_PER_S = 299_792_458;
-export const MU0 = 1.256_637_062_12e-6;
+const C_M_PER_S = 299_792_458;
+const MU0 = 1.256_637_062_12e-6;
 export const ETA0_OHM = MU0 * C_M_PER_S;
 
 export const rectangleRing = (lowX: number, lowY: number, highX: number, highY: number): PointM[] => [
