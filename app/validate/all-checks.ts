@@ -5,6 +5,7 @@ import { lineChecks } from './lines.ts';
 import { necChecks } from './nec-references.ts';
 import { siteAttenuationChecks } from './site-attenuation.ts';
 import { sourceChecks } from './sources.ts';
+import { structureChecks } from './structure-references.ts';
 
 /** The whole table of trust, in a fixed order. */
 export function allChecks(): Check[] {
@@ -14,6 +15,7 @@ export function allChecks(): Check[] {
     ...sourceChecks(),
     ...lineChecks(),
     ...necChecks(),
+    ...structureChecks(),
     ...limitChecks(),
   ];
 }

@@ -1,5 +1,6 @@
 import type { Point3M, PointM } from '../board/board.ts';
 import type { Orientation } from '../site/site.ts';
+import { ETA0_OHM } from '../units/constants.ts';
 import { mhzToHz, mmToM } from '../units/convert.ts';
 
 /** A cable of a case, from the plane's edge on; board axes, the plane's lower left corner at the origin, plane at z = 0. */
@@ -19,9 +20,10 @@ export interface StructureCase {
   readonly heightM: number;
   /** Strips of the wire grid; ends of the trace, slots and joints lie on their centres and borders. */
   readonly pitchM: number;
-  /** Into how many the stored values' model cuts each strip, and the model that shows convergence. */
+  /** Into how many the stored values' model cuts each strip. */
   readonly divisions: number;
-  readonly otherDivisions: number;
+  /** The model that shows convergence. */
+  readonly other: { readonly pitchM?: number; readonly divisions: number };
   readonly traceM: readonly [PointM, PointM];
   readonly traceHeightM: number;
   readonly traceRadiusM: number;
@@ -41,9 +43,6 @@ export const STRUCTURE_SOURCE_V = 1;
 export const STRUCTURE_DISTANCE_M = 3;
 export const CABLE_RADIUS_M = 1e-3;
 
-/** Free-space wave impedance over 2π, to the digits the case needs: 60 Ω in the trade's formula. */
-const WIRE_OVER_PLANE_OHM = 59.958_5;
-
 /**
  * Characteristic impedance of a round wire over a plane in air, Ω: (η0/2π)·acosh(h/a), the axis h over the plane.
  * Source: D. M. Pozar, Microwave Engineering, 4th ed., table 2.1 (half of the two-wire line).
@@ -52,7 +51,7 @@ export const wireOverPlaneOhm = ({
   traceHeightM,
   traceRadiusM,
 }: Pick<StructureCase, 'traceHeightM' | 'traceRadiusM'>): number =>
-  WIRE_OVER_PLANE_OHM * Math.acosh(traceHeightM / traceRadiusM);
+  (ETA0_OHM / (2 * Math.PI)) * Math.acosh(traceHeightM / traceRadiusM);
 
 const point = (xMm: number, yMm: number): PointM => [mmToM(xMm), mmToM(yMm)];
 const point3 = ([xMm, yMm, zMm]: readonly [number, number, number]): Point3M => [mmToM(xMm), mmToM(yMm), mmToM(zMm)];
@@ -74,7 +73,7 @@ const MIDDLE = {
   heightM: mmToM(60),
   pitchM: mmToM(20) / 3,
   divisions: 2,
-  otherDivisions: 3,
+  other: { divisions: 3 },
   traceM: [point(50 / 3, 30), point(50 / 3 + 60, 30)],
   traceHeightM: mmToM(5),
   traceRadiusM: mmToM(0.4),
@@ -120,7 +119,7 @@ export const STRUCTURE_CASES: readonly StructureCase[] = [
     id: 'plane-160x100',
     widthM: mmToM(160),
     heightM: mmToM(100),
-    otherDivisions: 1,
+    other: { pitchM: mmToM(4), divisions: 1 },
     traceM: [point(30, 50), point(390 / 3, 50)],
   },
   {

@@ -28,13 +28,15 @@ export async function writeStructureMaxima(): Promise<void> {
   writeFileSync(new URL('../../app/validate/structure-maxima.ts', import.meta.url), source(rows, version, notes));
 }
 
-/** Two frequencies of a case (all around a resonance), solved with another division of the grid. */
+/** Two frequencies of a case (three around a resonance), solved with another division of the grid. */
 async function convergence(testCase: StructureCase, rows: readonly StructureMaximum[]): Promise<string> {
-  const { id, divisions, otherDivisions, frequenciesHz, isResonance = false } = testCase;
-  const checkedHz = isResonance ? frequenciesHz : [frequenciesHz[1]!, frequenciesHz.at(-1)!];
-  const other = await solveStructure(testCase, otherDivisions, checkedHz);
-  const stored = rows.filter(({ caseId, frequencyHz }) => caseId === id && checkedHz.includes(frequencyHz));
-  const how = `${id}: strips cut into ${otherDivisions} instead of ${divisions}`;
+  const { id, isResonance = false } = testCase;
+  const own = rows.filter(({ caseId }) => caseId === id);
+  const stored = isResonance ? aroundPeak(own) : [own[1]!, own.at(-1)!];
+  const checkedHz = stored.map(({ frequencyHz }) => frequencyHz);
+  const otherCase = { ...testCase, ...testCase.other };
+  const other = await solveStructure(otherCase, otherCase.divisions, checkedHz);
+  const how = `${id}: strips of ${stripMm(otherCase)} instead of ${stripMm(testCase)} mm`;
   if (isResonance) {
     const one = resonanceOf(stored);
     const two = resonanceOf(other);
@@ -46,6 +48,15 @@ async function convergence(testCase: StructureCase, rows: readonly StructureMaxi
   const worstDb = Math.max(...stored.map((row, i) => changeDb(row, other[i]!)));
   if (!(worstDb < CONVERGED_DB)) throw new Error(`${how}: ${worstDb} dB, not converged`);
   return `${how}: ${worstDb.toFixed(2)} dB at ${checkedHz.map((hz) => hz / 1e6).join(' and ')} MHz`;
+}
+
+const stripMm = ({ pitchM, divisions }: StructureCase): string => ((1e3 * pitchM) / divisions).toFixed(2);
+
+function aroundPeak(rows: readonly StructureMaximum[]): readonly StructureMaximum[] {
+  const { frequencyHz } = resonanceOf(rows);
+  const next = rows.findIndex((row) => row.frequencyHz > frequencyHz);
+  const nearest = rows[next]!.frequencyHz - frequencyHz < frequencyHz - rows[next - 1]!.frequencyHz ? next : next - 1;
+  return rows.slice(nearest - 1, nearest + 2);
 }
 
 const source = (
