@@ -95,6 +95,28 @@ describe('two drives on one net', () => {
     expectDb(both.upperBoundDbuvPerM, both.levelDbuvPerM);
   });
 
+  it('that cancel leave a contributor without a field, which JSON can say', () => {
+    const file = sideBySide([tone('w')]);
+    const both = at120({
+      ...file,
+      nets: [
+        ...file.nets,
+        netFile('B', [
+          [12, 8],
+          [40, 30],
+        ]),
+      ],
+      drives: [file.drives![0]!, { ...file.drives![1]!, inverted: true }, driveFile('B', 'w')],
+    });
+    expect(both.contributors.map(({ name }) => name)).toEqual(['B', 'A']);
+    expect(JSON.parse(JSON.stringify(both.contributors[1]))).toEqual({
+      kind: 'net',
+      name: 'A',
+      levelDbuvPerM: -200,
+      viaDbuvPerM: { pair: -200 },
+    });
+  });
+
   it('at opposite ends with opposite signs drive one current through', () => {
     const ends = (volts: number) =>
       at120(

@@ -200,6 +200,8 @@ describe('verdict', () => {
   it.each([
     [-0.01, 0, 'exceeds'],
     [-0.01, 6, 'exceeds'],
+    [0, 0, 'within-uncertainty'],
+    [0, 6, 'falls-short'],
     [0.01, 0, 'within-uncertainty'],
     [0.01, 6, 'falls-short'],
     [5.99, 6, 'falls-short'],
