@@ -24,7 +24,10 @@ export interface NetModel {
   readonly drives: readonly Drive[];
   /** In the order of `network.sections`. */
   readonly sections: readonly { readonly lengthM: number; readonly z0Ohm: number; readonly planeCount: number }[];
+  /** Trace and return; where planes are solved, without the return over openings, which the plane carries itself. */
   readonly pair: RuledElements;
+  /** Trace and return all the way, for frequencies at which planes are not solved. */
+  readonly pairAlone: RuledElements;
   /** How the net drives planes and cables; null when they are not solved, or its return is a named path. */
   readonly coupling: NetCoupling | null;
   readonly findings: readonly Finding[];
@@ -45,17 +48,19 @@ export function buildNetModel(context: NetContext, net: Net): NetModel {
     context.planes.referenceOf(segment.fromM, segment.toM, segment.layerIndex, net.name),
   );
   const bareFraction = unreferencedFraction(graph, references);
-  const collector = new RuleCollector(context.frame);
 
   if (bareFraction > UNREFERENCED_LIMIT) {
     if (!net.returnPath) throw noReturnError(net, bareFraction);
+    const collector = new RuleCollector(context.frame);
     const named = addNamedReturn(collector, context, net, graph, terminals);
+    const pair = collector.finish();
     return {
       name: net.name,
       network: withEnds(networkOf(board, graph, named.lines, terminals), named.ends),
       drives,
       sections: [...named.sections, ...named.ends].map((section) => ({ ...section, planeCount: 0 })),
-      pair: collector.finish(),
+      pair,
+      pairAlone: pair,
       coupling: null,
       findings: [],
       caveats: lineCaveats(net.name, named.lines),
@@ -87,16 +92,21 @@ export function buildNetModel(context: NetContext, net: Net): NetModel {
         `net ${net.name}`,
       )
     : null;
-  for (const section of sections) {
-    addPairElements(collector, section, context.maxHz, coupling?.gapsBySection.get(section.index));
-  }
-  const placeFindings = addPlaces(collector, context, net, graph, sections, terminals.nodes);
+  const pairWith = (gaps: NetCoupling['gapsBySection']) => {
+    const collector = new RuleCollector(context.frame);
+    for (const section of sections) addPairElements(collector, section, context.maxHz, gaps.get(section.index));
+    const placeFindings = addPlaces(collector, context, net, graph, sections, terminals.nodes);
+    return { pair: collector.finish(), placeFindings };
+  };
+  const { pair: pairAlone, placeFindings } = pairWith(new Map());
+  const hasGaps = coupling !== null && coupling.gapsBySection.size > 0;
   return {
     name: net.name,
     network: networkOf(board, graph, lines, terminals),
     drives,
     sections: sections.map((section) => ({ ...section, planeCount: section.planes.length })),
-    pair: collector.finish(),
+    pair: hasGaps ? pairWith(coupling.gapsBySection).pair : pairAlone,
+    pairAlone,
     coupling,
     findings: [...gapFindings(board, context.planes, net, graph, references, served), ...placeFindings],
     caveats: lineCaveats(net.name, lines),

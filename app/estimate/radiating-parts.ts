@@ -2,7 +2,7 @@ import { addElementCurrents } from '../emitters/element-currents.ts';
 import { statedCableCurrents } from '../emitters/stated-cable.ts';
 import type { Radiator } from '../fields/element-set.ts';
 import { solveNetwork } from '../network/solve-network.ts';
-import type { Scene } from './scene.ts';
+import { type Scene, SOLVED_TO_HZ } from './scene.ts';
 import type { FrequencyLines, SourceLine } from './spectrum-table.ts';
 
 /** Currents of one contributor, in one domain, on one path they radiate through. */
@@ -31,13 +31,14 @@ export function radiatingParts(scene: Scene, { frequencyHz, lines }: FrequencyLi
 
 function netParts(scene: Scene, name: string, lines: readonly SourceLine[], frequencyHz: number): RadiatingPart[] {
   const model = scene.nets.get(name)!;
+  const pair = frequencyHz > SOLVED_TO_HZ ? model.pairAlone : model.pair;
   const responses = solveNetwork(model.network, frequencyHz);
   return [...byDomain(lines)].map(([domain, own]) => {
-    const currentsA = new Float64Array(2 * model.pair.elements.count);
+    const currentsA = new Float64Array(2 * pair.elements.count);
     for (const { driveIndex, re, im } of own) {
-      addElementCurrents(model.pair.rules, responses[driveIndex]!, model.sections, frequencyHz, re, im, currentsA);
+      addElementCurrents(pair.rules, responses[driveIndex]!, model.sections, frequencyHz, re, im, currentsA);
     }
-    return { kind: 'net', name, domain, via: 'pair', radiator: { elements: model.pair.elements, currentsA } };
+    return { kind: 'net', name, domain, via: 'pair', radiator: { elements: pair.elements, currentsA } };
   });
 }
 
