@@ -4,17 +4,16 @@ import type { BoardFile } from '../../app/board/board-file.ts';
 import type { SampleColumns } from '../../app/board/convert-waveforms.ts';
 import { mergeSources, parseBoardFile, parseSourcesFile, toBoard } from '../../app/board/parse-board.ts';
 import { AppError, describe } from '../../app/errors.ts';
+import type { RunDocument } from '../../app/project/stored-run.ts';
 import { readCsvWaveform } from './csv-waveform.ts';
 import { importBoard } from './import-board.ts';
 import { isJsonFile, readJson, sha256OfFile } from './read-text.ts';
 
 export interface LoadedBoard {
-  readonly file: BoardFile;
+  readonly document: RunDocument;
   readonly board: Board;
   /** What the program chose or read on the way. */
   readonly notes: readonly string[];
-  /** Of the board's or layout's bytes, hexadecimal. */
-  readonly sha256: string;
 }
 
 /**
@@ -35,7 +34,13 @@ export async function loadBoard(boardPath: string, sourcesPath?: string): Promis
   const samples = await readSamples(file, folders);
   const places = sourcesPath === undefined ? boardPath : `${boardPath} with ${sourcesPath}`;
   const converted = inFile(places, () => toBoard(file, { samples }));
-  return { file, board: converted.board, notes: [...notes, ...converted.notes], sha256: opened.sha256 };
+  const document: RunDocument = {
+    board: file,
+    samples: Object.fromEntries(samples),
+    sourceSha256: opened.sha256,
+    openingNotes: notes,
+  };
+  return { document, board: converted.board, notes: [...notes, ...converted.notes] };
 }
 
 async function openBoard(path: string): Promise<{ file: BoardFile; notes: string[]; sha256: string }> {

@@ -1,6 +1,7 @@
 import { type Command, Option } from 'commander';
 import type { EstimateResult } from '../../../app/estimate/result.ts';
 import { chooseLimits } from '../../../app/limits/choose.ts';
+import type { RunSettings } from '../../../app/project/run-settings.ts';
 import { csvReport } from '../../../app/report/csv-report.ts';
 import { htmlReport } from '../../../app/report/html-report.ts';
 import { labelledLimits } from '../../../app/report/limit-labels.ts';
@@ -8,11 +9,12 @@ import { textReport } from '../../../app/report/text-report.ts';
 import { mhzToHz } from '../../../app/units/convert.ts';
 import { jsonText } from '../../files/json-text.ts';
 import { loadBoard } from '../../files/load-board.ts';
+import { estimateJob } from '../../jobs/estimate-job.ts';
 import { runEstimate } from '../../jobs/run-estimate.ts';
 import { ESTIMATE_HELP } from '../estimate-help.ts';
 import { EXIT_DONE, EXIT_SHORT } from '../exit.ts';
 import { addLaterOptions, refuseLaterOptions } from '../later.ts';
-import { limitChoice } from '../limit-choice.ts';
+import { readLimitFile, standardAndClass } from '../limit-choice.ts';
 import { numberWithin, wholeNumberWithin } from '../numbers.ts';
 import { checkOutputs, outputWidth, STDOUT, writeOutput } from '../outputs.ts';
 import { progressLine } from '../progress.ts';
@@ -84,33 +86,26 @@ async function estimateFile(file: string, options: EstimateOptions): Promise<num
   const { json, csv, html } = options;
   const inputs = [file, options.sources, options.limitFile];
   await checkOutputs({ '--json': json, '--csv': csv, '--html': html }, inputs);
-  const { limits, catalogue } = await limitChoice(options);
-  const chosen = chooseLimits(limits, catalogue);
+  const limitFile = await readLimitFile(options.limitFile);
+  const { standard, class: limitClass } = standardAndClass(options, limitFile);
   const loaded = await loadBoard(file, options.sources);
-  const structure = chooseStructure(options.structure, loaded.file.structure?.planes);
+  const settings: RunSettings = {
+    standard,
+    class: limitClass,
+    distanceM: options.distance,
+    convertDistance: options.convertDistance === true,
+    measuredFrom: options.measuredFrom,
+    site: options.site,
+    orientation: options.orientation,
+    structure: chooseStructure(options.structure, loaded.document.board.structure?.planes),
+    ...(options.maxMhz !== undefined && { maxHz: mhzToHz(options.maxMhz) }),
+    requiredMarginDb: options.requiredMargin,
+    ...(limitFile !== undefined && { limitFile }),
+  };
+  const job = estimateJob(loaded.document, settings, programVersion());
+  const chosen = chooseLimits(job.limits, job.catalogue);
   const progress = progressLine('Frequency');
-  const result = await runEstimate(
-    {
-      board: loaded.board,
-      limits,
-      ...(catalogue && { catalogue }),
-      request: {
-        site: {
-          kind: options.site,
-          distanceM: options.distance,
-          measuredFrom: options.measuredFrom,
-          orientation: options.orientation,
-        },
-        structure,
-        ...(options.maxMhz !== undefined && { maxHz: mhzToHz(options.maxMhz) }),
-        requiredMarginDb: options.requiredMargin,
-        boardSha256: loaded.sha256,
-        programVersion: programVersion(),
-        notes: [...loaded.notes, ...chosen.notes],
-      },
-    },
-    progress.show,
-  ).finally(progress.clear);
+  const result = await runEstimate(job, progress.show).finally(progress.clear);
 
   await writeOutput(csv, () => csvReport(result));
   await writeOutput(html, () => htmlReport(result, loaded.board, labelledLimits(chosen.lines)));
