@@ -1,19 +1,21 @@
 import type { Board } from '../board/board.ts';
 import type { EstimateResult } from '../estimate/result.ts';
 import type { ReportLimitLine } from './figures/limit-lines.ts';
+import { factsMarkup, sectionMarkup } from './html/section-markup.ts';
+import { textMarkup } from './html/text-markup.ts';
 import { Markup, markup, shortName } from './markup.ts';
 import { boardSection } from './sections/board-section.ts';
 import { findingsSection, modelSection } from './sections/caveats-section.ts';
-import { closingSection } from './sections/closing-section.ts';
+import { cautionsSection, notesSection } from './sections/closing-section.ts';
 import { currentsSection } from './sections/currents-section.ts';
 import { pointsSection } from './sections/points-section.ts';
 import { radiationSection } from './sections/radiation-section.ts';
-import { setupSection } from './sections/setup-section.ts';
+import { limitSection, setupSection } from './sections/setup-section.ts';
 import { sharesSection } from './sections/shares-section.ts';
 import { sourcesSection } from './sections/sources-section.ts';
 import { spectrumSection } from './sections/spectrum-section.ts';
-import { titleSection } from './sections/title-section.ts';
-import { verdictSection } from './sections/verdict-section.ts';
+import { REPORT_TITLE, titleFacts } from './sections/title-section.ts';
+import { verdictHeadline, verdictSummary } from './sections/verdict-section.ts';
 import { STYLES } from './styles.ts';
 
 export type { ReportLimitLine } from './figures/limit-lines.ts';
@@ -37,23 +39,32 @@ export function htmlReport(
   limitLines: readonly ReportLimitLine[],
   options: HtmlReportOptions = {},
 ): string {
+  const sections = [
+    spectrumSection(result, limitLines),
+    radiationSection(result, limitLines),
+    sharesSection(result),
+    boardSection(board, result),
+    pointsSection(result),
+    currentsSection(result, board),
+    findingsSection(result),
+    setupSection(board, result),
+    limitSection(result, limitLines),
+    sourcesSection(board),
+    modelSection(result),
+    notesSection(result),
+    cautionsSection(),
+  ];
   const page = markup`<!DOCTYPE html>
 <html lang="en"><head><meta charset="utf-8"/><meta http-equiv="Content-Security-Policy" content="${new Markup(CONTENT_POLICY)}"/><meta name="viewport" content="width=device-width, initial-scale=1"/><title>${shortName(result.board.name, 80)} — radiated emission</title><style>${new Markup(STYLES)}</style></head>
 <body>
-${titleSection(result, board, options.dateText)}
-${verdictSection(result)}
-${spectrumSection(result, limitLines)}
-${radiationSection(result, limitLines)}
-${sharesSection(result)}
-${boardSection(board, result)}
-${pointsSection(result)}
-${currentsSection(result, board)}
-${findingsSection(result)}
-${setupSection(board, result, limitLines)}
-${sourcesSection(board)}
-${modelSection(result)}
-${closingSection(result)}
-</body></html>
+<header><h1>${REPORT_TITLE}</h1>
+${factsMarkup(titleFacts(result, board, options.dateText))}</header>
+<section class="verdict"><p class="headline">${textMarkup(verdictHeadline(result))}</p>
+<p class="summary">${textMarkup(verdictSummary(result))}</p></section>
+${sections.map(
+  (section) => markup`${sectionMarkup(section)}
+`,
+)}</body></html>
 `;
   return page.source;
 }

@@ -5,6 +5,7 @@ import { cableFigure, distancesAlong } from '../../app/report/figures/cable-figu
 import { cellRuns } from '../../app/report/figures/cell-runs.ts';
 import { colourStep, currentFigure } from '../../app/report/figures/current-figure.ts';
 import { LEVEL_COLOURS } from '../../app/report/figures/level-colours.ts';
+import { sectionMarkup } from '../../app/report/html/section-markup.ts';
 import { currentsSection } from '../../app/report/sections/currents-section.ts';
 import { sampleCurrentMap } from '../support/sample-current-map.ts';
 import { resultWith, sampleResult } from '../support/sample-result.ts';
@@ -216,10 +217,10 @@ describe('current along the cables', () => {
 describe('section', () => {
   it('has a figure with level, margin and main contributor for each map; three at most; nothing without', () => {
     const result = sampleResult();
-    const text = plainText(readPage(`<div>${currentsSection(result, board).source}</div>`));
+    const text = plainText(readPage(`<div>${sectionMarkup(currentsSection(result, board)).source}</div>`));
     expect(text).toMatch(/125 MHz: 42\.3 dBµV\/m, margin −2\.3 dB; mainly CLK_25M via damper cable/);
-    expect(currentsSection(resultWith(result.points), board).source).toBe('');
+    expect(sectionMarkup(currentsSection(resultWith(result.points), board)).source).toBe('');
     const more = { ...result, currentMaps: Array.from({ length: 5 }, (_, i) => sampleCurrentMap(100e6 + i)) };
-    expect(currentsSection(more, board).source.match(/<h3>/g)).toHaveLength(3);
+    expect(sectionMarkup(currentsSection(more, board)).source.match(/<h3>/g)).toHaveLength(3);
   });
 });

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { EstimateResult } from '../../app/estimate/result.ts';
 import { mechanismStrip, stripRangeDb, undrawnMechanisms } from '../../app/report/figures/mechanism-strip.ts';
+import { sectionMarkup } from '../../app/report/html/section-markup.ts';
 import { htmlReport } from '../../app/report/html-report.ts';
 import { radiationOf } from '../../app/report/radiation.ts';
 import { rulingBands } from '../../app/report/ruling-bands.ts';
@@ -11,7 +12,7 @@ import { plainText, readPage } from './html-reader.ts';
 
 const quasiPeak = SAMPLE_LIMIT_LINES.slice(0, 1);
 const sectionText = (result: EstimateResult) =>
-  plainText(readPage(`<div>${radiationSection(result, quasiPeak).source}</div>`));
+  plainText(readPage(`<div>${sectionMarkup(radiationSection(result, quasiPeak)).source}</div>`));
 
 /** The sample with nothing but trace pairs, loops and stated cables. */
 function pairOnly(): EstimateResult {
@@ -122,9 +123,9 @@ describe('What radiates', () => {
   });
 
   it('is not there without lines or contributors', () => {
-    expect(radiationSection(emptyResult(), quasiPeak).source).toBe('');
+    expect(sectionMarkup(radiationSection(emptyResult(), quasiPeak)).source).toBe('');
     const bare = resultWith(sampleResult().points.map((point) => ({ ...point, contributors: [] })));
-    expect(radiationSection(bare, quasiPeak).source).toBe('');
+    expect(sectionMarkup(radiationSection(bare, quasiPeak)).source).toBe('');
     expect(htmlReport(bare, sampleResultBoard(), quasiPeak)).not.toMatch(/NaN|Infinity|undefined/);
   });
 });

@@ -1,40 +1,77 @@
 import type { EstimateResult, ResultPoint } from '../../estimate/result.ts';
-import { inlineMark } from '../figures/marks.ts';
+import { BREAK, type Column, mark, note, type Section, type Text, table } from '../blocks.ts';
 import { fixed, levelText, marginText, mhzText } from '../format.ts';
-import { type Markup, markup } from '../markup.ts';
+import { printed } from '../number.ts';
 import { DETECTOR_SHORT } from '../text-table.ts';
 import { type Standing, standingOf } from '../verdict.ts';
-import { mainMarkup } from './main-markup.ts';
-import { numberCell } from './number.ts';
+import { mainText } from './main-text.ts';
 
 /** Rows before the table stops. */
 const MOST_ROWS = 60;
 
 const STANDING_WORD: Readonly<Record<Standing, string>> = { over: 'over', short: 'short', fine: 'fine' };
 
+const number = (head: string, unit: string, width: number): Column => ({
+  head: [head, BREAK, unit],
+  width,
+  isNumber: true,
+});
+
+const COLUMNS: readonly Column[] = [
+  { head: '', width: 3 },
+  number('Frequency', 'MHz', 10),
+  { head: 'Det.', width: 4.5 },
+  number('Level', 'dBµV/m', 8),
+  number('Limit', 'dBµV/m', 8),
+  { ...number('Margin', 'dB', 7), isStrong: true },
+  number('Horiz.', 'dBµV/m', 8),
+  number('Vert.', 'dBµV/m', 8),
+  number('Bound', 'dBµV/m', 8),
+  { head: 'Pol.', width: 4.5 },
+  number('Height', 'm', 6.5),
+  number('Angle', '°', 6),
+  { head: 'Main contributor', width: 26 },
+];
+
 /** The worst readings in numbers. */
-export function pointsSection(result: EstimateResult): Markup {
+export function pointsSection(result: EstimateResult, mostRows = MOST_ROWS): Section {
+  const title = 'Worst lines';
   const { points } = result;
-  if (points.length === 0) return markup``;
-  const shown = points.slice(0, MOST_ROWS);
+  if (points.length === 0) return { title, blocks: [] };
+  const shown = points.slice(0, mostRows);
   const left = points.length - shown.length;
-  return markup`<section><h2>Worst lines</h2>
-<table class="points"><thead><tr><th></th><th class="n">Frequency<br/>MHz</th><th>Det.</th><th class="n">Level<br/>dBµV/m</th><th class="n">Limit<br/>dBµV/m</th><th class="n">Margin<br/>dB</th><th class="n">Horiz.<br/>dBµV/m</th><th class="n">Vert.<br/>dBµV/m</th><th class="n">Bound<br/>dBµV/m</th><th>Pol.</th><th class="n">Height<br/>m</th><th class="n">Angle<br/>°</th><th>Main contributor</th></tr></thead>
-<tbody>${shown.map((point) => row(point, result.limit.requiredMarginDb))}</tbody></table>
-<p class="note">Worst margin first, ties by frequency.${left > 0 && ` The ${left} readings that follow have larger margins; they are in the JSON result.`} QP quasi-peak, AV average, PK peak. Bound: linear sum of all contributors at the maximum. Angle: azimuth of the antenna in board axes, counter-clockwise from +x seen from the top.</p></section>`;
+  const more = left > 0 ? ` The ${left} readings that follow have larger margins; they are in the JSON result.` : '';
+  return {
+    title,
+    blocks: [
+      table(
+        COLUMNS,
+        shown.map((point) => row(point, result.limit.requiredMarginDb)),
+        'points',
+      ),
+      note(
+        `Worst margin first, ties by frequency.${more} QP quasi-peak, AV average, PK peak. Bound: linear sum of all contributors at the maximum. Angle: azimuth of the antenna in board axes, counter-clockwise from +x seen from the top.`,
+      ),
+    ],
+  };
 }
 
-function row(point: ResultPoint, requiredMarginDb: number): Markup {
+function row(point: ResultPoint, requiredMarginDb: number): Text[] {
   const standing = standingOf(point, requiredMarginDb);
-  return markup`<tr><td>${inlineMark(standing, STANDING_WORD[standing])}</td>${numberCell(mhzText(point.frequencyHz))}<td>${DETECTOR_SHORT[point.detector]}</td>${[
-    levelText(point.levelDbuvPerM),
-    levelText(point.limitDbuvPerM),
-  ].map(numberCell)}<td class="n strong">${marginText(point.marginDb).replace('-', '−')}</td>${[
-    levelText(point.horizontalDbuvPerM),
-    levelText(point.verticalDbuvPerM),
-    levelText(point.upperBoundDbuvPerM),
-  ].map(numberCell)}<td>${point.polarization === 'horizontal' ? 'H' : 'V'}</td>${[
+  const level = (levelDb: number) => printed(levelText(levelDb));
+  return [
+    mark(standing, STANDING_WORD[standing]),
+    mhzText(point.frequencyHz),
+    DETECTOR_SHORT[point.detector],
+    level(point.levelDbuvPerM),
+    level(point.limitDbuvPerM),
+    printed(marginText(point.marginDb)),
+    level(point.horizontalDbuvPerM),
+    level(point.verticalDbuvPerM),
+    level(point.upperBoundDbuvPerM),
+    point.polarization === 'horizontal' ? 'H' : 'V',
     fixed(point.antennaHeightM, 2),
     fixed(point.turntableDeg, 0),
-  ].map(numberCell)}<td>${mainMarkup(point)}</td></tr>`;
+    mainText(point),
+  ];
 }

@@ -1,24 +1,27 @@
 import type { Board } from '../../board/board.ts';
 import type { EstimateResult } from '../../estimate/result.ts';
+import { code, type Fact, name } from '../blocks.ts';
 import { trimmed } from '../format.ts';
-import { type Markup, markup, nameMarkup } from '../markup.ts';
 import { limitName } from '../verdict.ts';
 
+export const REPORT_TITLE = 'Estimate of radiated emission';
+
 /** Title block: what was judged, against what, by which program. `dateText` only when the caller has a date. */
-export function titleSection(result: EstimateResult, board: Board, dateText: string | undefined): Markup {
+export function titleFacts(result: EstimateResult, board: Board, dateText: string | undefined): Fact[] {
   const { site, limit } = result;
-  const facts: readonly (readonly [term: string, value: Markup | string, width?: 'wide' | undefined])[] = [
-    ['Board', nameMarkup(result.board.name, 80)],
-    ['Revision', result.board.revision === '' ? '—' : nameMarkup(result.board.revision)],
-    ['Limit', limitName(result)],
-    ['Required margin', `${trimmed(limit.requiredMarginDb, 1)} dB`],
-    ['Site', `${site.kind === 'ground-plane' ? 'ground plane' : 'free space'}, board ${site.orientation}`],
-    ['Structure', result.structure === 'solved' ? 'planes and cables solved' : 'trace pairs only'],
-    ['Program', `quietboard ${result.program.version}`, dateText === undefined ? 'wide' : undefined],
-    ...(dateText === undefined ? [] : [['Date', dateText] as const]),
-    ['Board file', markup`<span class="code">sha256 ${result.board.sha256.slice(0, 64)}</span>`, 'wide'],
-    ...(board.notes === '' ? [] : [['Board notes', nameMarkup(board.notes, 300), 'wide'] as const]),
+  return [
+    { term: 'Board', value: name(result.board.name, 80) },
+    { term: 'Revision', value: result.board.revision === '' ? '—' : name(result.board.revision) },
+    { term: 'Limit', value: limitName(result) },
+    { term: 'Required margin', value: `${trimmed(limit.requiredMarginDb, 1)} dB` },
+    {
+      term: 'Site',
+      value: `${site.kind === 'ground-plane' ? 'ground plane' : 'free space'}, board ${site.orientation}`,
+    },
+    { term: 'Structure', value: result.structure === 'solved' ? 'planes and cables solved' : 'trace pairs only' },
+    { term: 'Program', value: `quietboard ${result.program.version}`, isWide: dateText === undefined },
+    ...(dateText === undefined ? [] : [{ term: 'Date', value: dateText }]),
+    { term: 'Board file', value: code(`sha256 ${result.board.sha256.slice(0, 64)}`), isWide: true },
+    ...(board.notes === '' ? [] : [{ term: 'Board notes', value: name(board.notes, 300), isWide: true }]),
   ];
-  return markup`<header><h1>Estimate of radiated emission</h1>
-<dl class="facts">${facts.map(([term, value, width]) => markup`<div class="${width ?? 'half'}"><dt>${term}</dt><dd>${value}</dd></div>`)}</dl></header>`;
 }

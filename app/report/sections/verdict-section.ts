@@ -1,11 +1,10 @@
 import type { EstimateResult, Verdict } from '../../estimate/result.ts';
+import { mark, name, strong, type Text } from '../blocks.ts';
 import { DEFERENCE } from '../cautions.ts';
 import { isItself, KIND_PHRASE, mainContributor, pathText } from '../contributor-text.ts';
-import { inlineMark } from '../figures/marks.ts';
 import { countText, fixed, frequencyText, levelText } from '../format.ts';
-import { type Markup, markup, nameMarkup } from '../markup.ts';
+import { printed } from '../number.ts';
 import { limitName, readingsText, type Standing, standingsText, verdictText, worstText } from '../verdict.ts';
-import { printed } from './number.ts';
 
 /** Neither clearly over nor clearly fine is half filled. */
 const VERDICT_MARK: Readonly<Record<Verdict, Standing>> = {
@@ -15,14 +14,15 @@ const VERDICT_MARK: Readonly<Record<Verdict, Standing>> = {
   meets: 'fine',
 };
 
-/** Verdict and the paragraph for whoever reads only one. */
-export function verdictSection(result: EstimateResult): Markup {
-  const mark = result.worst !== null && inlineMark(VERDICT_MARK[result.verdict], result.verdict);
-  return markup`<section class="verdict"><p class="headline">${mark}${limitName(result)}: <strong>${verdictText(result)}</strong></p>
-<p class="summary">${summary(result)}</p></section>`;
-}
+/** The mark of a verdict and the verdict in words. */
+export const verdictHeadline = (result: EstimateResult): Text => [
+  result.worst !== null && mark(VERDICT_MARK[result.verdict], result.verdict),
+  `${limitName(result)}: `,
+  strong(verdictText(result)),
+];
 
-function summary(result: EstimateResult): Markup {
+/** The paragraph for whoever reads only one. */
+export function verdictSummary(result: EstimateResult): Text {
   const { limit, caveats, findings } = result;
   const counts =
     result.points.length === 0
@@ -35,21 +35,23 @@ function summary(result: EstimateResult): Markup {
   ].filter((part) => part !== false);
   const tail = said.length === 0 ? '' : ` ${said.join('; ')}.`;
   const uncertainty = ` A laboratory's own uncertainty is ±${levelText(limit.labUncertaintyDb)} dB; the error of this model comes on top and is not in that figure.`;
-  return markup`${counts}${worstSentence(result)}${tail}${uncertainty} ${DEFERENCE}`;
+  return [counts, worstSentence(result), tail, uncertainty, ` ${DEFERENCE}`];
 }
 
-function worstSentence(result: EstimateResult): Markup {
+function worstSentence(result: EstimateResult): Text {
   const worst = result.points[0];
-  const text = worstText(result).replace('-', '−');
+  const text = printed(worstText(result));
   const sentence = text[0]!.toUpperCase() + text.slice(1);
-  if (!worst) return markup`${sentence}.`;
+  if (!worst) return `${sentence}.`;
   const main = mainContributor(worst);
-  const from =
-    main &&
-    markup` Most of it comes from ${KIND_PHRASE[main.contributor.kind]}${nameMarkup(main.contributor.name)}${
+  return [
+    `${sentence}: ${printed(levelText(worst.levelDbuvPerM))} dBµV/m against ${printed(levelText(worst.limitDbuvPerM))} dBµV/m, ${worst.polarization}, antenna at ${fixed(worst.antennaHeightM, 2)} m, turntable ${fixed(worst.turntableDeg, 0)}°.`,
+    main && [
+      ` Most of it comes from ${KIND_PHRASE[main.contributor.kind]}`,
+      name(main.contributor.name),
       main.path &&
-      !isItself(main.contributor, main.path) &&
-      markup`, radiated mainly by the ${nameMarkup(pathText(main.path.name))}`
-    }.`;
-  return markup`${sentence}: ${printed(levelText(worst.levelDbuvPerM))} dBµV/m against ${printed(levelText(worst.limitDbuvPerM))} dBµV/m, ${worst.polarization}, antenna at ${fixed(worst.antennaHeightM, 2)} m, turntable ${fixed(worst.turntableDeg, 0)}°.${from}`;
+        !isItself(main.contributor, main.path) && [', radiated mainly by the ', name(pathText(main.path.name))],
+      '.',
+    ],
+  ];
 }
