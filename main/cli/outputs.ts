@@ -1,7 +1,7 @@
 import { realpath } from 'node:fs/promises';
 import { resolve } from 'node:path';
 import { AppError } from '../../app/errors.ts';
-import { requireWritable, writeText } from '../files/write-text.ts';
+import { requireWritable, writeBytes, writeText } from '../files/write-text.ts';
 
 /** A file to write, or `-` for standard output. */
 export const STDOUT = '-';
@@ -39,6 +39,11 @@ export async function writeOutput(file: string | undefined, makeText: () => stri
   if (file === undefined) return;
   if (file === STDOUT) process.stdout.write(makeText());
   else await writeText(file, makeText());
+}
+
+/** The same for a file of bytes. */
+export async function writeBytesOutput(file: string | undefined, makeBytes: () => Promise<Uint8Array>): Promise<void> {
+  if (file !== undefined) await writeBytes(file, await makeBytes());
 }
 
 /** Columns to fill: the terminal's, or 80. */

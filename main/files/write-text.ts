@@ -17,7 +17,12 @@ export function removeTemporaryFiles(): void {
  * Writes a file whole or not at all: to a temporary file in the same folder, to the disk, then renamed. A failure leaves
  * the old file as it was. Links are followed; devices and pipes are written directly. Throws `file`.
  */
-export async function writeText(file: string, text: string): Promise<void> {
+export const writeText = (file: string, text: string): Promise<void> => writeWhole(file, text);
+
+/** The same for bytes. */
+export const writeBytes = (file: string, bytes: Uint8Array): Promise<void> => writeWhole(file, bytes);
+
+async function writeWhole(file: string, text: string | Uint8Array): Promise<void> {
   await requireWritable(file);
   try {
     const kind = await stat(file).catch(() => undefined);
@@ -43,7 +48,7 @@ export async function writeText(file: string, text: string): Promise<void> {
   }
 }
 
-async function writeAndClose(handle: FileHandle, text: string): Promise<void> {
+async function writeAndClose(handle: FileHandle, text: string | Uint8Array): Promise<void> {
   try {
     await handle.writeFile(text);
     await handle.sync();
