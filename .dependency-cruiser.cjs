@@ -10,6 +10,19 @@ module.exports = {
     },
     { name: 'main-not-renderer', severity: 'error', from: { path: '^main/' }, to: { path: '^(renderer|test)/' } },
     { name: 'renderer-not-main', severity: 'error', from: { path: '^renderer/' }, to: { path: '^(main|test)/' } },
+    {
+      name: 'components-know-no-state',
+      comment: 'renderer/components are told what to show; they neither call the host nor read the store',
+      severity: 'error',
+      from: { path: '^renderer/components/' },
+      to: { path: '^renderer/(api|state|shell|commands)/' },
+    },
+    {
+      name: 'state-knows-no-view',
+      severity: 'error',
+      from: { path: '^renderer/(api|state)/' },
+      to: { path: '^renderer/(components|shell|commands)/' },
+    },
     { name: 'no-cycles', severity: 'error', from: {}, to: { circular: true } },
     { name: 'nothing-unresolved', severity: 'error', from: {}, to: { couldNotResolve: true } },
   ],
@@ -18,7 +31,7 @@ module.exports = {
     tsPreCompilationDeps: true,
     tsConfig: { fileName: 'tsconfig.json' },
     enhancedResolveOptions: {
-      extensions: ['.ts', '.tsx', '.js'],
+      extensions: ['.ts', '.tsx', '.js', '.css', '.ttf'],
       conditionNames: ['import', 'types', 'node', 'default'],
       exportsFields: ['exports'],
     },

@@ -7,6 +7,19 @@ const MAX_TOLD = 5;
 type RawIssue = Parameters<z.core.$ZodErrorMap>[0];
 type PathPart = string | number | symbol;
 
+/** One thing wrong with a JSON value: its place, and a sentence that says the place, what must be and what came. */
+export interface Problem {
+  readonly path: string;
+  readonly text: string;
+}
+
+/** Everything wrong with a JSON value, in the schema's order; empty when it fits. */
+export function findProblems(schema: z.ZodType, json: unknown): Problem[] {
+  const parsed = schema.safeParse(json, { error: mustBe });
+  if (parsed.success) return [];
+  return parsed.error.issues.flatMap((issue) => sentencesOf(issue, json));
+}
+
 /** A JSON value checked against a schema, or an error that says where, what must be and what came. */
 export function parseWith<T extends z.ZodType>(schema: T, json: unknown): z.output<T> {
   const parsed = schema.safeParse(json, { error: mustBe });
@@ -30,7 +43,7 @@ function pathText(parts: readonly PathPart[]): string {
   return text === '' ? 'the file' : text;
 }
 
-function sentencesOf(issue: z.core.$ZodIssue, json: unknown): { path: string; text: string }[] {
+function sentencesOf(issue: z.core.$ZodIssue, json: unknown): Problem[] {
   const paths = issue.code === 'unrecognized_keys' ? issue.keys.map((key) => [...issue.path, key]) : [issue.path];
   return paths.map((parts) => {
     const path = pathText(parts);

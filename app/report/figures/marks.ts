@@ -8,8 +8,8 @@ import { dashPath, px } from './path.ts';
  * the required margin), a small ring (fine). A polarisation is a dash that lies as its field does.
  */
 
-/** Outlines of one standing's mark at a place; `half` is the filled half of the diamond. */
-function markPath(standing: Standing, x: number, y: number): { outline: string; half: string } {
+/** Outlines of one standing's mark at a place, about 10 wide; `half` is the filled half of the diamond. */
+export function markPath(standing: Standing, x: number, y: number): { outline: string; half: string } {
   switch (standing) {
     case 'over':
       return { outline: `M${px(x)} ${px(y - 5)}L${px(x + 4.8)} ${px(y + 3.5)}H${px(x - 4.8)}Z`, half: '' };
