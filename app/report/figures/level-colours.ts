@@ -28,6 +28,3 @@ export const LEVEL_STEP_DB = 2.5;
 /** Classes `s0` … `s15` fill with the colours; the stroke closes the seams between neighbouring shapes. */
 export const LEVEL_STYLES = `${LEVEL_COLOURS.map((_, i) => `.s${i}{fill:var(--s${i});stroke:var(--s${i})}`).join('')}
 .cells path{stroke-width:.05}.colour-bar rect{stroke-width:.3}`;
-
-export const levelVariables = (colours: readonly string[]): string =>
-  colours.map((colour, i) => `--s${i}:${colour}`).join(';');

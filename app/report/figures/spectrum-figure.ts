@@ -3,6 +3,7 @@ import { frequencyText, marginText, trimmed } from '../format.ts';
 import { type Markup, markup, shortName } from '../markup.ts';
 import { type Standing, standingOf } from '../verdict.ts';
 import type { Scale } from './axis.ts';
+import { HATCH } from './hatch.ts';
 import { clipLine, type ReportLimitLine } from './limit-lines.ts';
 import { DASH_HALF_PX, DENSE_DASH_HALF_PX, markGroup, polarizationDash } from './marks.ts';
 import { linePath, px, type Xy } from './path.ts';
@@ -37,7 +38,7 @@ export function spectrumFigure(result: EstimateResult, lines: readonly ReportLim
   const points = thinPoints(result.points, frequency);
   return markup`<svg class="figure" viewBox="0 0 ${FIGURE_WIDTH} ${HEIGHT}" role="img" aria-label="Level against limit over frequency">
 <defs><clipPath id="spectrum-clip"><rect x="${px(BOX.left)}" y="${px(BOX.top)}" width="${px(BOX.right - BOX.left)}" height="${px(BOX.bottom - BOX.top)}"/></clipPath>
-<pattern id="hatch" width="5" height="5" patternUnits="userSpaceOnUse" patternTransform="rotate(45)"><path class="hatch" d="M0 0V5"/></pattern></defs>
+${HATCH}</defs>
 ${gridMarkup(frequency, level, BOX, 10, 'dBµV/m')}
 ${frequencyNumbers(frequency, BOX.bottom + 15)}
 <g clip-path="url(#spectrum-clip)">
