@@ -1,0 +1,4 @@
+import type { Panel } from './panel.ts';
+
+/** All parts of the window, in the order of their tabs. A part adds its own line. */
+export const PANELS: readonly Panel[] = [];
