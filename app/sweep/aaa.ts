@@ -1,3 +1,5 @@
+import { factorDense, solveDense } from '../math/dense-complex.ts';
+
 /**
  * A rational function of a real variable with complex vector values, in barycentric form:
  *   r(x) = Σ_j w_j f_j/(x − x_j) / Σ_j w_j/(x − x_j).
@@ -146,77 +148,14 @@ function smallestEigenvector(matrix: Float64Array, m: number): Float64Array {
   let trace = 0;
   for (let i = 0; i < m; i++) trace += matrix[2 * (i * m + i)]!;
   for (let i = 0; i < m; i++) matrix[2 * (i * m + i)]! += RIDGE * trace + Number.MIN_VALUE;
-  const pivots = factor(matrix, m);
+  const pivots = factorDense(matrix, m);
   const vector = new Float64Array(2 * m);
   for (let i = 0; i < m; i++) vector[2 * i] = 1 + 0.1 * Math.sin(i + 1);
   for (let step = 0; step < INVERSE_ITERATIONS; step++) {
-    solve(matrix, pivots, vector, m);
+    solveDense(matrix, pivots, vector, m);
     const size = Math.sqrt(vector.reduce((sum, value) => sum + value * value, 0));
     if (!(size > 0 && size < Infinity)) break;
     for (let i = 0; i < vector.length; i++) vector[i]! /= size;
   }
   return vector;
-}
-
-/** LU with partial pivoting of a small complex matrix, in place. */
-function factor(a: Float64Array, m: number): Int32Array {
-  const pivots = new Int32Array(m);
-  for (let k = 0; k < m; k++) {
-    let pivot = k;
-    for (let i = k + 1; i < m; i++) if (size2(a, i * m + k) > size2(a, pivot * m + k)) pivot = i;
-    pivots[k] = pivot;
-    if (pivot !== k) {
-      for (let j = 0; j < 2 * m; j++) {
-        const kept = a[2 * k * m + j]!;
-        a[2 * k * m + j] = a[2 * pivot * m + j]!;
-        a[2 * pivot * m + j] = kept;
-      }
-    }
-    const size = size2(a, k * m + k);
-    if (size === 0) continue;
-    const re = a[2 * (k * m + k)]! / size;
-    const im = -a[2 * (k * m + k) + 1]! / size;
-    for (let i = k + 1; i < m; i++) {
-      const at = 2 * (i * m + k);
-      const lRe = a[at]! * re - a[at + 1]! * im;
-      const lIm = a[at]! * im + a[at + 1]! * re;
-      a[at] = lRe;
-      a[at + 1] = lIm;
-      for (let j = k + 1; j < m; j++) {
-        const from = 2 * (k * m + j);
-        a[2 * (i * m + j)]! -= lRe * a[from]! - lIm * a[from + 1]!;
-        a[2 * (i * m + j) + 1]! -= lRe * a[from + 1]! + lIm * a[from]!;
-      }
-    }
-  }
-  return pivots;
-}
-
-const size2 = (a: Float64Array, at: number): number => a[2 * at]! ** 2 + a[2 * at + 1]! ** 2;
-
-function solve(a: Float64Array, pivots: Int32Array, b: Float64Array, m: number): void {
-  for (let k = 0; k < m; k++) {
-    const pivot = pivots[k]!;
-    for (const part of [0, 1]) {
-      const kept = b[2 * k + part]!;
-      b[2 * k + part] = b[2 * pivot + part]!;
-      b[2 * pivot + part] = kept;
-    }
-    for (let i = k + 1; i < m; i++) subtractProduct(a, i * m + k, b, k, i);
-  }
-  for (let k = m - 1; k >= 0; k--) {
-    for (let j = k + 1; j < m; j++) subtractProduct(a, k * m + j, b, j, k);
-    const size = size2(a, k * m + k);
-    const re = b[2 * k]!;
-    const im = b[2 * k + 1]!;
-    const dRe = a[2 * (k * m + k)]!;
-    const dIm = a[2 * (k * m + k) + 1]!;
-    b[2 * k] = size === 0 ? 0 : (re * dRe + im * dIm) / size;
-    b[2 * k + 1] = size === 0 ? 0 : (im * dRe - re * dIm) / size;
-  }
-}
-
-function subtractProduct(a: Float64Array, at: number, b: Float64Array, from: number, to: number): void {
-  b[2 * to]! -= a[2 * at]! * b[2 * from]! - a[2 * at + 1]! * b[2 * from + 1]!;
-  b[2 * to + 1]! -= a[2 * at]! * b[2 * from + 1]! + a[2 * at + 1]! * b[2 * from]!;
 }
