@@ -72,6 +72,7 @@ export function addNamedReturn(
       z0Ohm: line.z0Ohm,
       epsilonEff: line.epsilonEff,
       planes: [],
+      endsM: [0, 0],
     }),
   );
   const boundFPerM = (Math.sqrt(line.epsilonEff) / (line.z0Ohm * SPEED_OF_LIGHT_M_PER_S)) * (1 - 1 / line.epsilonEff);

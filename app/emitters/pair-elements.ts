@@ -14,6 +14,8 @@ export interface PlacedSection {
   readonly z0Ohm: number;
   readonly epsilonEff: number;
   readonly planes: readonly ReferencePlane[];
+  /** Charge of the ends at node A and B besides the line's own, in lengths of line (`traceEndM`), m. */
+  readonly endsM: readonly [number, number];
 }
 
 /** Nearest the antenna can come to an element, for the choice of quadrature points, m. */
@@ -60,6 +62,29 @@ export function addPairElements(
       atM = Math.max(atM, gap.toM);
     }
     if (lengthM > atM) addStretch(collector, section, plane, atM, lengthM, true, bound, maxHz);
+    addEndCharge(collector, section, plane, capacitanceFPerM);
+  }
+}
+
+/**
+ * Charge of the section's ends besides the line's own: jω C' Δl V/ε_r from plane to trace. In the net it is a capacitor, whose
+ * current the pin's post counts as going down with the load's; what charges the end and is not bound in the dielectric
+ * does not, and is taken back here.
+ */
+function addEndCharge(
+  collector: RuleCollector,
+  { index, fromM, toM, lengthM, endsM }: PlacedSection,
+  { traceZM, planeZM, share, rows }: ReferencePlane,
+  capacitanceFPerM: number,
+): void {
+  const free = (share * capacitanceFPerM) / effectiveDielectric(rows).epsilonR;
+  for (const [endM, [x, y], atM] of [
+    [endsM[0], fromM, 0],
+    [endsM[1], toM, lengthM],
+  ] as const) {
+    if (endM === 0) continue;
+    const rule = { kind: 'shunt', section: index, atM, factor: free * endM } as const;
+    collector.add([x, y, (traceZM + planeZM) / 2], [0, 0, traceZM - planeZM], rule);
   }
 }
 

@@ -18,6 +18,8 @@ export interface CoupledSection {
   readonly planes: readonly ReferencePlane[];
   /** Permittivity between trace and plane. */
   readonly epsilonR: number;
+  /** Charge of the ends at node A and B, in lengths of line (`traceEndM`), m. */
+  readonly endsM: readonly [number, number];
 }
 
 /** Filaments that act on wires are cut to this many cells. */
@@ -46,12 +48,13 @@ export class NetCoupling {
     const { mesh, lookup } = model;
     const own = sections.flatMap((section, index) => (section.planes.length === 1 ? [{ section, index }] : []));
     this.#sectionOfPiece = own.map(({ index }) => index);
-    this.#pieces = own.map(({ section: { fromM, toM, planes, epsilonR } }) => ({
+    this.#pieces = own.map(({ section: { fromM, toM, planes, epsilonR, endsM } }) => ({
       fromM,
       toM,
       heightM: planes[0]!.heightM,
       side: planes[0]!.traceZM > planes[0]!.planeZM ? 1 : -1,
       epsilonR,
+      endsM,
     }));
     this.#pair = new PairCoupling(lookup, this.#pieces, path);
     const gaps = new Map<number, ReturnGap[]>();

@@ -1,5 +1,6 @@
 import { EPSILON0_F_PER_M, MU0_H_PER_M } from '../units/constants.ts';
 import { profileRatio } from './edge-profile.ts';
+import { endCharge, extraM, type PieceEnd } from './end-charge.ts';
 import { walkGrid } from './grid-walk.ts';
 import type { Incident } from './incident.ts';
 import { currentAt, currentIntegral, type LineWave } from './line-wave.ts';
@@ -18,6 +19,14 @@ interface Stretch {
   readonly edges: readonly number[];
   readonly edgeFactors: readonly number[];
   /** Cell and its factor of −1/(2ε0) · ∫q ds, 1/m. */
+  readonly cells: readonly number[];
+  readonly cellFactors: readonly number[];
+}
+
+/** Charge at a piece's end: cells and their factors of −1/(2ε0) · q, 1/m. */
+interface EndSource {
+  readonly piece: number;
+  readonly end: PieceEnd;
   readonly cells: readonly number[];
   readonly cellFactors: readonly number[];
 }
@@ -48,6 +57,7 @@ export class PairCoupling {
   /** Ends of traces off the copper, where the return was kept as drawn. */
   readonly terminalsOffCopper: number;
   readonly #stretches: readonly Stretch[];
+  readonly #ends: readonly EndSource[];
   readonly #injections: readonly Injection[];
   readonly #bareTraces: readonly PairFilament[];
   readonly #bareField: RegularField | null;
@@ -66,6 +76,7 @@ export class PairCoupling {
         gaps.filter((gap) => gap.piece === index),
       ),
     );
+    this.#ends = pieces.flatMap((piece, index) => endSourcesOf(lookup, piece, index));
     this.#injections = gaps.flatMap((gap) => injectionsOf(lookup, pieces[gap.piece]!, gap));
     const { mesh } = lookup;
     this.#bareTraces = gaps.length === 0 ? [] : bareTraces(pieces, gaps, mesh.sheet.zM, mesh.sheet.grid.cellM / 2);
@@ -106,6 +117,13 @@ export class PairCoupling {
       for (let i = 0; i < cells.length; i++) {
         incident.potentialRe[cells[i]!]! += cellFactors[i]! * potentialRe;
         incident.potentialIm[cells[i]!]! += cellFactors[i]! * potentialIm;
+      }
+    }
+    for (const { piece, end: which, cells, cellFactors } of this.#ends) {
+      endCharge(this.pieces[piece]!, waves[piece]!, omega, which, start);
+      for (let i = 0; i < cells.length; i++) {
+        incident.potentialRe[cells[i]!]! -= (cellFactors[i]! * start[0]!) / (2 * EPSILON0_F_PER_M);
+        incident.potentialIm[cells[i]!]! -= (cellFactors[i]! * start[1]!) / (2 * EPSILON0_F_PER_M);
       }
     }
     for (const { piece, atM, cells, shares } of this.#injections) {
@@ -172,17 +190,36 @@ function stretchOf(
   const edgeFactors: number[] = [];
   addEdgeShares(lookup, 'x', x, y, h, ux * h, edges, edgeFactors);
   addEdgeShares(lookup, 'y', x, y, h, uy * h, edges, edgeFactors);
+  return { piece: index, fromM, toM, edges, edgeFactors, ...chargeFactors(lookup, x, y, h) };
+}
+
+/** Cells under a charge at (x, y) and height h (all in cells) with their factors of −1/(2ε0) · q, 1/m. */
+function chargeFactors(
+  { mesh: { sheet }, runs: { firstColumn, endColumn, firstRow, endRow } }: SheetLookup,
+  x: number,
+  y: number,
+  h: number,
+): Pick<Stretch, 'cells' | 'cellFactors'> {
   const cells: number[] = [];
   const cellFactors: number[] = [];
   for (const { cell, share } of cellShares(sheet, x, y)) {
-    const { firstColumn, endColumn, firstRow, endRow } = lookup.runs;
     const ratio =
       profileRatio(x, h, sheet.columnOf[cell]!, firstColumn[cell]!, endColumn[cell]!) *
       profileRatio(y, h, sheet.rowOf[cell]!, firstRow[cell]!, endRow[cell]!);
     cells.push(cell);
-    cellFactors.push((share * ratio * h) / cellM);
+    cellFactors.push((share * ratio * h) / sheet.grid.cellM);
   }
-  return { piece: index, fromM, toM, edges, edgeFactors, cells, cellFactors };
+  return { cells, cellFactors };
+}
+
+function endSourcesOf(lookup: SheetLookup, piece: PairPiece, index: number): EndSource[] {
+  const { originXM, originYM, cellM } = lookup.mesh.sheet.grid;
+  return (['start', 'end'] as const).flatMap((end) => {
+    if (extraM(piece, end) === 0) return [];
+    const [xM, yM] = end === 'start' ? piece.fromM : piece.toM;
+    const [x, y] = [(xM - originXM) / cellM, (yM - originYM) / cellM];
+    return [{ piece: index, end, ...chargeFactors(lookup, x, y, piece.heightM / cellM) }];
+  });
 }
 
 function injectionsOf({ mesh }: SheetLookup, piece: PairPiece, gap: ReturnGap): Injection[] {

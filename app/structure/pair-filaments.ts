@@ -1,4 +1,5 @@
 import type { Point3M } from '../board/board.ts';
+import { endCharge, isAtEnd } from './end-charge.ts';
 import type { Filament } from './filament-kernel.ts';
 import { currentAt, currentIntegral, type LineWave } from './line-wave.ts';
 import { type PairPiece, pieceLengthM } from './pair-piece.ts';
@@ -79,20 +80,28 @@ function cutAtGaps(
 
 /**
  * Mean current along a filament (A) and charge on it (C) at one frequency: re, im of the current, re, im of the charge.
- * Trace: I and q = −(1/jω)(dI/ds)/ε_r; return: the opposite; ends: I of the piece's end; polarisation: from trace to
- * sheet −(1 − 1/ε_r) ΔI, which leaves the trace's charge smaller by ε_r.
+ * Trace: I and q = −(1/jω)(dI/ds)/ε_r, with the end's own charge (`endCharge`) on the last filament; return: the opposite;
+ * ends: I of the piece's end less what charges it; polarisation: from trace to sheet −(1 − 1/ε_r) ΔI, which leaves the
+ * trace's charge smaller by ε_r.
  */
 export function filamentSource(
   { kind, fromM, toM }: PairFilament,
-  { epsilonR }: PairPiece,
+  piece: PairPiece,
   wave: LineWave,
   omega: number,
   out: Float64Array,
 ): void {
+  const { epsilonR } = piece;
+  const charge = new Float64Array(2);
   out[2] = 0;
   out[3] = 0;
   if (kind === 'start' || kind === 'end') {
     currentAt(wave, fromM, out);
+    endCharge(piece, wave, omega, kind, charge);
+    // ±jωq
+    const sign = kind === 'start' ? 1 : -1;
+    out[0]! -= sign * omega * charge[1]!;
+    out[1]! += sign * omega * charge[0]!;
     return;
   }
   currentAt(wave, fromM, out);
@@ -113,4 +122,10 @@ export function filamentSource(
   // −ΔI/(jω ε_r) = j ΔI/(ω ε_r)
   out[2] = (-sign * changeIm) / (omega * epsilonR);
   out[3] = (sign * changeRe) / (omega * epsilonR);
+  for (const end of ['start', 'end'] as const) {
+    if (!isAtEnd(piece, end === 'start' ? fromM : toM, end)) continue;
+    endCharge(piece, wave, omega, end, charge);
+    out[2]! += sign * charge[0]!;
+    out[3]! += sign * charge[1]!;
+  }
 }

@@ -14,6 +14,8 @@ export interface PairPiece {
   readonly side: 1 | -1;
   /** Relative permittivity between trace and sheet: what is left of the trace's charge is C'V/ε_r. */
   readonly epsilonR: number;
+  /** Lengths of line whose charge start and end hold besides the line's own (fringe, a terminal's straight piece), m. */
+  readonly endsM?: readonly [number, number];
 }
 
 export const pieceLengthM = ({ fromM, toM }: PairPiece): number => Math.hypot(toM[0] - fromM[0], toM[1] - fromM[1]);

@@ -33,7 +33,7 @@ export function structureBoard(testCase: StructureCase, cellM?: number): Board {
       nets: [
         {
           name: 'LINE',
-          traces: [{ layer: 'TOP', widthMm: 2 * mToMm(traceRadiusM), pointsMm: [startMm, endMm] }],
+          traces: [{ layer: 'TOP', widthMm: 4 * mToMm(traceRadiusM), pointsMm: [startMm, endMm] }],
           pins: [
             { name: 'source', atMm: startMm, layer: 'TOP' },
             { name: 'load', atMm: endMm, layer: 'TOP' },

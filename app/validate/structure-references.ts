@@ -32,30 +32,6 @@ export const bandsOf = ({ cables }: StructureCase): readonly Band[] =>
 export const RESONANCE_TOLERANCE_DB = 3;
 export const RESONANCE_TOLERANCE = 0.01;
 
-/** One value of a case. */
-type ValueKey = Pick<StructureComparison, 'caseId' | 'frequencyHz' | 'quantity'>;
-
-/**
- * Values known to be outside their tolerance, published as information: never counted as passed, never left out.
- *
- * Two cables on opposite edges: the trace's magnetic part drives them against each other, its electric part together, and where
- * the two nearly cancel, half a decibel in one shows as several in what is left. All three lie 11 dB or more below the stronger
- * component or the other cable's current at that frequency.
- */
-export const KNOWN_DEVIATIONS: readonly ValueKey[] = [
-  { caseId: 'cable-two', frequencyHz: 30e6, quantity: 'horizontal' },
-  { caseId: 'cable-two', frequencyHz: 100e6, quantity: 'cable 1' },
-  { caseId: 'cable-two', frequencyHz: 300e6, quantity: 'cable 1' },
-];
-
-export const isKnownDeviation = ({ caseId, frequencyHz, quantity }: ValueKey): boolean =>
-  KNOWN_DEVIATIONS.some(
-    (known) =>
-      known.caseId === caseId &&
-      known.quantity === quantity &&
-      Math.round(known.frequencyHz) === Math.round(frequencyHz),
-  );
-
 /** Whole boards, planes and cables solved, against stored answers of a general solver: one row a case, band and quantity. */
 export function structureChecks(): Check[] {
   const rows = STRUCTURE_CASES.flatMap((testCase) =>
@@ -69,14 +45,9 @@ function levelRows(testCase: StructureCase): Check[] {
   return bandsOf(testCase).flatMap(({ toHz, toleranceDb }, i, bands) => {
     const fromHz = bands[i - 1]?.toHz ?? 0;
     const own = all.filter(({ frequencyHz }) => frequencyHz > fromHz * (1 + 1e-9) && frequencyHz <= toHz * (1 + 1e-9));
-    const counted = own.filter((one) => !isKnownDeviation(one));
-    const rows = [...new Set(counted.map(({ quantity }) => quantity))].map((quantity) =>
-      levelRow(testCase, toHz, toleranceDb, worstOf(counted.filter((one) => one.quantity === quantity))),
+    return [...new Set(own.map(({ quantity }) => quantity))].map((quantity) =>
+      levelRow(testCase, toHz, toleranceDb, worstOf(own.filter((one) => one.quantity === quantity))),
     );
-    return [
-      ...rows,
-      ...own.filter(isKnownDeviation).map((one) => levelRow(testCase, one.frequencyHz, toleranceDb, one)),
-    ];
   });
 }
 
@@ -87,7 +58,6 @@ const worstOf = (compared: readonly StructureComparison[]): StructureComparison 
   compared.reduce((worst, one) => (sizeDb(one) > sizeDb(worst) ? one : worst));
 
 function levelRow(testCase: StructureCase, toHz: number, toleranceDb: number, worst: StructureComparison): Check {
-  const isInformation = isKnownDeviation(worst);
   const { quantity, frequencyHz, expected, computed } = worst;
   const isField = quantity === 'horizontal' || quantity === 'vertical';
   const toDb = isField ? peakFieldToDbuvPerM : peakCurrentToDbua;
@@ -95,12 +65,11 @@ function levelRow(testCase: StructureCase, toHz: number, toleranceDb: number, wo
     id: `structure-${testCase.id}-${quantity.replace(' ', '-')}-${hzToMhz(toHz)}mhz`,
     source: SOURCE,
     sourceStatus: 'reference solver',
-    quantity: `${describe(testCase)}: ${isField ? `${quantity} maximum at ${STRUCTURE_DISTANCE_M} m` : `largest current of ${quantity}`}, ${isInformation ? 'known deviation at' : 'worst frequency'} ${hzToMhz(frequencyHz)} MHz`,
+    quantity: `${describe(testCase)}: ${isField ? `${quantity} maximum at ${STRUCTURE_DISTANCE_M} m` : `largest current of ${quantity}`}, worst frequency ${hzToMhz(frequencyHz)} MHz`,
     unit: isField ? 'dBµV/m' : 'dBµA',
     expected: toDb(expected),
     computed: toDb(computed),
     tolerance: toleranceDb,
-    isInformation,
   });
 }
 

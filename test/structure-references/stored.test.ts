@@ -5,8 +5,6 @@ import { estimateStructure } from '../../app/validate/structure-estimate.ts';
 import { STRUCTURE_MAXIMA } from '../../app/validate/structure-maxima.ts';
 import {
   bandsOf,
-  isKnownDeviation,
-  KNOWN_DEVIATIONS,
   RESONANCE_TOLERANCE,
   RESONANCE_TOLERANCE_DB,
   structureChecks,
@@ -33,11 +31,17 @@ describe('estimate with solved planes and cables against a wire-grid moment meth
     for (const { frequencyHz, quantity, differenceDb } of compared) {
       const toleranceDb = bandsOf(testCase).find(({ toHz }) => frequencyHz <= toHz * (1 + 1e-9))!.toleranceDb;
       const what = `${quantity} at ${frequencyHz / 1e6} MHz: ${differenceDb.toFixed(2)} dB`;
-      // What is listed as a deviation must be one: a list that outlives its reason would hide something.
-      if (isKnownDeviation({ caseId: testCase.id, frequencyHz, quantity })) {
-        expect(Math.abs(differenceDb), what).toBeGreaterThan(toleranceDb);
-      } else expect(Math.abs(differenceDb), what).toBeLessThanOrEqual(toleranceDb);
+      expect(Math.abs(differenceDb), what).toBeLessThanOrEqual(toleranceDb);
     }
+  });
+
+  it('the electric part: without the charge of the trace’s ends it would be low by 0.3 to 0.9 dB', () => {
+    // Vertical maxima of planes without cables to 200 MHz: the trace's electric moment rules them, most with a high load.
+    const planes = LEVELS.filter(({ id }) => id.startsWith('plane-') || id.startsWith('upright-'));
+    const low = planes.flatMap(structureComparisons).filter((one) => one.frequencyHz <= 200e6 * (1 + 1e-9));
+    const vertical = low.filter(({ quantity }) => quantity === 'vertical').map(({ differenceDb }) => differenceDb);
+    expect(vertical).toHaveLength(3 * planes.length);
+    for (const differenceDb of vertical) expect(Math.abs(differenceDb)).toBeLessThan(0.2);
   });
 
   it('the cable’s resonance: frequency and level', () => {
@@ -66,11 +70,9 @@ describe('estimate with solved planes and cables against a wire-grid moment meth
     expect(new Set(checks.map(({ id }) => id)).size).toBe(checks.length);
     expect(checks.filter(({ status }) => status === 'fail')).toEqual([]);
     const informed = checks.filter(({ status }) => status === 'info');
-    expect(informed.length).toBe(KNOWN_DEVIATIONS.length + 2);
-    const closedForms = informed.slice(-2);
-    expect(closedForms.map(({ id }) => id)).toEqual(['structure-voltage-driven', 'structure-current-driven']);
+    expect(informed.map(({ id }) => id)).toEqual(['structure-voltage-driven', 'structure-current-driven']);
     // The closed forms are meant to be within a few dB of the truth on a board far smaller than the wavelength.
-    for (const { difference } of closedForms) expect(Math.abs(difference)).toBeLessThan(3);
+    for (const { difference } of informed) expect(Math.abs(difference)).toBeLessThan(3);
   });
 
   itNeedsNec2c('the solver still gives a stored row, and a finer grid changes little', async () => {
