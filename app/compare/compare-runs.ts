@@ -66,10 +66,7 @@ function countsOf(lines: readonly LineChange[]): ComparisonCounts {
 
 function warningsOf(before: StoredRun, after: StoredRun, drafts: readonly Draft[]): ComparisonWarning[] {
   const warnings: ComparisonWarning[] = [];
-  const isHarmless = (text: string) => text.startsWith('required margin') || text.startsWith('judged up to');
-  const differences = drafts
-    .filter(({ kind, text }) => kind === 'setup' || kind === 'structure' || (kind === 'limit' && !isHarmless(text)))
-    .map(({ text }) => text);
+  const differences = drafts.filter(({ isBreaking }) => isBreaking).map(({ text }) => text);
   if (differences.length > 0) {
     const message = `The set-ups differ (${differences.join('; ')}): margins cannot be compared; part of every change comes from that`;
     warnings.push({ code: 'setups-differ', message });

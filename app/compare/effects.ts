@@ -91,8 +91,6 @@ export function weighChanges(
 ): { changes: Change[]; causesOf: (line: Omit<LineChange, 'causes'>) => number[] } {
   const asked = new Set(drafts.flatMap(subjectsOf));
   const own = asked.size === 0 ? new Map<string, OwnChange>() : ownChanges(pairs, asked, renames);
-  const acting = countActing(drafts);
-  const wide = drafts.filter(({ isWide }) => isWide).length;
   // A change of the whole board can have done as much as any line changed.
   const most = pairs.reduce((held, pair) => Math.max(held, totalWeight(pair)), 0);
   const weighed = drafts.map((each) => {
@@ -101,9 +99,9 @@ export function weighChanges(
       (held, next) => (held === undefined || next.weight > held.weight ? next : held),
       undefined,
     );
-    const others = (found ? (acting.get(found.key) ?? 0) : 0) + wide - (each.isWide && found === undefined ? 1 : 0);
-    return { each, found, isAlone: others <= 1, weight: each.isWide && !found ? most : (found?.weight ?? 0) };
+    return { each, found, weight: each.isWide && !found ? most : (found?.weight ?? 0) };
   });
+  const isAlone = lonelyFinder(weighed);
   weighed.sort(
     (one, other) =>
       Number(ABOUT_THE_RUN.has(other.each.kind)) - Number(ABOUT_THE_RUN.has(one.each.kind)) ||
@@ -111,21 +109,25 @@ export function weighChanges(
       KINDS.indexOf(one.each.kind) - KINDS.indexOf(other.each.kind) ||
       (one.each.text < other.each.text ? -1 : 1),
   );
-  const changes = weighed.map(({ each, found, isAlone }): Change => {
+  const changes = weighed.map(({ each, found }): Change => {
     const { kind, nets, loops, cables, text } = each;
-    return { kind, nets, loops, cables, text, effect: found ? effectOf(found, isAlone) : null };
+    return { kind, nets, loops, cables, text, effect: found ? effectOf(found, isAlone(found.key)) : null };
   });
   return { changes, causesOf: causeFinder(weighed.map(({ each }) => each)) };
 }
 
-/** Narrow changes by subject: how many act on it. */
-function countActing(drafts: readonly Draft[]): Map<string, number> {
-  const acting = new Map<string, number>();
-  for (const each of drafts) {
+/** Is the level of a net, loop or cable changed by one change only? A cable's level follows from all that drives it. */
+function lonelyFinder(
+  weighed: readonly { each: Draft; found: { key: string } | undefined }[],
+): (key: string) => boolean {
+  const wide = weighed.filter(({ each }) => each.isWide).length;
+  const all = weighed.filter(({ each, found }) => each.isWide || found).length;
+  const narrow = new Map<string, number>();
+  for (const { each } of weighed) {
     if (each.isWide) continue;
-    for (const key of subjectsOf(each)) acting.set(key, (acting.get(key) ?? 0) + 1);
+    for (const key of subjectsOf(each)) narrow.set(key, (narrow.get(key) ?? 0) + 1);
   }
-  return acting;
+  return (key) => (key.startsWith('cable ') ? all : wide + (narrow.get(key) ?? 0)) === 1;
 }
 
 function effectOf(found: OwnChange, isAlone: boolean): ChangeEffect {

@@ -4,6 +4,8 @@ import type { Change, ChangeKind } from '../types.ts';
 export interface Draft extends Omit<Change, 'effect'> {
   /** It may change the level of every net, loop and cable. */
   readonly isWide: boolean;
+  /** Margins before and after it are not comparable. */
+  readonly isBreaking?: true;
 }
 
 interface Subject {

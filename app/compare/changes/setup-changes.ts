@@ -23,6 +23,8 @@ export function setupChanges(before: SetupRun, after: SetupRun): Draft[] {
           convertedText(one.convertDistance),
           convertedText(other.convertDistance),
         ),
+  ];
+  const demands: Words[] = [
     numberChange('required margin', was.requiredMarginDb, is.requiredMarginDb, 'dB'),
     numberChange('judged up to', was.maxHz / 1e6, is.maxHz / 1e6, 'MHz'),
   ];
@@ -34,11 +36,14 @@ export function setupChanges(before: SetupRun, after: SetupRun): Draft[] {
   ];
   const structure = wordChange('planes and cables:', structureText(one.structure), structureText(other.structure));
   const program = wordChange('program version', before.programVersion, after.programVersion);
+  const said = (texts: readonly Words[], make: (text: string) => Draft) =>
+    texts.filter((text) => text !== undefined).map(make);
   return [
-    ...setup.filter((text) => text !== undefined).map((text) => wideDraft('setup', text)),
-    ...limit.filter((text) => text !== undefined).map((text) => draft('limit', text)),
-    ...(structure === undefined ? [] : [wideDraft('structure', structure)]),
-    ...(program === undefined ? [] : [wideDraft('program', program)]),
+    ...said(setup, (text) => ({ ...wideDraft('setup', text), isBreaking: true })),
+    ...said(limit, (text) => ({ ...draft('limit', text), isBreaking: true })),
+    ...said(demands, (text) => draft('limit', text)),
+    ...said([structure], (text) => ({ ...wideDraft('structure', text), isBreaking: true })),
+    ...said([program], (text) => wideDraft('program', text)),
   ];
 }
 
