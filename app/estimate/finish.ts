@@ -9,7 +9,7 @@ import type { EstimateRequest } from './estimate-request.ts';
 import { type LineLevel, siteAt } from './line-level.ts';
 import { modelCaveats } from './model-caveats.ts';
 import type { EstimatePlan, JudgedRange } from './plan.ts';
-import { judge } from './points.ts';
+import { type JudgedPoints, judge } from './points.ts';
 import type { EstimateResult, ResultPoint, Verdict } from './result.ts';
 
 /** Reads the levels of all lines (in order of frequency), judges them and says what goes with them. */
@@ -21,15 +21,9 @@ export function finishEstimate(
 ): EstimateResult {
   const { range, scene } = plan;
   const { limits, site } = request;
-  const { points, sharedHz } = judge(levels, limits);
+  const { points, sharedHz, worst, uncertaintyDb, verdict } = judgement(levels, request, plan);
   const roughHz = levels.filter(({ isRough }) => isRough).map(({ frequencyHz }) => frequencyHz);
   const findings = [...scene.nets.values()].flatMap((model) => model.findings);
-  const worst = points[0];
-  const uncertaintyDb = labUncertaintyDb(
-    worst?.frequencyHz ?? range.fromHz,
-    worst ? siteAt(scene, worst.frequencyHz) : site.kind,
-  );
-  const verdict = verdictOf(worst, request.requiredMarginDb, uncertaintyDb);
   const caveats = modelCaveats(scene, request, range.fromHz, range.toHz, findings, sharedHz, roughHz);
   if (worst && worst.marginDb >= 0 && worst.marginDb < uncertaintyDb) caveats.push(uncertaintyCaveat(uncertaintyDb));
   if (!worst) caveats.push(noLineCaveat(range));
@@ -63,6 +57,29 @@ export function finishEstimate(
     notes: request.notes,
     cautions: CAUTIONS,
   };
+}
+
+export interface Judgement extends JudgedPoints {
+  /** The first of the points. */
+  readonly worst: ResultPoint | undefined;
+  /** A laboratory's, at the worst point, dB. */
+  readonly uncertaintyDb: number;
+  readonly verdict: Verdict;
+}
+
+/** Points, the worst of them and the verdict of the levels (in order of frequency). */
+export function judgement(
+  levels: readonly LineLevel[],
+  { limits, requiredMarginDb }: Pick<EstimateRequest, 'limits' | 'requiredMarginDb'>,
+  { range, scene }: Pick<EstimatePlan, 'range' | 'scene'>,
+): Judgement {
+  const judged = judge(levels, limits);
+  const worst = judged.points[0];
+  const uncertaintyDb = labUncertaintyDb(
+    worst?.frequencyHz ?? range.fromHz,
+    worst ? siteAt(scene, worst.frequencyHz) : scene.site.kind,
+  );
+  return { ...judged, worst, uncertaintyDb, verdict: verdictOf(worst, requiredMarginDb, uncertaintyDb) };
 }
 
 function verdictOf(worst: ResultPoint | undefined, requiredMarginDb: number, uncertaintyDb: number): Verdict {

@@ -30,7 +30,7 @@ export interface JudgedRange {
 }
 
 /** From the lowest limit frequency to the standard's upper frequency (or the user's), never beyond the limit lines. */
-function judgedRange(board: Board, { limits, maxHz }: EstimateRequest): JudgedRange {
+export function judgedRange(board: Board, { limits, maxHz }: EstimateRequest): JudgedRange {
   const fromHz = Math.min(...limits.lines.map(({ points }) => points[0]![0]));
   const lastHz = Math.max(...limits.lines.map(({ points }) => points.at(-1)![0]));
   const used = new Set([...board.drives, ...board.loops].map(({ waveform }) => waveform));
@@ -45,7 +45,8 @@ function judgedRange(board: Board, { limits, maxHz }: EstimateRequest): JudgedRa
   return { fromHz, toHz: wantedHz, rule };
 }
 
-function requireSources(board: Board): void {
+/** Throws `input`, with what could be driven, when nothing on the board is. */
+export function requireSources(board: Board): void {
   const stated = board.cables.filter(({ commonModeRms }) => commonModeRms !== undefined);
   if (drivenNets(board).length + board.loops.length + stated.length > 0) return;
   if (board.drives.length > 0) {
