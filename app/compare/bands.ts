@@ -2,7 +2,7 @@ import { AppError } from '../errors.ts';
 import type { Detector, EstimateResult, ResultPoint } from '../estimate/result.ts';
 import { chooseLimits } from '../limits/choose.ts';
 import { parseLimitFile } from '../limits/limit-file.ts';
-import { type LimitLine, limitOfLine } from '../limits/limit-line.ts';
+import { type LimitCurve, type LimitLine, limitOfLine } from '../limits/limit-line.ts';
 import { limitRequestOf, type RunSettings } from '../project/run-settings.ts';
 import type { BandMargin } from './types.ts';
 
@@ -12,7 +12,7 @@ export interface Band {
   readonly fromHz: number;
   readonly toHz: number;
   /** The piece of the limit line; absent for bands that no line gives. */
-  readonly line?: LimitLine;
+  readonly line?: LimitCurve;
 }
 
 /** A limit file may hold a measured curve: a line of more pieces than this is one band. */
@@ -28,7 +28,7 @@ export const byDetectorAndFrequency = (one: Band, other: Band): number =>
  * The bands of limit lines: one for each piece of each line between two of its break points, by detector, then frequency.
  * Of two lines over the same piece the tighter one (at the geometric middle) stays.
  */
-export function bandsOfLines(lines: readonly LimitLine[]): Band[] {
+export function bandsOfLines(lines: readonly LimitCurve[]): Band[] {
   const bands = new Map<string, Band>();
   for (const line of lines) {
     const edges = [...new Set(line.points.map(([frequencyHz]) => frequencyHz))];
@@ -119,7 +119,7 @@ export function limitLinesOf(settings: RunSettings): readonly LimitLine[] | unde
 
 /** Worst margin of each band; `points` worst margin first. Bands above `maxHz` were not judged and are left out. */
 export function bandMargins(
-  lines: readonly LimitLine[],
+  lines: readonly LimitCurve[],
   { points, limit }: Pick<EstimateResult, 'points' | 'limit'>,
 ): BandMargin[] {
   const bands = bandsOfLines(lines).filter(({ fromHz }) => fromHz < limit.maxHz);

@@ -26,6 +26,9 @@ export interface LimitLine {
   readonly threeToTenMetresDb?: number;
 }
 
+/** The course of a limit line alone. */
+export type LimitCurve = Pick<LimitLine, 'detector' | 'points' | 'startsAboveFirst'>;
+
 export const NO_CLASS = 'none';
 
 /** Relative distance below which two frequencies are one: a harmonic m·f0 is rounded, a band edge is not. */
@@ -35,7 +38,7 @@ const SAME_FREQUENCY = 1e-9;
  * The limit at a frequency, dBµV/m; undefined outside the line. At a step the lower of both values holds (FCC 15.109(c)
  * and 15.209(b) in words; CISPR as laboratories practise it). Ends belong to the line unless `startsAboveFirst`.
  */
-export function limitOfLine({ points, startsAboveFirst }: LimitLine, frequencyHz: number): number | undefined {
+export function limitOfLine({ points, startsAboveFirst }: LimitCurve, frequencyHz: number): number | undefined {
   const above = (edgeHz: number) => frequencyHz > edgeHz * (1 + SAME_FREQUENCY);
   const below = (edgeHz: number) => frequencyHz < edgeHz * (1 - SAME_FREQUENCY);
   if (startsAboveFirst === true && !above(points[0]![0])) return undefined;

@@ -5,5 +5,10 @@ import type { ReportLimitLine } from './figures/limit-lines.ts';
 export const labelledLimits = (lines: readonly LimitLine[]): ReportLimitLine[] =>
   lines.map((line) => {
     const name = line.class === NO_CLASS ? line.standard : `${line.standard} class ${line.class}`;
-    return { detector: line.detector, points: line.points, label: `${name}, ${line.detector}, ${line.distanceM} m` };
+    return {
+      detector: line.detector,
+      points: line.points,
+      label: `${name}, ${line.detector}, ${line.distanceM} m`,
+      ...(line.startsAboveFirst !== undefined && { startsAboveFirst: line.startsAboveFirst }),
+    };
   });

@@ -5,6 +5,8 @@ export interface ReportLimitLine {
   readonly detector: Detector;
   readonly points: readonly (readonly [frequencyHz: number, limitDbuvPerM: number])[];
   readonly label: string;
+  /** The line begins strictly above its first frequency. */
+  readonly startsAboveFirst?: boolean;
 }
 
 /** The part of a line between two frequencies, cut ends interpolated over log f. Empty when it lies outside. */
