@@ -27,7 +27,7 @@ let last: { readonly state: readonly unknown[]; readonly shown: Shown | null } |
 
 export function shownOf({ partial, trial, result, history }: AppState): Shown | null {
   const state = [partial, trial, result, history?.present];
-  if (last !== null && last.state.every((value, i) => value === state[i])) return last.shown;
+  if (last?.state.every((value, i) => value === state[i])) return last.shown;
   last = { state, shown: deriveShown(partial, trial, result, history) };
   return last.shown;
 }
