@@ -38,6 +38,8 @@ export interface RunSummary {
 
 /** A run with all that is needed to show, compare and recompute it. */
 export interface StoredRun extends RunSummary {
+  /** Of the computation. */
+  readonly durationS: number;
   readonly document: RunDocument;
   readonly settings: RunSettings;
   readonly result: EstimateResult;

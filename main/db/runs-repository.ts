@@ -1,0 +1,137 @@
+import type { EstimateResult, Verdict } from '../../app/estimate/result.ts';
+import type { Draft } from '../../app/project/draft.ts';
+import type { RunSummary, StoredRun } from '../../app/project/stored-run.ts';
+import type { ReadableDb, WritableDb } from './database.ts';
+import { getDocument, putDocument, removeUnused } from './documents-repository.ts';
+import { getParts, type PartHashes, putParts } from './parts-repository.ts';
+import { fromColumn, toColumn } from './text-column.ts';
+
+/** A finished run to be kept. */
+export interface NewRun extends Draft {
+  /** ISO 8601, UTC. */
+  readonly startedAt: string;
+  readonly result: EstimateResult;
+  /** Of the computation. */
+  readonly durationS: number;
+  readonly note?: string;
+}
+
+export interface RunFilter {
+  readonly revision?: string;
+  /** At most so many, the newest. */
+  readonly limit?: number;
+}
+
+interface RunRow extends PartHashes {
+  readonly run: number;
+  readonly started_at: string;
+  readonly duration_s: number;
+  readonly board: string;
+  readonly revision: string;
+  readonly result: string;
+  readonly standard: string;
+  readonly class: string;
+  readonly distance_m: number;
+  readonly required_margin_db: number;
+  readonly structure: 'solved' | 'pair-only';
+  readonly worst_frequency_hz: number | null;
+  readonly worst_margin_db: number | null;
+  readonly verdict: Verdict;
+  readonly program_version: string;
+  readonly note: string;
+}
+
+const summaryOf = (row: RunRow): RunSummary => ({
+  run: row.run,
+  startedAt: row.started_at,
+  board: fromColumn(row.board),
+  revision: fromColumn(row.revision),
+  layoutSha256: row.layout,
+  sourcesSha256: row.sources,
+  standard: fromColumn(row.standard),
+  class: fromColumn(row.class),
+  distanceM: row.distance_m,
+  requiredMarginDb: row.required_margin_db,
+  structure: row.structure,
+  worst:
+    row.worst_frequency_hz === null || row.worst_margin_db === null
+      ? null
+      : { frequencyHz: row.worst_frequency_hz, marginDb: row.worst_margin_db },
+  verdict: row.verdict,
+  programVersion: fromColumn(row.program_version),
+  note: fromColumn(row.note),
+});
+
+/** What the list of runs shows of a result: the columns beside its block. */
+export const summaryColumns = ({ board, limit, structure, worst, verdict, program }: EstimateResult) => ({
+  board: toColumn(board.name),
+  revision: toColumn(board.revision),
+  standard: toColumn(limit.standard),
+  class: toColumn(limit.class),
+  distance_m: limit.distanceM,
+  required_margin_db: limit.requiredMarginDb,
+  structure,
+  worst_frequency_hz: worst?.frequencyHz ?? null,
+  worst_margin_db: worst?.marginDb ?? null,
+  verdict,
+  program_version: toColumn(program.version),
+});
+
+/** Keeps a run under its number, with its documents. Throws `input` for what JSON cannot hold. */
+export function insertRun(db: WritableDb, run: number, { startedAt, durationS, result, note, ...draft }: NewRun): void {
+  const row: RunRow = {
+    run,
+    started_at: startedAt,
+    duration_s: durationS,
+    ...summaryColumns(result),
+    ...putParts(db, draft),
+    result: putDocument(db, 'result', result),
+    note: toColumn(note ?? ''),
+  };
+  const columns = Object.keys(row);
+  const values = columns.map((column) => `@${column}`);
+  db.prepare(`INSERT INTO run (${columns.join(', ')}) VALUES (${values.join(', ')})`).run(row);
+}
+
+/** Newest first: by number, as numbers only rise. */
+export function listRuns(db: ReadableDb, { revision, limit }: RunFilter = {}): RunSummary[] {
+  return db
+    .prepare<[object], RunRow>(
+      'SELECT * FROM run WHERE @revision IS NULL OR revision = @revision ORDER BY run DESC LIMIT @limit',
+    )
+    .all({ revision: revision === undefined ? null : toColumn(revision), limit: limit ?? -1 })
+    .map(summaryOf);
+}
+
+const rowOf = (db: ReadableDb, run: number): RunRow | undefined =>
+  db.prepare<[number], RunRow>('SELECT * FROM run WHERE run = ?').get(run);
+
+/** Undefined when there is no such run. Throws `DamagedDocument`. */
+export function getRun(db: ReadableDb, run: number): StoredRun | undefined {
+  const row = rowOf(db, run);
+  if (row === undefined) return undefined;
+  return {
+    ...summaryOf(row),
+    durationS: row.duration_s,
+    ...getParts(db, row),
+    result: getDocument(db, 'result', row.result) as EstimateResult,
+  };
+}
+
+/** Numbers of all runs, rising. */
+export const runNumbers = (db: ReadableDb): number[] =>
+  db.prepare<[], number>('SELECT run FROM run ORDER BY run').pluck().all();
+
+/** False when there is no such run. */
+export const updateNote = (db: WritableDb, run: number, note: string): boolean =>
+  db.prepare('UPDATE run SET note = ? WHERE run = ?').run(toColumn(note), run).changes > 0;
+
+/** Removes a run and the documents only it named; false when there is no such run. */
+export function removeRun(db: WritableDb, run: number): boolean {
+  const row = rowOf(db, run);
+  if (row === undefined) return false;
+  db.prepare('DELETE FROM run WHERE run = ?').run(run);
+  const { layout, sources, opening, settings, result } = row;
+  removeUnused(db, { layout, sources, opening, settings, result });
+  return true;
+}

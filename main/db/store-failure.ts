@@ -1,0 +1,37 @@
+import Database from 'better-sqlite3';
+import { AppError, fileError } from '../../app/errors.ts';
+import { DamagedDocument } from './documents-repository.ts';
+
+const DAMAGED = 'is damaged; nothing was changed. Restore a backup, or examine it with "quietboard doctor"';
+
+/** A failure of the store on a project's file, in words that say what to do. Others come back as they are. */
+export function storeFailure(file: string, busyTimeoutMs: number, error: unknown): unknown {
+  if (error instanceof DamagedDocument) return fileError(file, `${DAMAGED} (${error.message})`, { cause: error });
+  if (!(error instanceof Database.SqliteError)) return error;
+  const options = { cause: error };
+  const [, group = ''] = /^SQLITE_([A-Z]+)/.exec(error.code) ?? [];
+  switch (group) {
+    case 'BUSY':
+    case 'LOCKED': {
+      const waited = `${busyTimeoutMs / 1000} s`;
+      const text = `${file}: another program is writing to it and did not finish within ${waited}. Wait until it has finished, or close it, then try again; nothing was changed.`;
+      return new AppError('busy', text, file, options);
+    }
+    case 'FULL':
+      return fileError(file, 'cannot be written: no space left on the disk; nothing was changed', options);
+    case 'READONLY':
+      return fileError(file, 'cannot be written: the file or its folder is read-only; nothing was changed', options);
+    case 'PERM':
+    case 'AUTH':
+      return fileError(file, 'cannot be opened: access denied', options);
+    case 'CORRUPT':
+    case 'NOTADB':
+      return fileError(file, `${DAMAGED} (${error.message})`, options);
+    case 'CANTOPEN':
+      return fileError(file, 'cannot be opened: its folder must let this program create files beside it', options);
+    case 'IOERR':
+      return fileError(file, `the disk failed (${error.code}); nothing was changed`, options);
+    default:
+      return error;
+  }
+}
