@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { BoardFileInput } from '../../app/board/board-file.ts';
+import { solveNetwork } from '../../app/network/solve-network.ts';
 import { fieldAtAntenna } from '../../app/site/scan.ts';
 import { ETA0_OHM, SPEED_OF_LIGHT_M_PER_S } from '../../app/units/constants.ts';
 import { chargedWire } from '../support/charged-wire.ts';
@@ -156,7 +157,8 @@ describe('moments of a short trace over its plane', () => {
     const { scene, radiators } = radiatorsAt(board, FREQUENCY_HZ);
     const { sum } = totalMoment(radiators);
     const scale = 2 * Math.PI * FREQUENCY_HZ * 2;
-    return { real: sum[4]! / scale, moment: sum[5]! / scale, z0Ohm: scene.nets.get('S')!.sections[0]!.z0Ohm };
+    const { sections, network } = scene.nets.get('S')!;
+    return { real: sum[4]! / scale, moment: sum[5]! / scale, z0Ohm: sections[0]!.z0Ohm, network };
   }
 
   it.each([1, 4.3])('open end, ε_r %f: 8 mm more of line hold C V h/ε_r more moment (physics 5.3)', (epsilonR) => {
@@ -181,6 +183,16 @@ describe('moments of a short trace over its plane', () => {
     const endM = (2 * short! - long!) / 2 / (heightMm * 1e-3) / (1 / (z0Ohm * SPEED_OF_LIGHT_M_PER_S));
     // 0.06 h is the fit's own error.
     expect(Math.abs(endM / (heightMm * 1e-3) - chargedWire(15, 'terminal').endM)).toBeLessThan(0.06);
+  });
+
+  it.each([1, 4.3])('charge of line and ends is what the driver delivers, ε_r %f', (epsilonR) => {
+    const heightMm = 1;
+    const lengthMm = 8;
+    const { moment, network } = electricMoment(epsilonR, heightMm, lengthMm);
+    const { driveCurrents } = solveNetwork(network, FREQUENCY_HZ)[0]!;
+    // Law: I = jω q, and a charge q over a plane has the moment q h/ε_r; V drops by 1e-3, the line's own wave adds as much.
+    const charge = driveCurrents[1]! / (2 * Math.PI * FREQUENCY_HZ);
+    expect(Math.abs((charge * heightMm * 1e-3) / epsilonR / moment - 1)).toBeLessThan(3e-3);
   });
 
   it('loaded end: the far field is that of the small loop I·h·L, E = η0 k² A I/(4π r)', () => {
