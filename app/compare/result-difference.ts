@@ -1,4 +1,5 @@
 import type { EstimateResult, ResultPoint } from '../estimate/result.ts';
+import { canonicalJson } from '../project/exact-json.ts';
 
 /** How a result computed again differs from a stored one. */
 export interface ResultDifference {
@@ -48,5 +49,6 @@ const byReading = (points: readonly ResultPoint[]): Map<string, ResultPoint> =>
 const countMissing = (of: ReadonlyMap<string, unknown>, other: ReadonlyMap<string, unknown>): number =>
   [...of.keys()].filter((key) => !other.has(key)).length;
 
-/** Both sides as they would be written: a number comes back from JSON bit for bit. */
-const isSame = (a: unknown, b: unknown): boolean => JSON.stringify(a) === JSON.stringify(b);
+/** Numbers bit for bit; the order of keys does not count. */
+const isSame = (a: unknown, b: unknown): boolean =>
+  a === b || (a !== undefined && b !== undefined && canonicalJson(a) === canonicalJson(b));

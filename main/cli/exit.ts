@@ -27,6 +27,13 @@ export function reportFailure(error: unknown): number {
   return EXIT_UNEXPECTED;
 }
 
+let interruptHandler: (() => void) | undefined;
+
+/** For commands that run until they are stopped: the first Ctrl-C calls `handler`, the next one ends the process. */
+export function onInterrupt(handler: () => void): void {
+  interruptHandler = handler;
+}
+
 /** Ends the process in an orderly way on signals, on failures nobody caught, and when nobody reads the output. */
 export function guardProcess(): void {
   const endNow = (code: number) => {
@@ -36,7 +43,10 @@ export function guardProcess(): void {
   const interrupt = (code: number) => {
     // The shell's prompt must not land behind a progress line.
     if (process.stderr.isTTY) process.stderr.write('\n');
-    endNow(code);
+    const handler = interruptHandler;
+    interruptHandler = undefined;
+    if (handler) handler();
+    else endNow(code);
   };
   process.on('SIGINT', () => interrupt(EXIT_INTERRUPTED));
   process.on('SIGTERM', () => interrupt(EXIT_TERMINATED));

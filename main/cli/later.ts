@@ -12,7 +12,6 @@ const LATER_COMMANDS = new Map([
   ['runs', 'the project database'],
   ['compare', 'the project database'],
   ['trend', 'the project database'],
-  ['serve', 'the user interface'],
 ]);
 
 /** Knows the options, so that they are refused with a sentence and not as a typing error. Not in the help. */

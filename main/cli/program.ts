@@ -5,6 +5,7 @@ import { addImport } from './commands/import.ts';
 import { addLimits } from './commands/limits.ts';
 import { addNets } from './commands/nets.ts';
 import { addSchema } from './commands/schema.ts';
+import { addServe } from './commands/serve.ts';
 import { addValidate } from './commands/validate.ts';
 import { addLaterCommands } from './later.ts';
 import { programVersion } from './version.ts';
@@ -32,7 +33,8 @@ export function buildProgram(): Command {
     .addHelpText('after', HELP)
     .showHelpAfterError('(--help shows what there is)')
     .exitOverride();
-  for (const add of [addEstimate, addNets, addImport, addLimits, addField, addValidate, addSchema]) add(program);
+  for (const add of [addEstimate, addNets, addImport, addLimits, addField, addValidate, addSchema, addServe])
+    add(program);
   addLaterCommands(program);
   return program;
 }

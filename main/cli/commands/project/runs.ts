@@ -1,0 +1,83 @@
+import type { Command } from 'commander';
+import type { RunSummary } from '../../../../app/project/stored-run.ts';
+import { fixed, trimmed } from '../../../../app/report/format.ts';
+import { wrapText } from '../../../../app/report/wrap.ts';
+import { hzToMhz } from '../../../../app/units/convert.ts';
+import { jsonText } from '../../../files/json-text.ts';
+import { type Column, table } from '../../columns.ts';
+import { checkOutputs, outputWidth, STDOUT, writeOutput } from '../../outputs.ts';
+import { addProjectOption, type ProjectOption, withProject } from '../../project-file.ts';
+
+const HELP = `
+Examples:
+  quietboard runs --project valve.quietboard
+  quietboard runs --project valve.quietboard --revision C --json -
+`;
+
+interface RunsOptions extends ProjectOption {
+  readonly revision?: string;
+  readonly json?: string;
+}
+
+export function addRuns(program: Command): void {
+  const command = program
+    .command('runs')
+    .summary('the runs kept in a project')
+    .description('Lists the runs kept in a project, newest first.');
+  addProjectOption(command)
+    .option('--revision <name>', 'only runs of this revision')
+    .option('--json <file>', 'write the list as JSON; - for standard output')
+    .addHelpText('after', HELP)
+    .action(listRuns);
+}
+
+async function listRuns({ project: file, revision, json }: RunsOptions): Promise<void> {
+  await checkOutputs({ '--json': json }, [file]);
+  const { name, runs } = await withProject(file, 'read', (project) => ({
+    name: project.info().name,
+    runs: project.runs(revision === undefined ? {} : { revision }),
+  }));
+  await writeOutput(json, () => jsonText({ runs: runs.map(listed) }));
+  if (json !== STDOUT) process.stdout.write(`${runLines(name, runs, outputWidth()).join('\n')}\n`);
+}
+
+/** A run as the JSON contract lists it. */
+const listed = ({ layoutSha256, sourcesSha256, ...summary }: RunSummary) => ({
+  ...summary,
+  layoutSha256,
+  sourcesSha256,
+});
+
+function runLines(name: string, runs: readonly RunSummary[], width: number): string[] {
+  if (runs.length === 0) return ['No runs yet. Keep one with: quietboard estimate BOARD --project FILE'];
+  const notes = runs.filter(({ note }) => note !== '');
+  return [
+    ...wrapText(`${name}: ${runs.length} ${runs.length === 1 ? 'run' : 'runs'}`, width),
+    '',
+    ...table(runs, COLUMNS, width),
+    ...(notes.length === 0 ? [] : ['']),
+    ...notes.flatMap(({ run, note }) => wrapText(`#${run}: ${note}`, width, '', '    ')),
+  ];
+}
+
+const VERDICT_WORDS: Readonly<Record<RunSummary['verdict'], string>> = {
+  meets: 'meets',
+  exceeds: 'exceeds',
+  'falls-short': 'falls short',
+  'within-uncertainty': 'within uncertainty',
+};
+
+const COLUMNS: readonly Column<RunSummary>[] = [
+  { head: 'run', text: ({ run }) => `#${run}`, align: 'right' },
+  { head: 'when (UTC)', text: ({ startedAt }) => `${startedAt.slice(0, 10)} ${startedAt.slice(11, 16)}` },
+  { head: 'board', text: ({ board }) => board, minWidth: 6 },
+  { head: 'rev', text: ({ revision }) => revision, minWidth: 3 },
+  {
+    head: 'limit',
+    text: (run) => `${run.standard} ${run.class} ${trimmed(run.distanceM, 2)} m`,
+    minWidth: 8,
+  },
+  { head: 'worst dB', text: ({ worst }) => (worst ? fixed(worst.marginDb, 1) : '–'), align: 'right' },
+  { head: 'at MHz', text: ({ worst }) => (worst ? trimmed(hzToMhz(worst.frequencyHz), 3) : ''), align: 'right' },
+  { head: 'verdict', text: ({ verdict }) => VERDICT_WORDS[verdict], minWidth: 8 },
+];

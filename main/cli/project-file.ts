@@ -1,0 +1,32 @@
+import type { Command } from 'commander';
+import { inputError } from '../../app/errors.ts';
+import { Project } from '../db/project.ts';
+
+export interface ProjectOption {
+  readonly project: string;
+}
+
+export const addProjectOption = (command: Command): Command =>
+  command.requiredOption('--project <file>', 'project file (*.quietboard)');
+
+/** Opens an existing project for one piece of work and closes it whatever happens. */
+export async function withProject<T>(
+  file: string,
+  access: 'read' | 'write',
+  work: (project: Project) => T | Promise<T>,
+): Promise<T> {
+  const project = Project.open(file, { readOnly: access === 'read' });
+  try {
+    return await work(project);
+  } finally {
+    project.close();
+  }
+}
+
+/** A run's number as typed: 7 or #7. */
+export function runNumber(text: string): number {
+  const digits = /^#?(\d{1,9})$/.exec(text.trim())?.[1];
+  const run = Number(digits ?? Number.NaN);
+  if (!(run >= 1)) throw inputError('RUN', 'the number of a run, for example 7 (see "quietboard runs")', text);
+  return run;
+}
