@@ -1,4 +1,4 @@
-import { factorSymmetric, solveSymmetric } from './factor.ts';
+import { solveRealSymmetric } from './real-solve.ts';
 import { meanLogOfCells } from './strip-density.ts';
 
 /** Columns on either side of the slot in the two-dimensional problem: more change the result by the slow logarithm only. */
@@ -53,13 +53,12 @@ function agm(a: number, b: number): number {
 /** L'/µ0 of the same two strips as uniform columns with opposite currents, the innermost pair's kernel lowered by δ. */
 function discreteInductance(missing: number, delta: number): number {
   const n = COLUMNS;
-  const matrix = { size: n, re: new Float64Array(n * n), im: new Float64Array(n * n) };
+  const matrix = new Float64Array(n * n);
   for (let i = 0; i < n; i++) {
-    for (let j = 0; j <= i; j++) matrix.re[i * n + j] = meanLogOfCells(i + j + 1 + missing) - meanLogOfCells(i - j);
+    for (let j = 0; j <= i; j++) matrix[i * n + j] = meanLogOfCells(i + j + 1 + missing) - meanLogOfCells(i - j);
   }
-  matrix.re[0]! -= delta;
-  factorSymmetric(matrix);
+  matrix[0]! -= delta;
   const current = new Float64Array(n).fill(1);
-  solveSymmetric(matrix, current, new Float64Array(n));
+  solveRealSymmetric(matrix, current);
   return 1 / (Math.PI * current.reduce((sum, value) => sum + value, 0));
 }

@@ -1,4 +1,4 @@
-import { factorSymmetric, solveSymmetric } from './factor.ts';
+import { solveRealSymmetric } from './real-solve.ts';
 
 /** Wider runs are treated like this one: the edges no longer see each other. */
 const WIDEST_CELLS = 48;
@@ -63,17 +63,16 @@ function discreteStrip(count: number): DiscreteStrip {
 }
 
 function solveStrip(count: number, edge: number): { readonly potential: number; readonly densities: Float64Array } {
-  const matrix = { size: count, re: new Float64Array(count * count), im: new Float64Array(count * count) };
+  const matrix = new Float64Array(count * count);
   // A constant in the kernel shifts the potential only; this one keeps the matrix positive.
   const constant = Math.log(10 * count);
   for (let i = 0; i < count; i++) {
-    for (let j = 0; j <= i; j++) matrix.re[i * count + j] = constant - meanLogOfCells(i - j);
+    for (let j = 0; j <= i; j++) matrix[i * count + j] = constant - meanLogOfCells(i - j);
   }
-  matrix.re[0]! -= edge;
-  matrix.re[count * count - 1]! -= edge;
-  factorSymmetric(matrix);
+  matrix[0]! -= edge;
+  matrix[count * count - 1]! -= edge;
   const densities = new Float64Array(count).fill(1);
-  solveSymmetric(matrix, densities, new Float64Array(count));
+  solveRealSymmetric(matrix, densities);
   const total = densities.reduce((sum, value) => sum + value, 0);
   for (let i = 0; i < count; i++) densities[i]! /= total;
   return { potential: 1 / total - constant, densities };

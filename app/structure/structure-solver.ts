@@ -1,5 +1,5 @@
 import { MU0_H_PER_M, SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
-import { factorSymmetric, type SymmetricMatrix, solveSymmetric } from './factor.ts';
+import { type SymmetricMatrix, SymmetricSystem } from './factor.ts';
 import type { Incident } from './incident.ts';
 import type { Mesh } from './mesh.ts';
 import { PartialElements } from './partials.ts';
@@ -9,12 +9,6 @@ export interface EdgeCurrents {
   readonly re: Float64Array;
   readonly im: Float64Array;
 }
-
-const newMatrix = (size: number): SymmetricMatrix => ({
-  size,
-  re: new Float64Array(size * size),
-  im: new Float64Array(size * size),
-});
 
 /** Impedance in series with an edge, Ω. */
 export interface SeriesImpedance {
@@ -28,14 +22,15 @@ export class StructureSolver {
   readonly mesh: Mesh;
   readonly #partials: PartialElements;
   readonly #nodes: SymmetricMatrix;
-  readonly #edges: SymmetricMatrix;
+  readonly #edges: SymmetricSystem;
   #kPerM = 0;
 
   constructor(mesh: Mesh) {
     this.mesh = mesh;
     this.#partials = new PartialElements(mesh);
-    this.#nodes = newMatrix(mesh.nodeCount);
-    this.#edges = newMatrix(mesh.edgeCount);
+    const size = mesh.nodeCount;
+    this.#nodes = { size, re: new Float64Array(size * size), im: new Float64Array(size * size) };
+    this.#edges = new SymmetricSystem(mesh.edgeCount);
   }
 
   setFrequency(frequencyHz: number, series: readonly SeriesImpedance[]): void {
@@ -49,7 +44,7 @@ export class StructureSolver {
       re[edge * size + edge]! += scale * reactance;
       im[edge * size + edge]! -= scale * ohm;
     }
-    factorSymmetric(this.#edges);
+    this.#edges.factor();
   }
 
   /** Currents for one excitation at the frequency set last. */
@@ -64,7 +59,7 @@ export class StructureSolver {
    * of an observer serves every excitation v (reciprocity).
    */
   solveInPlace(re: Float64Array, im: Float64Array): void {
-    solveSymmetric(this.#edges, re, im);
+    this.#edges.solve(re, im);
   }
 
   /** Right-hand side of the edges' equations for one excitation at the frequency set last. */

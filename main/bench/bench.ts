@@ -1,10 +1,12 @@
 import { writeFileSync } from 'node:fs';
 import { cpus, totalmem } from 'node:os';
 import type { BenchResult } from './bench-result.ts';
+import { factorBench } from './factor-bench.ts';
 import { scanBench } from './scan-bench.ts';
 import { largeStructureBench, smallStructureBench } from './structure-bench.ts';
 
 const BENCHES: readonly (() => BenchResult | Promise<BenchResult>)[] = [
+  factorBench,
   scanBench,
   smallStructureBench,
   largeStructureBench,

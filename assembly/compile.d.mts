@@ -1,0 +1,1 @@
+export declare function kernelModuleText(): Promise<string>;
