@@ -18,45 +18,102 @@ export interface ReturnGap {
 /** Ends closer than this are one point. */
 const SAME_POINT_M = 1e-9;
 
+/** A piece's gaps and the cells under its ends (−1: none). */
+interface PieceWalk {
+  readonly gaps: readonly ReturnGap[];
+  readonly firstCell: number;
+  readonly lastCell: number;
+}
+
+/** An end of a piece at a joint, with the cell under it (−1: none). */
+interface PieceEndAt {
+  readonly piece: number;
+  readonly isStart: boolean;
+  readonly cell: number;
+}
+
 /**
- * Openings under the pieces of one net. A piece may enter or leave an opening at its end when another piece goes on there. An
- * opening that reaches a terminal (an end where no other piece goes on) has no copper behind it: the return filament
- * is kept there as drawn, and the opening is counted in `terminals`.
+ * Openings under the pieces of one net. A piece may enter or leave an opening at its end when another piece goes on there; pieces
+ * that meet on an opening (a bend on the line of a slot), each still over copper, have a gap to their joint. An opening that
+ * reaches a terminal (an end where no other piece goes on) has no copper behind it: the return filament is kept there as
+ * drawn, and the opening is counted in `terminals`.
  */
 export function findReturnGaps(
   sheet: Sheet,
   pieces: readonly PairPiece[],
 ): { readonly gaps: ReturnGap[]; readonly terminals: number } {
-  const found = pieces.flatMap((piece, index) => gapsOfPiece(sheet, piece, index));
+  const walks = pieces.map((piece, index) => walkPiece(sheet, piece, index));
+  const joints = jointsOf(pieces, walks);
+  const found = walks.flatMap(({ gaps }) => gaps);
+  for (const ends of joints.values()) found.push(...gapsAtJoint(sheet, pieces, ends));
+  found.sort((one, other) => one.piece - other.piece || one.fromM - other.fromM);
+
   const group = found.map((_, index) => index);
   const root = (index: number): number => {
     let at = index;
     while (group[at] !== at) at = group[at]!;
     return at;
   };
-  const atTerminal = new Set<number>();
-  const openEnds: { readonly gap: number; readonly pointM: PointM }[] = [];
+  const openAt = new Map<string, number[]>();
+  const addOpen = (gap: number, point: PointM): void => {
+    const key = keyOf(point);
+    openAt.set(key, [...(openAt.get(key) ?? []), gap]);
+  };
   for (const [index, gap] of found.entries()) {
     const piece = pieces[gap.piece]!;
-    if (gap.fromCell < 0) openEnds.push({ gap: index, pointM: piece.fromM });
-    if (gap.toCell < 0) openEnds.push({ gap: index, pointM: piece.toM });
+    if (gap.fromCell < 0) addOpen(index, piece.fromM);
+    if (gap.toCell < 0) addOpen(index, piece.toM);
   }
-  for (const { gap, pointM } of openEnds) {
-    const partners = openEnds.filter((other) => other.gap !== gap && isSamePoint(other.pointM, pointM));
-    if (partners.length === 0) atTerminal.add(gap);
-    for (const partner of partners) group[root(partner.gap)] = root(gap);
+  const atTerminal = new Set<number>();
+  for (const gapsHere of openAt.values()) {
+    if (gapsHere.length === 1) atTerminal.add(gapsHere[0]!);
+    for (const gap of gapsHere) group[root(gap)] = root(gapsHere[0]!);
   }
   const keptGroups = new Set([...atTerminal].map(root));
   const gaps = found.filter((_, index) => !keptGroups.has(root(index)));
   return { gaps, terminals: atTerminal.size };
 }
 
-const isSamePoint = (a: PointM, b: PointM): boolean => Math.hypot(a[0] - b[0], a[1] - b[1]) < SAME_POINT_M;
+const keyOf = ([x, y]: PointM): string => `${Math.round(x / SAME_POINT_M)} ${Math.round(y / SAME_POINT_M)}`;
 
-function gapsOfPiece(sheet: Sheet, piece: PairPiece, index: number): ReturnGap[] {
+/** Ends of pieces by their place. */
+function jointsOf(pieces: readonly PairPiece[], walks: readonly PieceWalk[]): Map<string, PieceEndAt[]> {
+  const joints = new Map<string, PieceEndAt[]>();
+  const add = (point: PointM, end: PieceEndAt): void => {
+    const known = joints.get(keyOf(point));
+    if (known) known.push(end);
+    else joints.set(keyOf(point), [end]);
+  };
+  for (const [piece, { fromM, toM }] of pieces.entries()) {
+    add(fromM, { piece, isStart: true, cell: walks[piece]!.firstCell });
+    add(toM, { piece, isStart: false, cell: walks[piece]!.lastCell });
+  }
+  return joints;
+}
+
+/**
+ * Where the cells under the ends that meet do not all conduct to each other, every return filament stops at its own cell: their
+ * currents sum to zero, so what is injected does too.
+ */
+function gapsAtJoint(sheet: Sheet, pieces: readonly PairPiece[], ends: readonly PieceEndAt[]): ReturnGap[] {
+  const [first] = ends;
+  if (!first || ends.every(({ cell }) => cell < 0)) return [];
+  if (first.cell >= 0 && ends.every(({ cell }) => cell >= 0 && conducts(sheet, first.cell, cell))) return [];
+  return ends.flatMap(({ piece, isStart, cell }): ReturnGap[] => {
+    if (cell < 0) return [];
+    const lengthM = pieceLengthM(pieces[piece]!);
+    const atM = projectionM(sheet, pieces[piece]!, cell, lengthM);
+    return isStart
+      ? [{ piece, fromM: 0, toM: atM, fromCell: -1, toCell: cell }]
+      : [{ piece, fromM: atM, toM: lengthM, fromCell: cell, toCell: -1 }];
+  });
+}
+
+function walkPiece(sheet: Sheet, piece: PairPiece, index: number): PieceWalk {
   const { originXM, originYM, cellM } = sheet.grid;
   const lengthM = pieceLengthM(piece);
   const gaps: ReturnGap[] = [];
+  let firstCell: number | null = null;
   let lastCell = -1;
   let isBroken = false;
   for (const { fromM, toM } of walkGrid(piece.fromM, piece.toM, originXM, originYM, cellM / 2)) {
@@ -64,6 +121,7 @@ function gapsOfPiece(sheet: Sheet, piece: PairPiece, index: number): ReturnGap[]
     const x = (piece.fromM[0] + t * (piece.toM[0] - piece.fromM[0]) - originXM) / cellM;
     const y = (piece.fromM[1] + t * (piece.toM[1] - piece.fromM[1]) - originYM) / cellM;
     const cell = cellUnder(sheet, x, y);
+    firstCell ??= cell;
     if (cell < 0) {
       isBroken = true;
       continue;
@@ -80,7 +138,7 @@ function gapsOfPiece(sheet: Sheet, piece: PairPiece, index: number): ReturnGap[]
     const startM = lastCell < 0 ? 0 : projectionM(sheet, piece, lastCell, lengthM);
     gaps.push({ piece: index, fromM: startM, toM: lengthM, fromCell: lastCell, toCell: -1 });
   }
-  return gaps;
+  return { gaps, firstCell: firstCell ?? -1, lastCell: isBroken ? -1 : lastCell };
 }
 
 /** Arc length where the piece is nearest to the cell's centre. */

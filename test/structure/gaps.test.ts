@@ -49,6 +49,46 @@ describe('openings under a trace', () => {
     ]);
   });
 
+  it('a bend exactly on the slot’s line is the same opening, on either side of the joint', () => {
+    for (const yM of [0.0213, 0.0225]) {
+      const { gaps, terminals } = gapsOf(piece([0.01, yM], [0.03, yM]), piece([0.03, yM], [0.05, 0.027]));
+      expect(terminals).toBe(0);
+      expect(gaps.map(({ piece: of, fromCell, toCell }) => [of, fromCell, toCell])).toEqual([
+        [0, cellAtIndex(sheet, 5, 4), -1],
+        [1, -1, cellAtIndex(sheet, 6, 4)],
+      ]);
+      expect(gaps[0]!.fromM).toBeCloseTo(0.0175, 12);
+      expect(gaps[0]!.toM).toBeCloseTo(0.02, 12);
+      expect(gaps[1]!.fromM).toBe(0);
+    }
+    // Three traces that meet on it, drawn either way: each stops at its own cell.
+    const three = gapsOf(
+      piece([0.03, 0.0213], [0.01, 0.0213]),
+      piece([0.03, 0.0213], [0.05, 0.0213]),
+      piece([0.05, 0.0263], [0.03, 0.0213]),
+    );
+    expect(three.gaps.map(({ fromCell, toCell }) => Math.max(fromCell, toCell))).toEqual([
+      cellAtIndex(sheet, 5, 4),
+      cellAtIndex(sheet, 6, 4),
+      cellAtIndex(sheet, 6, 4),
+    ]);
+    // Beside the slot's end, or where a trace only begins on its line, there is none.
+    expect(gapsOf(piece([0.01, 0.0325], [0.03, 0.0325]), piece([0.03, 0.0325], [0.05, 0.0363])).gaps).toEqual([]);
+    expect(gapsOf(piece([0.03, 0.0213], [0.05, 0.0213]))).toEqual({ gaps: [], terminals: 0 });
+  });
+
+  it('a bend on the far border of a wide opening: no terminal', () => {
+    const { gaps, terminals } = gapsOf(
+      piece([0.039, 0.0113], [0.055, 0.0113]),
+      piece([0.055, 0.0113], [0.0595, 0.0163]),
+    );
+    expect(terminals).toBe(0);
+    expect(gaps.map(({ fromCell, toCell }) => [fromCell, toCell])).toEqual([
+      [cellAtIndex(sheet, 8, 2), -1],
+      [-1, cellAtIndex(sheet, 11, 2)],
+    ]);
+  });
+
   it('an opening at a terminal keeps its return and is counted', () => {
     const { gaps, terminals } = gapsOf(piece([0.01, 0.0113], [0.0508, 0.0113]));
     expect(terminals).toBe(1);
