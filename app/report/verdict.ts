@@ -1,14 +1,25 @@
-import type { EstimateResult, ResultPoint } from '../estimate/result.ts';
+import type { EstimateResult, ResultPoint, Verdict } from '../estimate/result.ts';
 import { NO_CLASS } from '../limits/limit-line.ts';
 import { amountText, countText, frequencyText, levelText, marginText, trimmed } from './format.ts';
 
 /** What a reading is worth: over the limit, under it but short of the required margin, or fine. */
 export type Standing = 'over' | 'short' | 'fine';
 
-export function standingOf(point: ResultPoint, requiredMarginDb: number): Standing {
-  if (point.marginDb < 0) return 'over';
-  return point.marginDb < requiredMarginDb ? 'short' : 'fine';
+export function standingOfMargin(marginDb: number, requiredMarginDb: number): Standing {
+  if (marginDb < 0) return 'over';
+  return marginDb < requiredMarginDb ? 'short' : 'fine';
 }
+
+export const standingOf = (point: ResultPoint, requiredMarginDb: number): Standing =>
+  standingOfMargin(point.marginDb, requiredMarginDb);
+
+/** The standing whose mark a whole verdict carries: neither clearly over nor clearly fine is half filled. */
+export const VERDICT_STANDING: Readonly<Record<Verdict, Standing>> = {
+  exceeds: 'over',
+  'falls-short': 'short',
+  'within-uncertainty': 'short',
+  meets: 'fine',
+};
 
 export type StandingCounts = Readonly<Record<Standing, number>>;
 
@@ -19,7 +30,7 @@ export function countStandings(result: EstimateResult): StandingCounts {
 }
 
 /** The verdict in the words every surface uses. */
-export function verdictText(result: EstimateResult): string {
+export function verdictText(result: Pick<EstimateResult, 'worst' | 'limit' | 'verdict'>): string {
   const { worst, limit } = result;
   if (worst === null) return 'no line in the judged range';
   const at = `at ${frequencyText(worst.frequencyHz)}`;

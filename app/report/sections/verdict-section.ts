@@ -1,22 +1,14 @@
-import type { EstimateResult, Verdict } from '../../estimate/result.ts';
+import type { EstimateResult } from '../../estimate/result.ts';
 import { mark, name, strong, type Text } from '../blocks.ts';
 import { DEFERENCE } from '../cautions.ts';
 import { isItself, KIND_PHRASE, mainContributor, pathText } from '../contributor-text.ts';
 import { countText, fixed, frequencyText, levelText } from '../format.ts';
 import { printed } from '../number.ts';
-import { limitName, readingsText, type Standing, standingsText, verdictText, worstText } from '../verdict.ts';
-
-/** Neither clearly over nor clearly fine is half filled. */
-const VERDICT_MARK: Readonly<Record<Verdict, Standing>> = {
-  exceeds: 'over',
-  'falls-short': 'short',
-  'within-uncertainty': 'short',
-  meets: 'fine',
-};
+import { limitName, readingsText, standingsText, VERDICT_STANDING, verdictText, worstText } from '../verdict.ts';
 
 /** The mark of a verdict and the verdict in words. */
 export const verdictHeadline = (result: EstimateResult): Text => [
-  result.worst !== null && mark(VERDICT_MARK[result.verdict], result.verdict),
+  result.worst !== null && mark(VERDICT_STANDING[result.verdict], result.verdict),
   `${limitName(result)}: `,
   strong(verdictText(result)),
 ];
