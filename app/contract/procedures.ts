@@ -211,4 +211,13 @@ export type Input<N extends ProcedureName> = z.input<(typeof procedures)[N]['inp
 /** What a handler receives. */
 export type Received<N extends ProcedureName> = z.output<(typeof procedures)[N]['input']>;
 export type Output<N extends ProcedureName> = z.output<(typeof procedures)[N]['output']>;
-export type Handlers = { [N in ProcedureName]: (input: Received<N>) => Promise<Output<N>> };
+export type Handlers = { [N in ProcedureName]: (input: Received<N>) => Promise<DeepReadonly<Output<N>>> };
+
+/** Handlers may answer with data that nobody may change. */
+export type DeepReadonly<T> = unknown extends T
+  ? T
+  : T extends Uint8Array
+    ? T
+    : T extends object
+      ? { readonly [K in keyof T]: DeepReadonly<T[K]> }
+      : T;

@@ -27,11 +27,28 @@ export function reportFailure(error: unknown): number {
   return EXIT_UNEXPECTED;
 }
 
-let interruptHandler: (() => void) | undefined;
+/** Whoever starts a command often passes the user's one Ctrl-C on a second time. */
+const SAME_INTERRUPT_MS = 1000;
 
-/** For commands that run until they are stopped: the first Ctrl-C calls `handler`, the next one ends the process. */
+interface Interrupt {
+  readonly handler: () => void;
+  calledAtMs: number | undefined;
+}
+let expected: Interrupt | undefined;
+
+/** For commands that run until they are stopped: the first Ctrl-C calls `handler`, a later one ends the process. */
 export function onInterrupt(handler: () => void): void {
-  interruptHandler = handler;
+  expected = { handler, calledAtMs: undefined };
+}
+
+/** Whether the command has taken the interrupt upon itself. */
+function handInterruptOver(): boolean {
+  if (expected === undefined) return false;
+  const nowMs = performance.now();
+  if (expected.calledAtMs !== undefined) return nowMs - expected.calledAtMs < SAME_INTERRUPT_MS;
+  expected.calledAtMs = nowMs;
+  expected.handler();
+  return true;
 }
 
 /** Ends the process in an orderly way on signals, on failures nobody caught, and when nobody reads the output. */
@@ -43,10 +60,7 @@ export function guardProcess(): void {
   const interrupt = (code: number) => {
     // The shell's prompt must not land behind a progress line.
     if (process.stderr.isTTY) process.stderr.write('\n');
-    const handler = interruptHandler;
-    interruptHandler = undefined;
-    if (handler) handler();
-    else endNow(code);
+    if (!handInterruptOver()) endNow(code);
   };
   process.on('SIGINT', () => interrupt(EXIT_INTERRUPTED));
   process.on('SIGTERM', () => interrupt(EXIT_TERMINATED));

@@ -2,11 +2,12 @@ import { dirname, isAbsolute, join } from 'node:path';
 import type { Board } from '../../app/board/board.ts';
 import type { BoardFile } from '../../app/board/board-file.ts';
 import type { SampleColumns } from '../../app/board/convert-waveforms.ts';
+import type { ImportSummary } from '../../app/board/import-summary.ts';
 import { mergeSources, parseBoardFile, parseSourcesFile, toBoard } from '../../app/board/parse-board.ts';
 import { AppError, describe } from '../../app/errors.ts';
 import type { RunDocument } from '../../app/project/stored-run.ts';
 import { readCsvWaveform } from './csv-waveform.ts';
-import { importBoard } from './import-board.ts';
+import { type ImportOptions, importBoard } from './import-board.ts';
 import { isJsonFile, readJson, sha256OfFile } from './read-text.ts';
 
 export interface LoadedBoard {
@@ -43,14 +44,24 @@ export async function loadBoard(boardPath: string, sourcesPath?: string): Promis
   return { document, board: converted.board, notes: [...notes, ...converted.notes] };
 }
 
-async function openBoard(path: string): Promise<{ file: BoardFile; notes: string[]; sha256: string }> {
+export interface OpenedBoard {
+  readonly file: BoardFile;
+  readonly notes: readonly string[];
+  /** Of the file's bytes. */
+  readonly sha256: string;
+  /** Absent for board files. */
+  readonly summary?: ImportSummary;
+}
+
+/** A board file or a layout in an open format, told by its content. Throws `file` and `input` with the file's name. */
+export async function openBoard(path: string, options: ImportOptions = {}): Promise<OpenedBoard> {
   if (await isJsonFile(path)) {
     const { json, sha256 } = await readJson(path);
     return { file: inFile(path, () => parseBoardFile(json)), notes: [], sha256 };
   }
-  const { board, summary } = await importBoard(path);
-  const findings = summary.findings.map(({ message }) => `Import: ${message}`);
-  return { file: inFile(path, () => parseBoardFile(board)), notes: findings, sha256: await sha256OfFile(path) };
+  const { board, summary } = await importBoard(path, options);
+  const notes = summary.findings.map(({ message }) => `Import: ${message}`);
+  return { file: inFile(path, () => parseBoardFile(board)), notes, sha256: await sha256OfFile(path), summary };
 }
 
 /** Runs a step on a file's content; an input error then says which file. */

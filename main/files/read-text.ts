@@ -82,7 +82,8 @@ export async function isJsonFile(file: string): Promise<boolean> {
   return /^\ufeff?\s*(?:\{|$)/.test((await readBeginning(file)).toString('utf8'));
 }
 
-async function readBeginning(file: string): Promise<Buffer> {
+/** The first bytes. Throws `file`. */
+export async function readBeginning(file: string): Promise<Buffer> {
   try {
     const handle = await open(file, 'r');
     try {

@@ -7,6 +7,7 @@ import { planEstimate } from '../../app/estimate/plan.ts';
 import { runFieldJob } from '../../app/fields/run-field-job.ts';
 import { chooseLimits } from '../../app/limits/choose.ts';
 import { allChecks } from '../../app/validate/all-checks.ts';
+import { openFiles } from '../files/open-files.ts';
 import type { EstimateJob, Job, JobMessage } from './job.ts';
 
 /** Entry of the worker thread: one job, then the thread ends. */
@@ -41,11 +42,13 @@ function run(job: Job) {
       return runFieldJob(job.input);
     case 'validate':
       return allChecks();
+    case 'open files':
+      return openFiles(job.input.files, job.input.onto, { onProgress });
   }
 }
 
 try {
-  say({ kind: 'done', output: run(workerData as Job) });
+  say({ kind: 'done', output: await run(workerData as Job) });
 } catch (error) {
   if (error instanceof AppError) say({ kind: 'failed', code: error.code, message: error.message, path: error.path });
   else throw error;

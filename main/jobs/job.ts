@@ -7,7 +7,9 @@ import type { EstimateResult } from '../../app/estimate/result.ts';
 import type { FieldJob, FieldResult } from '../../app/fields/field-job.ts';
 import type { LimitRequest } from '../../app/limits/choose.ts';
 import type { LimitLine } from '../../app/limits/limit-line.ts';
+import type { RunDocument } from '../../app/project/stored-run.ts';
 import type { Check } from '../../app/validate/check.ts';
+import type { NamedFile, OpenedFiles } from '../files/open-files.ts';
 
 /** An estimate as plain data: the limit lines are chosen again in the thread, as functions cannot be sent to it. */
 export interface EstimateJob {
@@ -24,6 +26,7 @@ export interface JobTypes {
   'estimate finish': { input: EstimateJob & { readonly levels: readonly LineLevel[] }; output: EstimateResult };
   field: { input: FieldJob; output: FieldResult };
   validate: { input: null; output: Check[] };
+  'open files': { input: { readonly files: readonly NamedFile[]; readonly onto?: RunDocument }; output: OpenedFiles };
 }
 export type JobName = keyof JobTypes;
 

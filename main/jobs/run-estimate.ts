@@ -7,16 +7,18 @@ import { runJob } from './run-job.ts';
 /** More threads than this do not pay: each one models the board anew. */
 const MOST_THREADS = 8;
 
-/** Runs an estimate on all cores: every thread takes its share of the frequencies; progress is that of the slowest. */
+/** Runs an estimate on all cores: every thread takes its share of the frequencies; progress is that of the slowest. `signal` ends them. */
 export async function runEstimate(
   job: EstimateJob,
   onProgress?: (done: number, total: number) => void,
+  signal?: AbortSignal,
 ): Promise<EstimateResult> {
   const of = Math.min(MOST_THREADS, availableParallelism());
   const done = new Array<number>(of).fill(0);
   const totals = new Array<number>(of).fill(0);
   const sum = (values: readonly number[]) => values.reduce((a, b) => a + b, 0);
   const stop = new AbortController();
+  const threads = signal ? AbortSignal.any([signal, stop.signal]) : stop.signal;
   try {
     const shares = await Promise.all(
       done.map((_, index) =>
@@ -28,11 +30,11 @@ export async function runEstimate(
             totals[index] = shareTotal;
             onProgress?.(sum(done), Math.max(...totals) * of);
           },
-          stop.signal,
+          threads,
         ),
       ),
     );
-    return await runJob('estimate finish', { ...job, levels: mergeShares(shares) });
+    return await runJob('estimate finish', { ...job, levels: mergeShares(shares) }, undefined, threads);
   } finally {
     stop.abort();
   }

@@ -15,7 +15,9 @@ export function runJob<N extends JobName>(
   return new Promise((resolve, reject) => {
     const job = { name, input } as Job;
     const worker = new Worker(new URL('./job-worker.js', import.meta.url), { workerData: job });
-    signal?.addEventListener('abort', () => void worker.terminate(), { once: true });
+    const end = () => void worker.terminate();
+    if (signal?.aborted) end();
+    signal?.addEventListener('abort', end, { once: true });
     worker.on('message', (message: JobMessage) => {
       if (message.kind === 'progress') onProgress?.(message.done, message.total);
       else if (message.kind === 'done') resolve(message.output as JobTypes[N]['output']);

@@ -47,7 +47,6 @@ describe('usage errors end with code 2 and a sentence on stderr', () => {
     [['estimate', 'a.json', '--project', 'p.db'], '--project is not in this version'],
     [['estimate', 'a.json', '--pdf', 'r.pdf'], '--pdf is not in this version'],
     [['estimate', 'a.json', '--waveform-at', '3,0,1'], '--waveform-at is not in this version'],
-    [['serve', '--port', '1'], 'serve is not in this version'],
     [['runs', '--project', 'p.db'], 'runs is not in this version'],
     [['schema', 'everything'], 'Allowed choices are board, sources, result, field.'],
     [['limits', 'house rule'], 'must be the name of a standard (CISPR 32'],

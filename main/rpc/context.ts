@@ -1,0 +1,30 @@
+import type { AppState } from '../state/app-state.ts';
+import type { Bases } from './bases.ts';
+import type { EventBus } from './event-bus.ts';
+import type { OpenProjects } from './open-projects.ts';
+import type { RunningJobs } from './running-jobs.ts';
+import type { Uploads } from './uploads.ts';
+
+/** The system's own dialogs, where a host has them. null: the user backed out. */
+export interface Dialogs {
+  openProject(): Promise<string | null>;
+  saveProject(name: string): Promise<string | null>;
+  saveFile(name: string): Promise<string | null>;
+}
+
+/** What the handlers work on: one for each host. */
+export interface HostContext {
+  readonly kind: 'window' | 'loopback';
+  readonly version: string;
+  readonly dialogs: Dialogs | null;
+  /** Where projects stand that were given no place. */
+  readonly projectsFolder: string;
+  readonly state: AppState;
+  readonly events: EventBus;
+  readonly projects: OpenProjects;
+  readonly bases: Bases;
+  readonly uploads: Uploads;
+  readonly jobs: RunningJobs;
+  /** Given with the command; opened once. */
+  readonly startFile: string | null;
+}

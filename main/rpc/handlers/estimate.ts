@@ -1,0 +1,38 @@
+import type { Handlers } from '../../../app/contract/procedures.ts';
+import { fileError } from '../../../app/errors.ts';
+import { estimateJob } from '../../jobs/estimate-job.ts';
+import { runEstimate } from '../../jobs/run-estimate.ts';
+import { runJob } from '../../jobs/run-job.ts';
+import type { HostContext } from '../context.ts';
+
+type EstimateHandlers = Pick<Handlers, 'estimate.run' | 'job.stop' | 'validate.run'>;
+
+export function estimateHandlers({ version, projects, bases, jobs, events }: HostContext): EstimateHandlers {
+  return {
+    'estimate.run': ({ projectId, jobId, document, settings, store, note }) =>
+      jobs.run(jobId, async ({ signal, onProgress }) => {
+        const project = projects.get(projectId);
+        // Known before the long work.
+        if (store && project.isReadOnly)
+          throw fileError(project.file, 'is read-only: estimate without keeping the run');
+        const draft = { document: bases.document(project, document), settings };
+        const startedAt = new Date().toISOString();
+        const startedAtMs = performance.now();
+        const result = await runEstimate(
+          estimateJob(draft.document, settings, version),
+          (done, total) => onProgress('Estimating', done, total),
+          signal,
+        );
+        if (!store || signal.aborted) return { result, run: null };
+        const durationS = (performance.now() - startedAtMs) / 1000;
+        const run = project.addRun({ ...draft, startedAt, durationS, result, note });
+        for (const what of ['runs', 'info'] as const) {
+          events.publish('project.changed', { projectId, what, clientId: null });
+        }
+        return { result, run };
+      }),
+    'job.stop': async ({ jobId }) => ({ wasRunning: jobs.stop(jobId) }),
+    'validate.run': ({ jobId }) =>
+      jobs.run(jobId, async ({ signal }) => ({ checks: await runJob('validate', null, undefined, signal) })),
+  };
+}

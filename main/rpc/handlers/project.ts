@@ -1,0 +1,36 @@
+import type { Handlers, Output } from '../../../app/contract/procedures.ts';
+import type { HostContext } from '../context.ts';
+import { newProjectFile, projectFile } from '../new-project-file.ts';
+import { makeSampleProject } from '../sample-project.ts';
+
+type ProjectHandlers = Pick<
+  Handlers,
+  'project.recent' | 'project.open' | 'project.open-sample' | 'project.info' | 'project.rename' | 'project.close'
+>;
+
+export function projectHandlers(context: HostContext): ProjectHandlers {
+  const { projects, projectsFolder, state, events } = context;
+  const open = async (file: string, create: boolean): Promise<Output<'project.open'>> => {
+    const project = projects.open(file, create);
+    await state.addRecent({ file: project.file, name: project.name, openedAt: new Date().toISOString() });
+    return { project };
+  };
+  return {
+    'project.recent': async () => ({ projects: await state.recent() }),
+    'project.open': ({ file, create }) =>
+      file === undefined
+        ? open(newProjectFile(projectsFolder, 'Untitled'), true)
+        : open(projectFile(projectsFolder, file), create),
+    'project.open-sample': async () => open(await makeSampleProject(projectsFolder), false),
+    'project.info': async ({ projectId }) => ({ project: projects.answer(projectId) }),
+    'project.rename': async ({ projectId, name }) => {
+      projects.get(projectId).setName(name);
+      events.publish('project.changed', { projectId, what: 'info', clientId: null });
+      return {};
+    },
+    'project.close': async ({ projectId }) => {
+      projects.close(projectId);
+      return {};
+    },
+  };
+}
