@@ -7,8 +7,6 @@ export interface Command {
   readonly group: 'File' | 'Edit' | 'Estimate' | 'View' | 'Help';
   /** As in `Mod+Shift+Z`; Mod is Ctrl, or Command on a Mac. The first one is shown. */
   readonly keys?: readonly string[];
-  /** Not listed, only reached by its keys. */
-  readonly isHidden?: boolean;
   readonly isEnabled?: () => boolean;
   readonly run: () => void | Promise<void>;
 }

@@ -63,7 +63,8 @@ export function MenuList({
 
 export interface MenuButtonProps {
   readonly label: string;
-  readonly groups: readonly MenuGroup[];
+  /** Asked for each time the menu opens. */
+  readonly groups: () => readonly MenuGroup[];
   /** What the button shows; its label when absent. */
   readonly children?: ReactNode;
 }
@@ -78,11 +79,15 @@ export function MenuButton({ label, groups, children }: MenuButtonProps): ReactE
         {children ?? label}
       </Button>
       <Popover className={css.popover!} offset={2}>
-        <MenuList groups={groups} label={label} />
+        <FreshMenu groups={groups} label={label} />
       </Popover>
     </MenuTrigger>
   );
 }
+
+const FreshMenu = ({ groups, label }: Pick<MenuButtonProps, 'groups' | 'label'>): ReactElement => (
+  <MenuList groups={groups()} label={label} />
+);
 
 export interface ContextMenuProps {
   /** Where it was asked for, in client coordinates; null: closed. */

@@ -23,6 +23,13 @@ export async function start(): Promise<void> {
   if (info.startProject !== null) await showProject(info.startProject);
 }
 
+/** Events may have been missed: everything that another window could have changed is read again. */
+export function refreshAll(): void {
+  void attempt('Project', async () => {
+    await Promise.all((['info', 'runs', 'draft', 'measurements'] as const).map(refresh));
+  });
+}
+
 function refresh(what: 'info' | 'runs' | 'draft' | 'measurements'): Promise<void> {
   switch (what) {
     case 'info':

@@ -1,0 +1,18 @@
+import { createRoot } from 'react-dom/client';
+import { z } from 'zod';
+import { connect } from './api/api.ts';
+import { chooseTransport } from './api/choose-transport.ts';
+import { StartFailure } from './shell/start-failure.tsx';
+import { Window } from './shell/window.tsx';
+import { refreshAll, start } from './state/start.ts';
+import './theme/tokens.css';
+import './theme/base.css';
+
+// The content policy forbids compiled code, which zod would otherwise try first.
+z.config({ jitless: true });
+connect(chooseTransport(refreshAll));
+const root = createRoot(document.getElementById('root')!);
+start().then(
+  () => root.render(<Window />),
+  (error: unknown) => root.render(<StartFailure error={error} />),
+);

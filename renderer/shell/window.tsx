@@ -1,0 +1,41 @@
+import { type ReactElement, useEffect } from 'react';
+import { I18nProvider } from 'react-aria-components';
+import { Toasts } from '../components/toasts.tsx';
+import { LOCALE } from '../i18n/format.ts';
+import { useApp } from '../state/app-store.ts';
+import { notices } from '../state/notices.ts';
+import { useThemeChoice } from '../state/theme.ts';
+import { applyTheme } from '../theme/palette.ts';
+import { DropTarget } from './drop-target.tsx';
+import { Header } from './header.tsx';
+import { Overlays } from './overlays.tsx';
+import { StartPage } from './start-page.tsx';
+import { StatusBar } from './status-bar.tsx';
+import { useCommands } from './use-commands.ts';
+import css from './window.module.css';
+import { Workplace } from './workplace.tsx';
+
+/** The whole window: it composes, and holds no logic. */
+export function Window(): ReactElement {
+  useCommands();
+  const theme = useThemeChoice();
+  useEffect(() => applyTheme(theme), [theme]);
+  const project = useApp((state) => state.project);
+  const hasDocument = useApp(({ history }) => history !== null);
+  useEffect(() => {
+    document.title = project === null ? 'Quietboard' : `${project.name} – Quietboard`;
+  }, [project]);
+  return (
+    <I18nProvider locale={LOCALE}>
+      <DropTarget>
+        <div className={css.window}>
+          <Header />
+          <main className={css.main}>{hasDocument ? <Workplace /> : <StartPage />}</main>
+          <StatusBar />
+        </div>
+      </DropTarget>
+      <Overlays />
+      <Toasts queue={notices} />
+    </I18nProvider>
+  );
+}
