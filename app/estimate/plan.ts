@@ -30,7 +30,7 @@ export interface JudgedRange {
 }
 
 /** From the lowest limit frequency to the standard's upper frequency (or the user's), never beyond the limit lines. */
-export function judgedRange(board: Board, { limits, maxHz }: EstimateRequest): JudgedRange {
+export function judgedRange(board: Board, { limits, maxHz }: Pick<EstimateRequest, 'limits' | 'maxHz'>): JudgedRange {
   const fromHz = Math.min(...limits.lines.map(({ points }) => points[0]![0]));
   const lastHz = Math.max(...limits.lines.map(({ points }) => points.at(-1)![0]));
   const used = new Set([...board.drives, ...board.loops].map(({ waveform }) => waveform));
