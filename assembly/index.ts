@@ -1,3 +1,3 @@
 export { factor } from './factor';
-export { addProduct, addRetarded } from './retarded';
+export { addSources } from './retarded';
 export { solve } from './solve';

@@ -5,48 +5,75 @@ const TURN_LOW_RAD: f64 = 2.430840202602477e-10;
 /** Distances below count as this: the kernel has then reached its limit −jk. */
 const LEAST_M: f64 = 1e-12;
 
+/** Bytes of a source: place and vector, the image's place and vector, amplitude (re, im). */
+const SOURCE: usize = 14 * 8;
+const IMAGE: usize = 6 * 8;
+const AMPLITUDE: usize = 12 * 8;
+
 /**
- * Adds to every target the retarded kernel g = (e^(−jkR) − 1)/R from one point, weighed by l · v.
+ * Σ a_s G(s, t) for every target t, G = static part + retarded part + the image's retarded part.
  *
- * `targets`: addresses of six arrays of `count` (even) numbers one after the other: x, y, z and the vector v of each
- * target; `re`, `im`: addresses of the sums, `count` each. (px, py, pz): the point, (lx, ly, lz): its vector.
- * With s, c = sin, cos(kR/2): g = −2 s (s + jc)/R, free of cancellation. s and c come from a quarter of the phase, whole turns
- * taken out, by series good to 2e-14 (Abramowitz & Stegun 4.3.65–66), and from the double-angle formulas.
+ * `sources`: `sourceCount` records (SOURCE); `statics`: a row of `count` static parts for each source; `targets`: six arrays of
+ * `count` (even) numbers, x, y, z and the vector v of each target; `work`: 2 × `count` numbers; `re`, `im`: the sums, `count`
+ * each, added to. All but counts and flags are addresses.
  */
-export function addRetarded(
+export function addSources(
   kPerM: f64,
-  px: f64,
-  py: f64,
-  pz: f64,
-  lx: f64,
-  ly: f64,
-  lz: f64,
+  sourceCount: i32,
+  sources: usize,
+  hasImages: bool,
+  statics: usize,
   count: i32,
   targets: usize,
+  work: usize,
   re: usize,
   im: usize,
 ): void {
   const bytes = (<usize>count) << 3;
+  const end = sources + <usize>sourceCount * SOURCE;
+  for (let source = sources; source < end; source += SOURCE) {
+    const aRe = load<f64>(source, AMPLITUDE);
+    const aIm = load<f64>(source, AMPLITUDE + 8);
+    if (!(aRe === 0 && aIm === 0)) {
+      memory.copy(work, statics, bytes);
+      memory.fill(work + bytes, 0, bytes);
+      addRetarded(kPerM, source, count, targets, work, work + bytes);
+      if (hasImages) addRetarded(kPerM, source + IMAGE, count, targets, work, work + bytes);
+      addProduct(count, work, work + bytes, aRe, aIm, re, im);
+    }
+    statics += bytes;
+  }
+}
+
+/**
+ * Adds to every target the retarded kernel g = (e^(−jkR) − 1)/R from one point, weighed by l · v.
+ *
+ * `source`: address of the point and its vector l. With s, c = sin, cos(kR/2): g = −2 s (s + jc)/R, free of cancellation. s and
+ * c come from a quarter of the phase, whole turns taken out, by series good to 2e-14 (Abramowitz & Stegun 4.3.65–66), and from the
+ * double-angle formulas.
+ */
+function addRetarded(kPerM: f64, source: usize, count: i32, targets: usize, re: usize, im: usize): void {
+  const bytes = (<usize>count) << 3;
   const k = f64x2.splat(kPerM);
-  const x = f64x2.splat(px);
-  const y = f64x2.splat(py);
-  const z = f64x2.splat(pz);
-  const ux = f64x2.splat(lx);
-  const uy = f64x2.splat(ly);
-  const uz = f64x2.splat(lz);
+  const x = v128.load64_splat(source);
+  const y = v128.load64_splat(source, 8);
+  const z = v128.load64_splat(source, 16);
+  const ux = v128.load64_splat(source, 24);
+  const uy = v128.load64_splat(source, 32);
+  const uz = v128.load64_splat(source, 40);
   for (let at: usize = 0; at < bytes; at += 16) {
-    let source = targets + at;
-    const dx = f64x2.sub(v128.load(source), x);
-    source += bytes;
-    const dy = f64x2.sub(v128.load(source), y);
-    source += bytes;
-    const dz = f64x2.sub(v128.load(source), z);
-    source += bytes;
-    let weight = f64x2.mul(ux, v128.load(source));
-    source += bytes;
-    weight = f64x2.add(weight, f64x2.mul(uy, v128.load(source)));
-    source += bytes;
-    weight = f64x2.add(weight, f64x2.mul(uz, v128.load(source)));
+    let target = targets + at;
+    const dx = f64x2.sub(v128.load(target), x);
+    target += bytes;
+    const dy = f64x2.sub(v128.load(target), y);
+    target += bytes;
+    const dz = f64x2.sub(v128.load(target), z);
+    target += bytes;
+    let weight = f64x2.mul(ux, v128.load(target));
+    target += bytes;
+    weight = f64x2.add(weight, f64x2.mul(uy, v128.load(target)));
+    target += bytes;
+    weight = f64x2.add(weight, f64x2.mul(uz, v128.load(target)));
     const r2 = f64x2.add(f64x2.add(f64x2.mul(dx, dx), f64x2.mul(dy, dy)), f64x2.mul(dz, dz));
     const distance = f64x2.max(f64x2.sqrt(r2), f64x2.splat(LEAST_M));
     const t = quarterPhase(f64x2.mul(k, distance));
@@ -91,7 +118,7 @@ function cosSeries(t2: v128): v128 {
 }
 
 /** out += (re + j im) · g, `count` (even) numbers; addresses of real and imaginary parts. */
-export function addProduct(count: i32, gRe: usize, gIm: usize, re: f64, im: f64, outRe: usize, outIm: usize): void {
+function addProduct(count: i32, gRe: usize, gIm: usize, re: f64, im: f64, outRe: usize, outIm: usize): void {
   const bytes = (<usize>count) << 3;
   const factorRe = f64x2.splat(re);
   const factorIm = f64x2.splat(im);

@@ -13,20 +13,18 @@ const PAGE_BYTES = 65_536;
 interface KernelFunctions {
   factor(re: number, im: number, size: number, w: number, l: number, corner: number): number;
   solve(re: number, im: number, size: number, bRe: number, bIm: number): void;
-  addRetarded(
+  addSources(
     kPerM: number,
-    px: number,
-    py: number,
-    pz: number,
-    lx: number,
-    ly: number,
-    lz: number,
+    sourceCount: number,
+    sources: number,
+    hasImages: boolean,
+    statics: number,
     count: number,
     targets: number,
+    work: number,
     re: number,
     im: number,
   ): void;
-  addProduct(count: number, gRe: number, gIm: number, re: number, im: number, outRe: number, outIm: number): void;
 }
 
 /** Compiled numerical loops with a memory of their own. Basic arithmetic in a fixed order: the same numbers on every machine. */
