@@ -90,6 +90,25 @@ export const procedures = {
     z.strictObject({ name: z.string() }),
     z.strictObject({ file: z.string().nullable() }),
   ),
+  /** The window's commands, for a menu of the system; a host without one does nothing. `app.command` says what was chosen. */
+  'window.menu': procedure(
+    z.strictObject({
+      commands: z
+        .array(
+          z.strictObject({
+            name: z.string().max(200),
+            label: z.string().max(200),
+            /** The menu it stands in. */
+            group: z.string().max(50),
+            /** As in `Mod+Shift+Z`; Mod is Ctrl, or Command on a Mac. */
+            keys: z.string().max(50).nullable(),
+            isEnabled: z.boolean(),
+          }),
+        )
+        .max(1000),
+    }),
+    nothing,
+  ),
   /** Asks where to, and writes. `file` is null when the user backed out. */
   'dialog.save-bytes': procedure(
     z.strictObject({ name: z.string().max(255), bytes }),

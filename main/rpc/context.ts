@@ -1,3 +1,4 @@
+import type { Received } from '../../app/contract/procedures.ts';
 import type { AppState } from '../state/app-state.ts';
 import type { Bases } from './bases.ts';
 import type { EventBus } from './event-bus.ts';
@@ -12,11 +13,16 @@ export interface Dialogs {
   saveFile(name: string): Promise<string | null>;
 }
 
+/** The window's commands, as a system's menu shows them. */
+export type MenuCommands = Received<'window.menu'>['commands'];
+
 /** What the handlers work on: one for each host. */
 export interface HostContext {
   readonly kind: 'window' | 'loopback';
   readonly version: string;
   readonly dialogs: Dialogs | null;
+  /** null: the host has no menu of its own. */
+  readonly showMenu: ((commands: MenuCommands) => void) | null;
   /** Where projects stand that were given no place. */
   readonly projectsFolder: string;
   readonly state: AppState;

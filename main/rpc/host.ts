@@ -4,7 +4,7 @@ import { AppState } from '../state/app-state.ts';
 import { FailureLog } from '../state/failure-log.ts';
 import { homeFolder, makeFolder } from '../state/home.ts';
 import { Bases } from './bases.ts';
-import type { Dialogs, HostContext } from './context.ts';
+import type { Dialogs, HostContext, MenuCommands } from './context.ts';
 import { createDispatch, type Dispatch } from './dispatch.ts';
 import { EventBus } from './event-bus.ts';
 import { createHandlers } from './handlers.ts';
@@ -15,6 +15,7 @@ import { Uploads } from './uploads.ts';
 export interface HostOptions {
   readonly kind: 'window' | 'loopback';
   readonly dialogs?: Dialogs;
+  readonly showMenu?: (commands: MenuCommands) => void;
   /** Project to show first. */
   readonly startFile?: string;
 }
@@ -23,6 +24,8 @@ export interface HostOptions {
 export interface Host {
   readonly dispatch: Dispatch;
   readonly events: EventBus;
+  /** What the program remembers beside its projects. */
+  readonly state: AppState;
   /** Ends a job whose caller went away. */
   stopJob(jobId: string): void;
   /** Whether long work is under way. */
@@ -41,6 +44,7 @@ export function createHost(options: HostOptions): Host {
     kind: options.kind,
     version: programVersion(),
     dialogs: options.dialogs ?? null,
+    showMenu: options.showMenu ?? null,
     projectsFolder: join(home, 'projects'),
     state: new AppState(home),
     events,
@@ -54,6 +58,7 @@ export function createHost(options: HostOptions): Host {
   return {
     dispatch: createDispatch(createHandlers(context), logFailure),
     events,
+    state: context.state,
     stopJob: (jobId) => void context.jobs.stop(jobId),
     isBusy: () => context.jobs.count > 0,
     logFailure,
@@ -61,6 +66,7 @@ export function createHost(options: HostOptions): Host {
       await context.jobs.stopAll();
       context.projects.closeAll();
       await context.uploads.removeAll();
+      await context.state.settled();
     },
   };
 }

@@ -53,6 +53,11 @@ export class AppState {
     });
   }
 
+  /** Resolves once all that was put is written. */
+  async settled(): Promise<void> {
+    await this.#last;
+  }
+
   #change(change: (state: State) => State): Promise<void> {
     const next = this.#last.then(async () => {
       await writeText(this.#file, `${JSON.stringify(change(await this.#read()), null, 2)}\n`);

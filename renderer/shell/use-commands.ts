@@ -5,6 +5,7 @@ import { CORE_COMMANDS } from '../commands/core-commands.ts';
 import { commandOf, runCommand } from '../commands/run-command.ts';
 import { getState } from '../state/app-store.ts';
 import { showTab } from '../state/tabs.ts';
+import { followNativeMenu } from './native-menu.ts';
 import { PANELS } from './panels.ts';
 
 const TABS: readonly Command[] = PANELS.filter(({ place }) => place === 'tab').map(({ name, label }, i) => ({
@@ -43,9 +44,11 @@ export function useCommands(): void {
       const command = COMMANDS.find((candidate) => candidate.name === name);
       if (command !== undefined) runCommand(command);
     });
+    const endMenu = followNativeMenu(COMMANDS);
     return () => {
       window.removeEventListener('keydown', onKeyDown);
       end();
+      endMenu();
     };
   }, []);
 }

@@ -3,7 +3,10 @@ import { AppError } from '../../../app/errors.ts';
 import { writeBytes } from '../../files/write-text.ts';
 import type { Dialogs, HostContext } from '../context.ts';
 
-type DialogHandlers = Pick<Handlers, 'dialog.open-project' | 'dialog.save-project' | 'dialog.save-bytes'>;
+type DialogHandlers = Pick<
+  Handlers,
+  'window.menu' | 'dialog.open-project' | 'dialog.save-project' | 'dialog.save-bytes'
+>;
 
 export function dialogHandlers(context: HostContext): DialogHandlers {
   const dialogs = (): Dialogs => {
@@ -11,6 +14,10 @@ export function dialogHandlers(context: HostContext): DialogHandlers {
     return context.dialogs;
   };
   return {
+    'window.menu': async ({ commands }) => {
+      context.showMenu?.(commands);
+      return {};
+    },
     'dialog.open-project': async () => ({ file: await dialogs().openProject() }),
     'dialog.save-project': async ({ name }) => ({ file: await dialogs().saveProject(name) }),
     'dialog.save-bytes': async ({ name, bytes }) => {
