@@ -12,13 +12,14 @@ export function exactJson(value: unknown): string {
   return textOf(value, []);
 }
 
-/** The same data with the keys of every object in code-unit order. */
-export function sortedKeys(value: unknown): unknown {
-  if (Array.isArray(value)) return value.map(sortedKeys);
+/** The same data with the keys of every object in code-unit order. Throws `input` for more than 200 levels. */
+export function sortedKeys(value: unknown, level = 0): unknown {
   if (typeof value !== 'object' || value === null) return value;
+  if (level >= MOST_LEVELS) throw tooDeep();
+  if (Array.isArray(value)) return value.map((item) => sortedKeys(item, level + 1));
   const entries = Object.entries(value).sort(([one], [other]) => (one < other ? -1 : 1));
   // Defined, not assigned: an own key "__proto__" stays one.
-  return Object.fromEntries(entries.map(([key, item]) => [key, sortedKeys(item)]));
+  return Object.fromEntries(entries.map(([key, item]) => [key, sortedKeys(item, level + 1)]));
 }
 
 /** One text for equal data, whatever the order of keys: what documents are hashed by. Throws as `exactJson` does. */
@@ -36,7 +37,7 @@ function textOf(value: unknown, path: (string | number)[]): string {
       return Object.is(value, -0) ? '-0' : String(value);
     case 'object':
       if (value === null) return 'null';
-      if (path.length >= MOST_LEVELS) throw inputError('the data', `nested at most ${MOST_LEVELS} levels deep`, 'more');
+      if (path.length >= MOST_LEVELS) throw tooDeep();
       return Array.isArray(value) ? listText(value, path) : objectText(value, path);
     default:
       throw inputError(placeOf(path), 'a text, number, true, false, null, list or object', typeof value);
@@ -63,6 +64,8 @@ function objectText(object: object, path: (string | number)[]): string {
   }
   return `{${members.join(',')}}`;
 }
+
+const tooDeep = () => inputError('the data', `nested at most ${MOST_LEVELS} levels deep`, 'more');
 
 const placeOf = (path: readonly (string | number)[]): string =>
   path.length === 0

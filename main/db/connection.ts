@@ -7,7 +7,7 @@ import type { ReadableDb, WritableDb } from './database.ts';
 import { type Migration, type MigrationReport, migrate, refuseNewer, schemaVersionOf } from './migrate.ts';
 import { writeNumbered } from './place-file.ts';
 import { readProjectHeader, sizeOf } from './project-header.ts';
-import { storeFailure } from './store-failure.ts';
+import { damaged, storeFailure } from './store-failure.ts';
 
 export interface ConnectionOptions {
   readonly readOnly: boolean;
@@ -49,13 +49,19 @@ export class ProjectConnection {
     return this.#told(() => this.#db.transaction(() => run(this.#db as WritableDb)).immediate());
   }
 
-  /** Copies the content as it is now to another file, while other programs go on. */
+  /** Changes when another connection has written since. */
+  dataVersion(): number {
+    return this.#told(() => this.#db.pragma('data_version', { simple: true }) as number);
+  }
+
+  /** Copies the content as it is now to another file, while other programs go on; a copy that is not sound is refused. */
   async copyTo(file: string): Promise<void> {
     try {
       await this.#db.backup(file);
     } catch (error) {
       throw storeFailure(file, this.#busyTimeoutMs, error);
     }
+    if (!this.#told(() => isSound(file))) throw damaged(this.file, 'a copy of it fails the integrity check');
   }
 
   /** Writes the log of changes back into the file and removes it, unless another program still uses the file. */
@@ -69,6 +75,15 @@ export class ProjectConnection {
     } catch (error) {
       throw storeFailure(this.file, this.#busyTimeoutMs, error);
     }
+  }
+}
+
+function isSound(file: string): boolean {
+  const db = new Database(file, { readonly: true, fileMustExist: true });
+  try {
+    return db.pragma('integrity_check(1)', { simple: true }) === 'ok';
+  } finally {
+    db.close();
   }
 }
 

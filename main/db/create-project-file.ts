@@ -1,12 +1,9 @@
-import { realpathSync } from 'node:fs';
-import { basename, dirname, join, resolve } from 'node:path';
 import Database from 'better-sqlite3';
-import { fileError } from '../../app/errors.ts';
 import { fileFailure } from '../files/file-failure.ts';
 import type { WritableDb } from './database.ts';
 import { migrate } from './migrate.ts';
 import { migrations } from './migrations/migrations.ts';
-import { placeNew, removeDatabase, temporaryBeside } from './place-file.ts';
+import { placeNew, removeTemporary, targetOf, temporaryBeside } from './place-file.ts';
 import { APPLICATION_ID } from './project-header.ts';
 import { storeFailure } from './store-failure.ts';
 
@@ -36,20 +33,9 @@ export function createProjectFile(file: string, fill: (db: WritableDb) => void):
     const failure = storeFailure(file, 0, error);
     throw failure === error && isSystemFailure(error) ? fileFailure(file, 'written', error) : failure;
   } finally {
-    removeDatabase(temporary);
+    removeTemporary(temporary);
   }
 }
 
 const isSystemFailure = (error: unknown): boolean =>
   (error as NodeJS.ErrnoException | undefined)?.syscall !== undefined;
-
-function targetOf(file: string): string {
-  const target = resolve(file);
-  if (target.trimEnd() !== target) throw fileError(file, 'must have a name that does not end with a space');
-  try {
-    return join(realpathSync(dirname(target)), basename(target));
-  } catch (error) {
-    if ((error as NodeJS.ErrnoException).code !== 'ENOENT') throw fileFailure(file, 'written', error);
-    throw fileError(file, `cannot be written: the folder ${dirname(target)} does not exist`, { cause: error });
-  }
-}

@@ -42,6 +42,9 @@ export function getDocument(db: ReadableDb, table: DocumentTable, sha256: string
   return unpacked(`${table} ${sha256.slice(0, 12)}`, row.body);
 }
 
+export const documentSha256s = (db: ReadableDb, table: DocumentTable): string[] =>
+  db.prepare<[], string>(`SELECT sha256 FROM ${table} ORDER BY sha256`).pluck().all();
+
 /** Throws `DamagedDocument` that names the block. */
 export function unpacked(name: string, body: Uint8Array): unknown {
   try {

@@ -1,5 +1,6 @@
-import { joinParts, type LayoutPart, type SourcesPart, splitParts } from '../../app/project/board-parts.ts';
+import { joinParts, type LayoutPart, splitParts } from '../../app/project/board-parts.ts';
 import type { Draft } from '../../app/project/draft.ts';
+import type { SourcesDocument } from '../../app/project/project-export.ts';
 import type { RunSettings } from '../../app/project/run-settings.ts';
 import type { RunDocument } from '../../app/project/stored-run.ts';
 import type { ReadableDb, WritableDb } from './database.ts';
@@ -14,12 +15,6 @@ export interface PartHashes {
   readonly settings: string;
 }
 
-/** The sources with the waveform files they name, by hash: other samples under the same name are other sources. */
-interface SourcesDocument {
-  readonly sources: SourcesPart;
-  readonly samples: readonly { readonly file: string; readonly sha256: string }[];
-}
-
 type OpeningDocument = Pick<RunDocument, 'sourceSha256' | 'openingNotes'>;
 
 /** Keeps the parts of a document and its settings, each once. Throws `input` for what JSON cannot hold. */
@@ -28,17 +23,22 @@ export function putParts(db: WritableDb, { document, settings }: Draft): PartHas
   const samples = Object.entries(document.samples)
     .map(([file, columns]) => ({ file, sha256: putDocument(db, 'samples', columns) }))
     .sort((one, other) => (one.file < other.file ? -1 : 1));
-  const sourcesDocument: SourcesDocument = { sources, samples };
-  const sourcesSha256 = putDocument(db, 'sources', sourcesDocument);
-  const link = db.prepare('INSERT OR IGNORE INTO sources_samples (sources, file, samples) VALUES (?, ?, ?)');
-  for (const { file, sha256 } of samples) link.run(sourcesSha256, toColumn(file), sha256);
   const { sourceSha256, openingNotes } = document;
   return {
     layout: putDocument(db, 'layout', layout),
-    sources: sourcesSha256,
+    // The samples' hashes belong to it: other samples under the same name are other sources.
+    sources: putSources(db, { sources, samples }),
     opening: putDocument(db, 'opening', { sourceSha256, openingNotes } satisfies OpeningDocument),
     settings: putDocument(db, 'settings', settings),
   };
+}
+
+/** Keeps sources with the links to their waveform files; returns their hash. */
+export function putSources(db: WritableDb, document: SourcesDocument): string {
+  const sources = putDocument(db, 'sources', document);
+  const link = db.prepare('INSERT OR IGNORE INTO sources_samples (sources, file, samples) VALUES (?, ?, ?)');
+  for (const { file, sha256 } of document.samples) link.run(sources, toColumn(file), sha256);
+  return sources;
 }
 
 /** Throws `DamagedDocument`. */

@@ -1,15 +1,53 @@
 import { randomBytes } from 'node:crypto';
-import { closeSync, existsSync, fsyncSync, linkSync, openSync, renameSync, rmSync, writeFileSync } from 'node:fs';
-import { basename, dirname, extname, join } from 'node:path';
+import {
+  closeSync,
+  existsSync,
+  fsyncSync,
+  linkSync,
+  openSync,
+  realpathSync,
+  renameSync,
+  rmSync,
+  writeFileSync,
+} from 'node:fs';
+import { basename, dirname, extname, join, resolve } from 'node:path';
+import { fileError } from '../../app/errors.ts';
+import { fileFailure } from '../files/file-failure.ts';
+import { temporaryFiles } from '../files/write-text.ts';
 
-/** A name for a file under way, in the folder where it will stand. */
-export function temporaryBeside(file: string): string {
-  return join(dirname(file), `.${basename(file).slice(0, 100)}.${randomBytes(6).toString('hex')}.tmp`);
+const ENDINGS = ['', '-wal', '-shm', '-journal'];
+
+/** Absolute name of a file to be made, links in its folder followed. Throws `file`. */
+export function targetOf(file: string): string {
+  const target = resolve(file);
+  // better-sqlite3 trims names.
+  if (target.trimEnd() !== target) throw fileError(file, 'must have a name that does not end with a space');
+  try {
+    return join(realpathSync(dirname(target)), basename(target));
+  } catch (error) {
+    if ((error as NodeJS.ErrnoException).code !== 'ENOENT') throw fileFailure(file, 'written', error);
+    throw fileError(file, `cannot be written: the folder ${dirname(target)} does not exist`, { cause: error });
+  }
 }
 
-/** Removes an unfinished database and what SQLite put beside it. */
-export function removeDatabase(file: string): void {
-  for (const ending of ['', '-wal', '-shm', '-journal']) rmSync(`${file}${ending}`, { force: true });
+/** A name for a file under way, in the folder where it will stand; a host that is stopped removes it. */
+export function temporaryBeside(target: string): string {
+  const name = `.${basename(target).slice(0, 100)}.${randomBytes(6).toString('hex')}.tmp`;
+  const temporary = join(dirname(target), name);
+  for (const ending of ENDINGS) temporaryFiles.add(`${temporary}${ending}`);
+  return temporary;
+}
+
+/** What is left of a file under way, with what SQLite put beside it. */
+export function removeTemporary(temporary: string): void {
+  removeSidecars(temporary);
+  rmSync(temporary, { force: true });
+  for (const ending of ENDINGS) temporaryFiles.delete(`${temporary}${ending}`);
+}
+
+/** What SQLite keeps beside a database: it belongs to that one content only. */
+export function removeSidecars(file: string): void {
+  for (const ending of ENDINGS.slice(1)) rmSync(`${file}${ending}`, { force: true });
 }
 
 /** Gives a finished file its name, whole or not at all; false when the name is taken. Throws what the system says. */
@@ -35,19 +73,20 @@ export function placeOver(temporary: string, file: string): void {
   syncFolder(dirname(file));
 }
 
-/** Writes a file to the disk under a name of the form `stem.tag.quietboard`, `stem.tag-2.quietboard` …; returns the name. */
-export function writeNumbered(file: string, tag: string, content: Buffer): string {
-  const temporary = temporaryBeside(file);
+/** Keeps bytes as `stem.tag.quietboard`, or `stem.tag-2.quietboard` …; returns the name. Throws what the system says. */
+export function writeNumbered(file: string, tag: string, content: Uint8Array): string {
+  const target = targetOf(file);
+  const temporary = temporaryBeside(target);
   try {
     writeFileSync(temporary, content, { flag: 'wx', flush: true });
-    const ending = extname(file);
-    const stem = ending === '' ? file : file.slice(0, -ending.length);
+    const ending = extname(target);
+    const stem = ending === '' ? target : target.slice(0, -ending.length);
     for (let count = 1; ; count++) {
       const name = `${stem}.${tag}${count > 1 ? `-${count}` : ''}${ending}`;
       if (placeNew(temporary, name)) return name;
     }
   } finally {
-    rmSync(temporary, { force: true });
+    removeTemporary(temporary);
   }
 }
 

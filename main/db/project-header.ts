@@ -23,7 +23,7 @@ export function readProjectHeader(file: string): ProjectHeader | undefined {
   const { start, size } = found;
   const must = 'must be a Quietboard project';
   if (size === 0) throw fileError(file, `${must}; it is empty`);
-  if (size < HEADER_BYTES || start.toString('latin1', 0, 16) !== MAGIC) {
+  if (size < HEADER_BYTES || !isOfSqlite(start)) {
     throw fileError(file, `${must}; it is another kind of file, or its beginning is damaged`);
   }
   if (start.readUInt32BE(68) !== APPLICATION_ID) {
@@ -37,6 +37,14 @@ export function readProjectHeader(file: string): ProjectHeader | undefined {
   }
   return { schemaVersion: start.readUInt32BE(60) };
 }
+
+/** Whether a file's beginning is that of a project, sound or not. Throws `file` when it cannot be read. */
+export function isProjectFile(file: string): boolean {
+  const found = readStart(file);
+  return found !== undefined && isOfSqlite(found.start) && found.start.readUInt32BE(68) === APPLICATION_ID;
+}
+
+const isOfSqlite = (start: Buffer): boolean => start.toString('latin1', 0, MAGIC.length) === MAGIC;
 
 /** 0 for a file that is not there. */
 export const sizeOf = (file: string): number => statSync(file, { throwIfNoEntry: false })?.size ?? 0;

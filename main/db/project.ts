@@ -1,20 +1,25 @@
 import { basename } from 'node:path';
-import { AppError, inputError } from '../../app/errors.ts';
+import { AppError, fileError, inputError } from '../../app/errors.ts';
 import type { Draft, StoredDraft } from '../../app/project/draft.ts';
 import { type Measurement, type MeasurementInput, measurementInputSchema } from '../../app/project/measurement.ts';
-import type { ProjectInfo, RevisionSummary } from '../../app/project/project-info.ts';
+import type { ProjectExport } from '../../app/project/project-export.ts';
+import type { DoctorReport, ProjectInfo, RevisionSummary } from '../../app/project/project-info.ts';
 import type { RunSummary, StoredRun } from '../../app/project/stored-run.ts';
 import { parseWith } from '../../app/schema/parse-with.ts';
 import { programVersion } from '../cli/version.ts';
 import { ProjectConnection, writeBarrier } from './connection.ts';
 import { createProjectFile } from './create-project-file.ts';
 import type { WritableDb } from './database.ts';
+import { examine } from './doctor.ts';
 import { draftVersion, getDraft, putDraft } from './draft-repository.ts';
+import { exportProject } from './export-project.ts';
+import { importFile, importObject } from './import-project.ts';
 import { getInfo, insertProject, nextNumber, updateName, updateWriter } from './info-repository.ts';
 import { insertMeasurement, listMeasurements, removeMeasurement } from './measurements-repository.ts';
 import type { MigrationReport } from './migrate.ts';
 import { migrations } from './migrations/migrations.ts';
 import { readProjectHeader } from './project-header.ts';
+import { type IfThere, putProjectFile } from './replace-file.ts';
 import { listRevisions } from './revisions-repository.ts';
 import {
   getRun,
@@ -26,6 +31,7 @@ import {
   runNumbers,
   updateNote,
 } from './runs-repository.ts';
+import { getStatistics } from './statistics-repository.ts';
 import { getUiState, putUiState } from './ui-state-repository.ts';
 
 export interface OpenOptions {
@@ -84,6 +90,11 @@ export class Project {
   /** Leaves the project as one file, unless another program still has it open. */
   close(): void {
     this.#connection.close();
+  }
+
+  /** Another number than before once another program has written: what was read may be out of date. */
+  dataVersion(): number {
+    return this.#connection.dataVersion();
   }
 
   info(): ProjectInfo {
@@ -189,6 +200,55 @@ export class Project {
       putDraft(db, { version: newest + 1, savedAt: new Date().toISOString(), ...draft });
       return newest + 1;
     });
+  }
+
+  /**
+   * Copies the project as it is now, while programs go on writing to it. Of a file that is there already: `refuse` (the
+   * default), `replace`, or `keep-copy`: the name of the copy is returned. Restoring is the backup's `backupTo` the project,
+   * with `keep-copy`. Throws `busy` when another program has that file open.
+   */
+  backupTo(file: string, ifThere: IfThere = 'refuse'): Promise<string | undefined> {
+    return putProjectFile(file, this.file, ifThere, (temporary) => this.#connection.copyTo(temporary));
+  }
+
+  /** The project as one JSON text (`projectExportSchema`), piece by piece: the same content gives the same text. */
+  exportText(write: (text: string) => void): void {
+    this.#connection.read((db) => exportProject(db, write));
+  }
+
+  /** The same as data; for projects whose text is shorter than 500 MB. */
+  exportJson(): ProjectExport {
+    const pieces: string[] = [];
+    this.exportText((text) => pieces.push(text));
+    return JSON.parse(pieces.join('')) as ProjectExport;
+  }
+
+  /** Makes a project from an export. Throws `input` with the place in it, `file` when the file is there already. */
+  static importJson(file: string, json: unknown): Project {
+    return Project.#make(file, (db) => importObject(db, json, programVersion()));
+  }
+
+  /** The same from an export's file, of any size. */
+  static importFile(file: string, exported: string): Project {
+    return Project.#make(file, (db) => importFile(db, exported, programVersion()));
+  }
+
+  static #make(file: string, fill: (db: WritableDb) => void): Project {
+    if (readProjectHeader(file) !== undefined || !createProjectFile(file, fill)) {
+      throw fileError(file, 'is there already; nothing was changed');
+    }
+    return Project.open(file);
+  }
+
+  /** Looks at every byte of the project; changes nothing. */
+  doctor(): DoctorReport {
+    const findings = this.#connection.read(examine);
+    return this.#connection.read((db) => ({
+      file: this.file,
+      isFine: findings.every(({ isFine }) => isFine),
+      findings,
+      ...getStatistics(db),
+    }));
   }
 
   #write<T>(run: (db: WritableDb) => T): T {

@@ -77,21 +77,48 @@ export const summaryColumns = ({ board, limit, structure, worst, verdict, progra
   program_version: toColumn(program.version),
 });
 
+/** A run's row without what its result says. */
+export interface RunEntry extends PartHashes {
+  readonly run: number;
+  readonly startedAt: string;
+  readonly durationS: number;
+  readonly note: string;
+  readonly result: string;
+}
+
+export type SummaryColumns = ReturnType<typeof summaryColumns>;
+
 /** Keeps a run under its number, with its documents. Throws `input` for what JSON cannot hold. */
 export function insertRun(db: WritableDb, run: number, { startedAt, durationS, result, note, ...draft }: NewRun): void {
-  const row: RunRow = {
-    run,
-    started_at: startedAt,
-    duration_s: durationS,
-    ...summaryColumns(result),
-    ...putParts(db, draft),
-    result: putDocument(db, 'result', result),
-    note: toColumn(note ?? ''),
-  };
+  const hashes = { ...putParts(db, draft), result: putDocument(db, 'result', result) };
+  insertRunEntry(db, { run, startedAt, durationS, note: note ?? '', ...hashes }, summaryColumns(result));
+}
+
+/** A run whose documents are kept already. */
+export function insertRunEntry(
+  db: WritableDb,
+  { startedAt, durationS, note, ...entry }: RunEntry,
+  summary: SummaryColumns,
+): void {
+  const row: RunRow = { ...entry, started_at: startedAt, duration_s: durationS, note: toColumn(note), ...summary };
   const columns = Object.keys(row);
   const values = columns.map((column) => `@${column}`);
   db.prepare(`INSERT INTO run (${columns.join(', ')}) VALUES (${values.join(', ')})`).run(row);
 }
+
+/** All runs without what their results say, by number. */
+export const listRunEntries = (db: ReadableDb): RunEntry[] =>
+  db
+    .prepare<[], RunEntry>(
+      `SELECT run, started_at AS startedAt, duration_s AS durationS, note, layout, sources, opening, settings, result
+       FROM run ORDER BY run`,
+    )
+    .all()
+    .map((entry) => ({ ...entry, note: fromColumn(entry.note) }));
+
+/** What the columns say, by number: to be held against the results. */
+export const listStoredSummaries = (db: ReadableDb): (SummaryColumns & Pick<RunRow, 'run' | 'result'>)[] =>
+  db.prepare<[], RunRow>('SELECT * FROM run ORDER BY run').all();
 
 /** Newest first: by number, as numbers only rise. */
 export function listRuns(db: ReadableDb, { revision, limit }: RunFilter = {}): RunSummary[] {

@@ -2,13 +2,16 @@ import Database from 'better-sqlite3';
 import { AppError, fileError } from '../../app/errors.ts';
 import { DamagedDocument } from './documents-repository.ts';
 
-const DAMAGED = 'is damaged; nothing was changed. Restore a backup, or examine it with "quietboard doctor"';
+export function damaged(file: string, what: string, options?: ErrorOptions): AppError {
+  const text = `is damaged (${what}); nothing was changed. Restore a backup; "quietboard doctor" says what is left`;
+  return fileError(file, text, options);
+}
 
 /** A failure of the store on a project's file, in words that say what to do. Others come back as they are. */
 export function storeFailure(file: string, busyTimeoutMs: number, error: unknown): unknown {
-  if (error instanceof DamagedDocument) return fileError(file, `${DAMAGED} (${error.message})`, { cause: error });
-  if (!(error instanceof Database.SqliteError)) return error;
   const options = { cause: error };
+  if (error instanceof DamagedDocument) return damaged(file, error.message, options);
+  if (!(error instanceof Database.SqliteError)) return error;
   const [, group = ''] = /^SQLITE_([A-Z]+)/.exec(error.code) ?? [];
   switch (group) {
     case 'BUSY':
@@ -26,7 +29,7 @@ export function storeFailure(file: string, busyTimeoutMs: number, error: unknown
       return fileError(file, 'cannot be opened: access denied', options);
     case 'CORRUPT':
     case 'NOTADB':
-      return fileError(file, `${DAMAGED} (${error.message})`, options);
+      return damaged(file, error.message, options);
     case 'CANTOPEN':
       return fileError(file, 'cannot be opened: its folder must let this program create files beside it', options);
     case 'IOERR':

@@ -5,8 +5,8 @@ import { basename, dirname, join } from 'node:path';
 import { fileError } from '../../app/errors.ts';
 import { fileFailure } from './file-failure.ts';
 
-/** Temporary files that exist now; a host that is stopped removes them. */
-const temporaryFiles = new Set<string>();
+/** Temporary files that exist now, ours and the database's; a host that is stopped removes them. */
+export const temporaryFiles = new Set<string>();
 
 /** Removes temporary files of writes that are under way. For the moment before the process ends. */
 export function removeTemporaryFiles(): void {
