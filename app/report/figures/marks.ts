@@ -43,3 +43,7 @@ export const DENSE_DASH_HALF_PX = 1.6;
 
 export const polarizationDash = (polarization: Polarization, x: number, y: number, half: number): string =>
   polarization === 'horizontal' ? dashPath(x, y, half, 0) : dashPath(x, y, 0, half);
+
+/** One dash as a picture in running text. */
+export const dashPicture = (polarization: Polarization): Markup =>
+  markup`<svg class="inline" viewBox="-7 -7 14 14" aria-hidden="true"><path class="${polarization === 'horizontal' ? 'pol-h' : 'pol-v'}" d="${polarizationDash(polarization, 0, 0, 5)}"/></svg>`;

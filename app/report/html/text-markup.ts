@@ -1,5 +1,5 @@
 import type { Text } from '../blocks.ts';
-import { inlineMark } from '../figures/marks.ts';
+import { dashPicture, inlineMark } from '../figures/marks.ts';
 import { type Markup, markup } from '../markup.ts';
 
 /** A piece of text as HTML. */
@@ -19,11 +19,8 @@ export function textMarkup(text: Text): Markup | string | false {
     case 'mark':
       return inlineMark(text.standing, text.label);
     case 'dash':
-      return text.polarization === 'horizontal' ? dash('pol-h', 'M-5 0H5') : dash('pol-v', 'M0 -5V5');
+      return dashPicture(text.polarization);
     case 'break':
       return markup`<br/>`;
   }
 }
-
-const dash = (className: string, path: string): Markup =>
-  markup`<svg class="inline" viewBox="-7 -7 14 14" aria-hidden="true"><path class="${className}" d="${path}"/></svg>`;

@@ -18,19 +18,19 @@ const number = (head: string, unit: string, width: number): Column => ({
 });
 
 const COLUMNS: readonly Column[] = [
-  { head: '', width: 3 },
-  number('Frequency', 'MHz', 10),
-  { head: 'Det.', width: 4.5 },
-  number('Level', 'dBµV/m', 8),
-  number('Limit', 'dBµV/m', 8),
-  { ...number('Margin', 'dB', 7), isStrong: true },
-  number('Horiz.', 'dBµV/m', 8),
-  number('Vert.', 'dBµV/m', 8),
-  number('Bound', 'dBµV/m', 8),
-  { head: 'Pol.', width: 4.5 },
-  number('Height', 'm', 6.5),
-  number('Angle', '°', 6),
-  { head: 'Main contributor', width: 26 },
+  { head: '', width: 2.2 },
+  number('Frequency', 'MHz', 9.4),
+  { head: 'Det.', width: 4.4 },
+  number('Level', 'dBµV/m', 7.4),
+  number('Limit', 'dBµV/m', 7.4),
+  { ...number('Margin', 'dB', 6.6), isStrong: true },
+  number('Horiz.', 'dBµV/m', 7.4),
+  number('Vert.', 'dBµV/m', 7.4),
+  number('Bound', 'dBµV/m', 7.4),
+  { head: 'Pol.', width: 4.2 },
+  number('Height', 'm', 6),
+  number('Angle', '°', 5.6),
+  { head: 'Main contributor', width: 32 },
 ];
 
 /** The worst readings in numbers. */

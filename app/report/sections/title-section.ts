@@ -2,6 +2,7 @@ import type { Board } from '../../board/board.ts';
 import type { EstimateResult } from '../../estimate/result.ts';
 import { code, type Fact, name } from '../blocks.ts';
 import { trimmed } from '../format.ts';
+import type { ReportTitle } from '../report-title.ts';
 import { limitName } from '../verdict.ts';
 
 export const REPORT_TITLE = 'Estimate of radiated emission';
@@ -23,5 +24,18 @@ export function titleFacts(result: EstimateResult, board: Board, dateText: strin
     ...(dateText === undefined ? [] : [{ term: 'Date', value: dateText }]),
     { term: 'Board file', value: code(`sha256 ${result.board.sha256.slice(0, 64)}`), isWide: true },
     ...(board.notes === '' ? [] : [{ term: 'Board notes', value: name(board.notes, 300), isWide: true }]),
+  ];
+}
+
+/** The same for a printed report, which belongs to a project and has an author, a date, perhaps a run's number. */
+export function runTitleFacts(result: EstimateResult, board: Board, title: ReportTitle): Fact[] {
+  const said = (text: string, length: number) => (text === '' ? '—' : name(text, length));
+  return [
+    { term: 'Project', value: said(title.project, 60) },
+    { term: 'Run', value: title.runNumber === null ? 'not stored' : String(title.runNumber) },
+    { term: 'Author', value: said(title.author, 60) },
+    { term: 'Date', value: said(title.dateText, 40) },
+    ...titleFacts(result, board, undefined),
+    ...(title.note === '' ? [] : [{ term: 'Note', value: name(title.note, 300), isWide: true }]),
   ];
 }
