@@ -19,13 +19,13 @@ export function bandChanges(
   linesAfter: readonly LimitLine[] | undefined,
 ): BandChange[] {
   const topHz = Math.max(before.limit.maxHz, after.limit.maxHz);
-  const bands = sharedBands(before, after, linesBefore, linesAfter).filter(({ fromHz }) => fromHz < topHz);
+  const bands = sharedBands(before, after, linesBefore, linesAfter);
   const finder = new BandFinder(bands);
   const [was, is] = [before, after].map(({ points }) => states(points, finder, bands.length)) as [
     BandState[],
     BandState[],
   ];
-  return bands.map(({ detector, fromHz, toHz }, i) => {
+  const changes = bands.map(({ detector, fromHz, toHz }, i) => {
     const [one, other] = [was[i]!, is[i]!];
     return {
       detector,
@@ -36,6 +36,7 @@ export function bandChanges(
       marginChangeDb: one.worst && other.worst ? other.worst.marginDb - one.worst.marginDb : null,
     };
   });
+  return changes.filter((band) => band.fromHz < topHz || band.before.lines + band.after.lines > 0);
 }
 
 function sharedBands(

@@ -117,12 +117,15 @@ export function limitLinesOf(settings: RunSettings): readonly LimitLine[] | unde
   }
 }
 
-/** Worst margin of each band; `points` worst margin first. Bands above `maxHz` were not judged and are left out. */
+/**
+ * Worst margin of each band; `points` worst margin first. Bands above `maxHz` were not judged and are left out; a line
+ * right at `maxHz` may belong to the band that starts there.
+ */
 export function bandMargins(
   lines: readonly LimitCurve[],
   { points, limit }: Pick<EstimateResult, 'points' | 'limit'>,
 ): BandMargin[] {
-  const bands = bandsOfLines(lines).filter(({ fromHz }) => fromHz < limit.maxHz);
+  const bands = bandsOfLines(lines);
   const finder = new BandFinder(bands);
   const worst = new Map<number, BandMargin['worst']>();
   for (const point of points) {
@@ -131,7 +134,7 @@ export function bandMargins(
       worst.set(index, { frequencyHz: point.frequencyHz, marginDb: point.marginDb });
     }
   }
-  return bands.map((band, i) => ({
+  const margins = bands.map((band, i) => ({
     detector: band.detector,
     fromHz: band.fromHz,
     toHz: band.toHz,
@@ -139,4 +142,5 @@ export function bandMargins(
     toDbuvPerM: endLevel(band, 'to'),
     worst: worst.get(i) ?? null,
   }));
+  return margins.filter(({ fromHz, worst: held }) => fromHz < limit.maxHz || held !== null);
 }

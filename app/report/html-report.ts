@@ -3,7 +3,8 @@ import type { EstimateResult } from '../estimate/result.ts';
 import type { ReportLimitLine } from './figures/limit-lines.ts';
 import { factsMarkup, sectionMarkup } from './html/section-markup.ts';
 import { textMarkup } from './html/text-markup.ts';
-import { Markup, markup, shortName } from './markup.ts';
+import { markup, shortName } from './markup.ts';
+import { reportPage } from './page.ts';
 import { boardSection } from './sections/board-section.ts';
 import { findingsSection, modelSection } from './sections/caveats-section.ts';
 import { cautionsSection, notesSection } from './sections/closing-section.ts';
@@ -16,7 +17,6 @@ import { sourcesSection } from './sections/sources-section.ts';
 import { spectrumSection } from './sections/spectrum-section.ts';
 import { REPORT_TITLE, titleFacts } from './sections/title-section.ts';
 import { verdictHeadline, verdictSummary } from './sections/verdict-section.ts';
-import { STYLES } from './styles.ts';
 
 export type { ReportLimitLine } from './figures/limit-lines.ts';
 
@@ -24,10 +24,6 @@ export interface HtmlReportOptions {
   /** Date to print in the title block. Without it the page has none: the same input gives the same bytes. */
   readonly dateText?: string;
 }
-
-/** Nothing is loaded, nothing runs, nothing is sent: the page is what it shows. */
-const CONTENT_POLICY =
-  "default-src 'none'; style-src 'unsafe-inline'; img-src data:; base-uri 'none'; form-action 'none'";
 
 /**
  * The report as one self-contained page for screen (light and dark) and A4 print: well-formed as XML too, no script, no
@@ -54,17 +50,13 @@ export function htmlReport(
     notesSection(result),
     cautionsSection(),
   ];
-  const page = markup`<!DOCTYPE html>
-<html lang="en"><head><meta charset="utf-8"/><meta http-equiv="Content-Security-Policy" content="${new Markup(CONTENT_POLICY)}"/><meta name="viewport" content="width=device-width, initial-scale=1"/><title>${shortName(result.board.name, 80)} — radiated emission</title><style>${new Markup(STYLES)}</style></head>
-<body>
-<header><h1>${REPORT_TITLE}</h1>
+  const body = markup`<header><h1>${REPORT_TITLE}</h1>
 ${factsMarkup(titleFacts(result, board, options.dateText))}</header>
 <section class="verdict"><p class="headline">${textMarkup(verdictHeadline(result))}</p>
 <p class="summary">${textMarkup(verdictSummary(result))}</p></section>
 ${sections.map(
   (section) => markup`${sectionMarkup(section)}
 `,
-)}</body></html>
-`;
-  return page.source;
+)}`;
+  return reportPage(`${shortName(result.board.name, 80)} — radiated emission`, body);
 }

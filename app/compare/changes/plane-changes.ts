@@ -11,21 +11,29 @@ type Ring = NonNullable<Plane['pointsMm']>;
 /** Cut-outs named one by one; of more, the number and the largest. */
 const NAMED_CUTOUTS = 3;
 
-/** Planes by layer and net: first those that are the same, then the others of a pair in order. */
+/** Planes that are the same on both sides go first, then pairs by layer and net, then by net: a plane may change its layer. */
 export function planeChanges(before: BoardFile, after: BoardFile): Draft[] {
-  const exact = pairUp(before.planes, after.planes, planeKey);
-  const left = exact.flatMap(({ one, other }) => (one && !other ? [one] : []));
-  const right = exact.flatMap(({ one, other }) => (other && !one ? [other] : []));
-  return pairUp(left, right, ({ layer, net }) => JSON.stringify([layer, net])).flatMap(({ one, other }) => {
+  const exact = unpaired(pairUp(before.planes, after.planes, planeKey));
+  const onLayer = pairUp(exact.left, exact.right, ({ layer, net }) => JSON.stringify([layer, net]));
+  const left = unpaired(onLayer);
+  const onAnyLayer = pairUp(left.left, left.right, ({ net }) => net);
+  return [...onLayer.filter(({ one, other }) => one && other), ...onAnyLayer].flatMap(({ one, other }) => {
     const { layer, net } = (other ?? one)!;
-    const name = `plane ${shortName(net)} on layer ${shortName(layer)}`;
     const say = (text: string) => [wideDraft('plane', text, { nets: [net] })];
+    const name = `plane ${shortName(net)} on layer ${shortName(layer)}`;
     if (!one) return say(`${name} added (${areaText(other!)})`);
     if (!other) return say(`${name} removed (${areaText(one)})`);
-    const parts = joined([shapeText(one, other), ...cutoutTexts(one, other)]);
-    return parts === undefined ? [] : say(`${name}: ${parts}`);
+    const move = one.layer === layer ? undefined : `moved from layer ${shortName(one.layer)} to ${shortName(layer)}`;
+    const parts = joined([move, shapeText(one, other), ...cutoutTexts(one, other)]);
+    if (parts === undefined) return [];
+    return say(move === undefined ? `${name}: ${parts}` : `plane ${shortName(net)} ${parts}`);
   });
 }
+
+const unpaired = (pairs: readonly { one: Plane | undefined; other: Plane | undefined }[]) => ({
+  left: pairs.flatMap(({ one, other }) => (one && !other ? [one] : [])),
+  right: pairs.flatMap(({ one, other }) => (other && !one ? [other] : [])),
+});
 
 const planeKey = ({ layer, net, pointsMm, cutoutsMm }: Plane): string =>
   JSON.stringify([layer, net, pointsMm && ringKey(pointsMm), (cutoutsMm ?? []).map(ringKey).sort()]);

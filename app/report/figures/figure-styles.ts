@@ -19,6 +19,14 @@ export const FIGURE_STYLES = `
 .leader{stroke:var(--quiet);stroke-width:.6}
 .stem{stroke:var(--hair);stroke-width:.8}
 .hatch{stroke:var(--hair);stroke-width:1}
+.ghost,.trend-band,.trend-worst{fill:none}
+.ghost{stroke:var(--quiet);stroke-width:.9;stroke-dasharray:1.6 1.2}
+.trend-worst{stroke:var(--ink);stroke-width:1.9;stroke-linejoin:round}
+.trend-band{stroke:var(--quiet);stroke-width:1.2;stroke-dasharray:1.5 2.5;stroke-linejoin:round}
+.trend-band.b0{stroke:var(--h);stroke-dasharray:6 2}
+.trend-band.b1{stroke:var(--v);stroke-dasharray:2 2}
+.trend-band.b2{stroke:var(--loop);stroke-dasharray:8 2 2 2}
+.trend-band.b3{stroke:var(--short);stroke-dasharray:4 3}
 .limit{stroke:var(--ink);stroke-width:1.5;stroke-linejoin:round}
 .limit.av{stroke-dasharray:8 3}
 .limit.pk{stroke-dasharray:2.5 2.5}
