@@ -84,18 +84,3 @@ export const checkSchema = z.strictObject({
   tolerance: z.number(),
   status: z.enum(['pass', 'fail', 'info']),
 });
-
-/** Field strengths read off another instrument, to be drawn beside an estimate. */
-export const measurementSchema = z.strictObject({
-  id: z.number().int(),
-  name: z.string().max(200),
-  revision: z.string().max(1000),
-  source: z.string().max(2000),
-  points: z.array(
-    z.strictObject({
-      frequencyHz: z.number().positive(),
-      levelDbuvPerM: z.number(),
-      detector: z.enum(['quasi-peak', 'average', 'peak']),
-    }),
-  ),
-});

@@ -1,12 +1,14 @@
 import { z } from 'zod';
+import { comparisonSchema } from '../compare/comparison-schema.ts';
+import { trendSchema } from '../compare/trend-schema.ts';
 import { resultSchema } from '../estimate/result-schema.ts';
+import { measurementSchema } from '../project/measurement.ts';
 import { runSettingsSchema } from '../project/run-settings.ts';
 import {
   boardBaseSchema,
   checkSchema,
   documentRefSchema,
   importSummarySchema,
-  measurementSchema,
   projectSchema,
   runSummarySchema,
   sourcesPartSchema,
@@ -170,11 +172,15 @@ export const procedures = {
   /** The estimate with other waveforms, drives and loads on the same nets and pins: fast, nothing is solved again. */
   'levers.try': procedure(
     z.strictObject({ leversId: z.string(), sources: sourcesPartSchema, settings: runSettingsSchema }),
-    z.strictObject({
-      points: resultSchema.shape.points,
-      worst: resultSchema.shape.worst,
-      verdict: resultSchema.shape.verdict,
-    }),
+    z.union([
+      z.strictObject({
+        points: resultSchema.shape.points,
+        worst: resultSchema.shape.worst,
+        verdict: resultSchema.shape.verdict,
+      }),
+      /** Why what is kept cannot tell: what changed has to be solved. */
+      z.strictObject({ needsSolve: z.string() }),
+    ]),
   ),
   'levers.release': procedure(z.strictObject({ leversId: z.string() }), nothing),
 
@@ -190,12 +196,11 @@ export const procedures = {
   ),
   'runs.note': procedure(z.strictObject({ projectId, run, note: z.string().max(10_000) }), nothing),
   'runs.delete': procedure(z.strictObject({ projectId, run }), nothing),
-  /** The comparison as `app/compare` defines it. */
   'runs.compare': procedure(
     z.strictObject({ projectId, before: run, after: run }),
-    z.strictObject({ comparison: z.unknown() }),
+    z.strictObject({ comparison: comparisonSchema }),
   ),
-  'runs.trend': procedure(inProject, z.strictObject({ trend: z.unknown() })),
+  'runs.trend': procedure(inProject, z.strictObject({ trend: trendSchema })),
 
   'measurements.list': procedure(inProject, z.strictObject({ measurements: z.array(measurementSchema) })),
   'measurements.add': procedure(

@@ -2,6 +2,7 @@ import type { Received } from '../../app/contract/procedures.ts';
 import type { AppState } from '../state/app-state.ts';
 import type { Bases } from './bases.ts';
 import type { EventBus } from './event-bus.ts';
+import type { KeptLevers } from './kept-levers.ts';
 import type { OpenProjects } from './open-projects.ts';
 import type { RunningJobs } from './running-jobs.ts';
 import type { Uploads } from './uploads.ts';
@@ -31,6 +32,7 @@ export interface HostContext {
   readonly bases: Bases;
   readonly uploads: Uploads;
   readonly jobs: RunningJobs;
+  readonly levers: KeptLevers;
   /** Given with the command; opened once. */
   readonly startFile: string | null;
 }

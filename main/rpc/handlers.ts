@@ -5,6 +5,7 @@ import { boardHandlers } from './handlers/board.ts';
 import { dialogHandlers } from './handlers/dialog.ts';
 import { draftHandlers } from './handlers/draft.ts';
 import { estimateHandlers } from './handlers/estimate.ts';
+import { leverHandlers } from './handlers/levers.ts';
 import { projectHandlers } from './handlers/project.ts';
 import { runHandlers } from './handlers/runs.ts';
 
@@ -16,5 +17,6 @@ export const createHandlers = (context: HostContext): Partial<Handlers> => ({
   ...boardHandlers(context),
   ...draftHandlers(context),
   ...estimateHandlers(context),
+  ...leverHandlers(context),
   ...runHandlers(context),
 });

@@ -8,6 +8,7 @@ import type { Dialogs, HostContext, MenuCommands } from './context.ts';
 import { createDispatch, type Dispatch } from './dispatch.ts';
 import { EventBus } from './event-bus.ts';
 import { createHandlers } from './handlers.ts';
+import { KeptLevers } from './kept-levers.ts';
 import { OpenProjects } from './open-projects.ts';
 import { RunningJobs } from './running-jobs.ts';
 import { Uploads } from './uploads.ts';
@@ -52,6 +53,7 @@ export function createHost(options: HostOptions): Host {
     bases: new Bases(),
     uploads: new Uploads(),
     jobs: new RunningJobs(events),
+    levers: new KeptLevers(),
     startFile: options.startFile ?? null,
   };
   const logFailure = (where: string, error: unknown) => log.add(where, error);
@@ -64,6 +66,7 @@ export function createHost(options: HostOptions): Host {
     logFailure,
     close: async () => {
       await context.jobs.stopAll();
+      context.levers.releaseAll();
       context.projects.closeAll();
       await context.uploads.removeAll();
       await context.state.settled();
