@@ -35,17 +35,19 @@ const GROUND_SITE_MAX_HZ = 1e9 * (1 + 1e-9);
 export const siteAt = (scene: Scene, frequencyHz: number): SiteKind =>
   frequencyHz > GROUND_SITE_MAX_HZ ? 'free-space' : scene.site.kind;
 
+export const scanRequestAt = (scene: Scene, frequencyHz: number): ScanRequest => ({
+  kPerM: (2 * Math.PI * frequencyHz) / SPEED_OF_LIGHT_M_PER_S,
+  scanRadiusM: scene.scanRadiusM,
+  site: siteAt(scene, frequencyHz),
+  box: scene.box,
+});
+
 /** Level of one frequency: maximum over height, angle and polarisation; null when nothing radiates there. */
 export function lineLevel(scene: Scene, lines: FrequencyLines, responder: StructureResponder | null): LineLevel | null {
   const parts = radiatingParts(scene, lines);
   if (parts.length === 0) return null;
   const answer = responder?.answer(lines) ?? null;
-  const request: ScanRequest = {
-    kPerM: (2 * Math.PI * lines.frequencyHz) / SPEED_OF_LIGHT_M_PER_S,
-    scanRadiusM: scene.scanRadiusM,
-    site: siteAt(scene, lines.frequencyHz),
-    box: scene.box,
-  };
+  const request = scanRequestAt(scene, lines.frequencyHz);
   const domains = radiatorsByDomain(scene, parts, answer);
   const maxima = scanMaxima([...domains.values()], request);
   const totalAt = (component: Component) => {
@@ -84,7 +86,7 @@ interface AntennaPlace {
 }
 
 /** All radiating currents of each domain: pairs, loops, stated cables, and the structure's as one. */
-function radiatorsByDomain(
+export function radiatorsByDomain(
   scene: Scene,
   parts: readonly RadiatingPart[],
   answer: StructureAnswer | null,

@@ -1,8 +1,9 @@
+import { scanRequestAt } from '../estimate/line-level.ts';
 import { type Scene, SOLVED_TO_HZ } from '../estimate/scene.ts';
 import type { ElementSet } from '../fields/element-set.ts';
 import { cylinderPlan } from '../site/cylinder-field.ts';
 import { bytesPerUnit } from './kept-field.ts';
-import { scanRequestAt, type UnitLines } from './kept-line.ts';
+import type { UnitLines } from './kept-line.ts';
 
 /** Bytes of a complex number in double precision. */
 const COMPLEX_BYTES = 16;

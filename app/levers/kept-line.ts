@@ -1,5 +1,5 @@
 import { contributorsOf, type PathField } from '../estimate/contributors.ts';
-import { type LineLevel, siteAt } from '../estimate/line-level.ts';
+import { type LineLevel, scanRequestAt } from '../estimate/line-level.ts';
 import { type RadiatingPart, radiatingParts } from '../estimate/radiating-parts.ts';
 import type { Scene } from '../estimate/scene.ts';
 import type { SourceLine } from '../estimate/spectrum-table.ts';
@@ -8,7 +8,6 @@ import type { Radiator } from '../fields/element-set.ts';
 import { solveNetwork } from '../network/solve-network.ts';
 import type { Component } from '../site/power-map.ts';
 import { type ScanRequest, unitFieldsAtAntenna } from '../site/scan.ts';
-import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
 import { radToDeg } from '../units/convert.ts';
 import { type Domain, isEqual, isSameShape } from './domain.ts';
 import { KeptField } from './kept-field.ts';
@@ -225,15 +224,6 @@ export class KeptLine {
 
 const sum = (values: readonly number[]): number => values.reduce((a, b) => a + b, 0);
 const keyOf = ({ kind, name }: Pick<Source, 'kind' | 'name'>): string => `${kind} ${name}`;
-
-export function scanRequestAt(scene: Scene, frequencyHz: number): ScanRequest {
-  return {
-    kPerM: (2 * Math.PI * frequencyHz) / SPEED_OF_LIGHT_M_PER_S,
-    scanRadiusM: scene.scanRadiusM,
-    site: siteAt(scene, frequencyHz),
-    box: scene.box,
-  };
-}
 
 /** A line of 1 V at every port and 1 A in every loop, each a domain of its own. */
 function excitationsOf({ nets, loops }: UnitLines): SourceLine[] {

@@ -14,57 +14,81 @@ export interface AntennaPlace {
 
 /** Grid maxima within 2 dB of the best may be the highest between the grid's points. */
 const CANDIDATE_FACTOR = 10 ** -0.2;
-/** A grid maximum that is lower than this times the best found is not refined. */
-const HOPELESS_FACTOR = 10 ** -0.15;
+/** Parabolas through the grid's points tell a maximum between them within 0.5 dB. */
+const HOPELESS_FACTOR = 10 ** -0.05;
 const MOST_CANDIDATES = 24;
 /** Powers closer than this, relative, are equal (single precision): the lower height, then the smaller angle is taken. */
 const SAME_POWER = 1e-6;
 const MOST_ROUNDS = 12;
 /** A round that gains less than this, relative, is the last. */
-const GAIN = 1e-8;
+const GAIN = 1e-7;
+/** Heights closer than this are one, m. */
+const SAME_HEIGHT_M = 1e-3;
 
 /** Place at which the power of the domains' mixtures is largest: grid maxima near the best, each climbed between samples. */
 export function keptMaximum(field: KeptField, component: Component, domains: readonly Amplitudes[]): AntennaPlace {
   const { grid } = field;
   const powers = field.powerOnGrid(component, domains);
-  const found = candidates(powers, grid);
   const climb = new Climb(field, component, domains);
   let best = { angleRad: 0, heightM: ANTENNA_LOWEST_M, power: 0 };
-  for (const at of found) {
-    if (powers[at]! < HOPELESS_FACTOR * best.power) continue;
-    const top = climb.from(
-      (at % grid.angleCount) * grid.stepRad,
-      ANTENNA_LOWEST_M + Math.floor(at / grid.angleCount) * grid.stepM,
-    );
-    if (top.power > best.power * (1 + SAME_POWER)) best = top;
+  for (const { angleRad, heightM, power } of candidates(powers, grid)) {
+    if (power < HOPELESS_FACTOR * best.power) break;
+    const top = climb.from(angleRad, heightM);
+    const isHigher = top.power > best.power * (1 + SAME_POWER);
+    const isSame = !isHigher && top.power > best.power * (1 - SAME_POWER);
+    if (isHigher || (isSame && isBefore(top, best))) best = top;
   }
-  const turn = 2 * Math.PI;
-  return { angleRad: ((best.angleRad % turn) + turn) % turn, heightM: best.heightM };
+  return { angleRad: turned(best.angleRad), heightM: best.heightM };
 }
 
-/** Grid points not below their neighbours and near the best, in order of height, then angle. */
-function candidates(powers: Float64Array, { angleCount, heightCount }: SearchGrid): number[] {
+/** Lower, or as high and at a smaller angle (a step of the search apart). */
+const isBefore = (one: AntennaPlace, other: AntennaPlace): boolean =>
+  one.heightM < other.heightM - SAME_HEIGHT_M ||
+  (one.heightM <= other.heightM + SAME_HEIGHT_M && turned(one.angleRad) < turned(other.angleRad));
+
+/** Into 0 to 2π. */
+function turned(angleRad: number): number {
+  const turn = 2 * Math.PI;
+  return ((angleRad % turn) + turn) % turn;
+}
+
+/** Grid points not below their neighbours and near the best, as parabolas see the maxima there; the highest first. */
+function candidates(powers: Float64Array, { angleCount, heightCount, stepRad, stepM }: SearchGrid) {
   let highest = 0;
   for (const power of powers) if (power > highest) highest = power;
   const least = CANDIDATE_FACTOR * highest;
-  const found: number[] = [];
+  const found: (AntennaPlace & { readonly power: number })[] = [];
   for (let h = 0; h < heightCount; h++) {
     for (let a = 0; a < angleCount; a++) {
       const at = h * angleCount + a;
-      const here = powers[at]! * (1 + SAME_POWER);
-      if (here < least || highest === 0) continue;
+      const here = powers[at]!;
+      const bound = here * (1 + SAME_POWER);
+      if (bound < least || highest === 0) continue;
       const left = powers[a > 0 ? at - 1 : at + angleCount - 1]!;
       const right = powers[a < angleCount - 1 ? at + 1 : at + 1 - angleCount]!;
       const below = h > 0 ? powers[at - angleCount]! : 0;
       const above = h < heightCount - 1 ? powers[at + angleCount]! : 0;
-      if (here >= left && here >= right && here >= below && here >= above) found.push(at);
+      if (bound < left || bound < right || bound < below || bound < above) continue;
+      const along = vertexOf(left, here, right);
+      const isInside = h > 0 && h < heightCount - 1;
+      const up = isInside ? vertexOf(below, here, above) : { shift: 0, gain: 0 };
+      found.push({
+        angleRad: (a + along.shift) * stepRad,
+        heightM: ANTENNA_LOWEST_M + (h + up.shift) * stepM,
+        power: here + along.gain + up.gain,
+      });
     }
   }
-  if (found.length <= MOST_CANDIDATES) return found;
-  return found
-    .sort((one, other) => powers[other]! - powers[one]! || one - other)
-    .slice(0, MOST_CANDIDATES)
-    .sort((one, other) => one - other);
+  return found.sort((one, other) => other.power - one.power).slice(0, MOST_CANDIDATES);
+}
+
+/** Top of the parabola through three equally spaced values, the middle one not below the others: shift in steps. */
+function vertexOf(before: number, here: number, after: number): { readonly shift: number; readonly gain: number } {
+  const bend = 2 * here - before - after;
+  if (!(bend > 0)) return { shift: 0, gain: 0 };
+  const slope = (after - before) / 2;
+  const shift = Math.max(-0.5, Math.min(0.5, slope / bend));
+  return { shift, gain: (slope * shift) / 2 };
 }
 
 /** Climbs along angle and height in turn on the exact interpolant. */

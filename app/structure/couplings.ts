@@ -81,19 +81,41 @@ export class NetCoupling {
     return this.#onWires;
   }
 
-  /** Adds what a solved net does to the structure at one frequency; the response times a phasor. */
-  addTo(incident: Incident, frequencyHz: number, response: NetworkResponse, re: number, im: number): void {
+  /**
+   * Adds what a solved net does to the structure at one frequency; the response times a phasor. `shareOf` takes a part of
+   * every stretch only (m from the section's node A; a place where both are the same); absent: all.
+   */
+  addTo(
+    incident: Incident,
+    frequencyHz: number,
+    response: Pick<NetworkResponse, 'gamma' | 'forward' | 'backward'>,
+    re: number,
+    im: number,
+    shareOf?: (section: number, fromM: number, toM: number) => number,
+  ): void {
     const waves = this.#sectionOfPiece.map((section): LineWave => waveOf(response, section, re, im));
-    this.#pair.addTo(incident, frequencyHz, waves);
+    const ofPiece =
+      shareOf && ((piece: number, fromM: number, toM: number) => shareOf(this.#sectionOfPiece[piece]!, fromM, toM));
+    this.#pair.addTo(incident, frequencyHz, waves, ofPiece);
     const omega = 2 * Math.PI * frequencyHz;
     this.#wireField()?.addTo(incident, frequencyHz, (index, out) => {
       const filament = this.#filaments[index]!;
       filamentSource(filament, this.#pieces[filament.piece]!, waves[filament.piece]!, omega, out);
+      if (ofPiece) scale(out, ofPiece(filament.piece, filament.fromM, filament.toM));
     });
   }
 }
 
-function waveOf({ gamma, forward, backward }: NetworkResponse, section: number, re: number, im: number): LineWave {
+function scale(vector: Float64Array, factor: number): void {
+  for (let i = 0; i < vector.length; i++) vector[i]! *= factor;
+}
+
+function waveOf(
+  { gamma, forward, backward }: Pick<NetworkResponse, 'gamma' | 'forward' | 'backward'>,
+  section: number,
+  re: number,
+  im: number,
+): LineWave {
   const at = 2 * section;
   return {
     gammaRePerM: gamma[at]!,

@@ -10,6 +10,10 @@ import { RegularField } from './regular-field.ts';
 import { findReturnGaps, type ReturnGap } from './return-gaps.ts';
 import { addEdgeShares, cellShares, pointShares, type SheetLookup } from './sheet-lookup.ts';
 
+/** Part (0–1) of a stretch of a piece, or of a place on it, that is to act. */
+type ShareOf = (piece: number, fromM: number, toM: number) => number;
+const ALL: ShareOf = () => 1;
+
 /** What one short stretch of a piece acts on. */
 interface Stretch {
   readonly piece: number;
@@ -91,27 +95,29 @@ export class PairCoupling {
           );
   }
 
-  /** Adds what the currents (one wave a piece, A) do at one frequency. */
-  addTo(incident: Incident, frequencyHz: number, waves: readonly LineWave[]): void {
+  /** Adds what the currents (one wave a piece, A) do at one frequency, or of every stretch the share asked for. */
+  addTo(incident: Incident, frequencyHz: number, waves: readonly LineWave[], shareOf: ShareOf = ALL): void {
     const omega = 2 * Math.PI * frequencyHz;
     const emfScale = (omega * MU0_H_PER_M) / 2;
     const start = new Float64Array(2);
     const end = new Float64Array(2);
     const integral = new Float64Array(2);
     for (const { piece, fromM, toM, edges, edgeFactors, cells, cellFactors } of this.#stretches) {
+      const share = shareOf(piece, fromM, toM);
+      if (share === 0) continue;
       const wave = waves[piece]!;
       currentIntegral(wave, fromM, toM, integral);
       currentAt(wave, fromM, start);
       currentAt(wave, toM, end);
       // jω(…): re −= im, im += re
-      const emfRe = -emfScale * integral[1]!;
-      const emfIm = emfScale * integral[0]!;
+      const emfRe = -share * emfScale * integral[1]!;
+      const emfIm = share * emfScale * integral[0]!;
       for (let i = 0; i < edges.length; i++) {
         incident.emfRe[edges[i]!]! += edgeFactors[i]! * emfRe;
         incident.emfIm[edges[i]!]! += edgeFactors[i]! * emfIm;
       }
       // −(1/2ε0) ∫q ds with ∫q ds = −ΔI/(jω ε_r) = j ΔI/(ω ε_r)
-      const chargeScale = 1 / (2 * EPSILON0_F_PER_M * omega * this.pieces[piece]!.epsilonR);
+      const chargeScale = share / (2 * EPSILON0_F_PER_M * omega * this.pieces[piece]!.epsilonR);
       const potentialRe = chargeScale * (end[1]! - start[1]!);
       const potentialIm = -chargeScale * (end[0]! - start[0]!);
       for (let i = 0; i < cells.length; i++) {
@@ -120,22 +126,28 @@ export class PairCoupling {
       }
     }
     for (const { piece, end: which, cells, cellFactors } of this.#ends) {
+      const endM = which === 'start' ? 0 : pieceLengthM(this.pieces[piece]!);
+      const share = shareOf(piece, endM, endM);
+      if (share === 0) continue;
       endCharge(this.pieces[piece]!, waves[piece]!, omega, which, start);
       for (let i = 0; i < cells.length; i++) {
-        incident.potentialRe[cells[i]!]! -= (cellFactors[i]! * start[0]!) / (2 * EPSILON0_F_PER_M);
-        incident.potentialIm[cells[i]!]! -= (cellFactors[i]! * start[1]!) / (2 * EPSILON0_F_PER_M);
+        incident.potentialRe[cells[i]!]! -= (share * cellFactors[i]! * start[0]!) / (2 * EPSILON0_F_PER_M);
+        incident.potentialIm[cells[i]!]! -= (share * cellFactors[i]! * start[1]!) / (2 * EPSILON0_F_PER_M);
       }
     }
     for (const { piece, atM, cells, shares } of this.#injections) {
+      const share = shareOf(piece, atM, atM);
       currentAt(waves[piece]!, atM, start);
       for (let i = 0; i < cells.length; i++) {
-        incident.injectedRe[cells[i]!]! += shares[i]! * start[0]!;
-        incident.injectedIm[cells[i]!]! += shares[i]! * start[1]!;
+        incident.injectedRe[cells[i]!]! += share * shares[i]! * start[0]!;
+        incident.injectedIm[cells[i]!]! += share * shares[i]! * start[1]!;
       }
     }
     this.#bareField?.addTo(incident, frequencyHz, (index, out) => {
       const trace = this.#bareTraces[index]!;
       filamentSource(trace, this.pieces[trace.piece]!, waves[trace.piece]!, omega, out);
+      const share = shareOf(trace.piece, trace.fromM, trace.toM);
+      for (let i = 0; i < out.length; i++) out[i]! *= share;
     });
   }
 }

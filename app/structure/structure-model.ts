@@ -27,6 +27,7 @@ export class StructureModel {
   readonly parts: readonly StructurePart[];
   readonly #cables: readonly Cable[];
   #solver: StructureSolver | null = null;
+  #solvedHz: number | null = null;
 
   /** `cables` are those without a stated current. Throws `input` when a cable finds no plane. */
   constructor(board: Board, frame: SiteFrame, site: SiteKind, cables: readonly Cable[], maxHz: number) {
@@ -44,10 +45,14 @@ export class StructureModel {
     this.#cables = cables;
   }
 
-  /** The solver, factored at this frequency. */
+  /** The solver, factored at this frequency (once, when the same is asked for again). */
   solverAt(frequencyHz: number): StructureSolver {
     this.#solver ??= new StructureSolver(this.mesh);
-    this.#solver.setFrequency(frequencyHz, this.#seriesAt(frequencyHz));
+    if (this.#solvedHz !== frequencyHz) {
+      this.#solvedHz = null;
+      this.#solver.setFrequency(frequencyHz, this.#seriesAt(frequencyHz));
+      this.#solvedHz = frequencyHz;
+    }
     return this.#solver;
   }
 
