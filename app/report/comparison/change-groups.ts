@@ -39,10 +39,22 @@ export function effectText({
   return `${whose} gone ${at}${beforeDbuvPerM === null ? '' : ` (was ${dbText(beforeDbuvPerM)} dBµV/m)`}`;
 }
 
-/** "CLK_25M via valve cable −18.1": who made a line change most, with the dB of its own level. */
-export function contributorText({ kind, name, path, changeDb, beforeDbuvPerM }: ContributorChange): string {
-  const via = path === name || path === kind ? '' : ` via ${shortName(pathText(path), 32)}`;
-  const who = `${shortName(name, 32)}${via}`;
+/**
+ * Who made a line change most, with the dB of each own level: "CLK_25M via valve cable −18.1, via supply cable −18.0". A name
+ * that comes twice in a row is said once.
+ */
+export function contributorsText(contributors: readonly ContributorChange[]): string {
+  return contributors
+    .map((each, i) => {
+      const before = contributors[i - 1];
+      return contributorText(each, before?.kind === each.kind && before.name === each.name);
+    })
+    .join(', ');
+}
+
+function contributorText({ kind, name, path, changeDb, beforeDbuvPerM }: ContributorChange, isKnown: boolean): string {
+  const via = path === name || path === kind ? '' : `via ${shortName(pathText(path), 32)}`;
+  const who = [isKnown ? '' : shortName(name, 32), via].filter((text) => text !== '').join(' ');
   if (changeDb !== null) return `${who} ${signedDbText(changeDb)}`;
   return beforeDbuvPerM === null ? `${who} new` : `${who} gone`;
 }

@@ -5,7 +5,6 @@ import {
   type Column,
   code,
   type Fact,
-  joined,
   list,
   mark,
   name,
@@ -22,7 +21,7 @@ import { shortName } from '../markup.ts';
 import { printed } from '../number.ts';
 import { DETECTOR_SHORT } from '../text-table.ts';
 import { standingOfMargin } from '../verdict.ts';
-import { changeGroups, contributorText, effectText } from './change-groups.ts';
+import { changeGroups, contributorsText, effectText } from './change-groups.ts';
 import { bandName, changedLines, countsText, crossingsText, lineStanding, stateText } from './comparison-words.ts';
 
 /** Sections of a comparison, for the page of a screen and for print alike. */
@@ -198,9 +197,6 @@ function lineRow(line: LineChange, requiredMarginDb: number): Text[] {
     margin(before),
     margin(after),
     lineStanding(line).toLowerCase(),
-    joined(
-      contributors.slice(0, NAMED).map((each) => name(contributorText(each), 80)),
-      ', ',
-    ),
+    name(contributorsText(contributors.slice(0, NAMED)), 160),
   ];
 }

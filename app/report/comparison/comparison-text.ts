@@ -6,7 +6,7 @@ import { type PlainColumn, plainTable } from '../plain-table.ts';
 import { safeTerminalText, visibleText } from '../safe-text.ts';
 import { DETECTOR_SHORT } from '../text-table.ts';
 import { wrapText } from '../wrap.ts';
-import { changeGroups, contributorText, effectText } from './change-groups.ts';
+import { changeGroups, contributorsText, effectText } from './change-groups.ts';
 import { bandName, changedLines, countsText, crossingsText, lineStanding, stateText } from './comparison-words.ts';
 
 export interface ComparisonTextOptions {
@@ -115,7 +115,6 @@ const signed = (text: string): string => text.replace('-', '−');
 
 function lineRow(line: LineChange): string[] {
   const { frequencyHz, detector, before, after, levelChangeDb, contributors } = line;
-  const main = contributors[0];
   return [
     mhzText(frequencyHz),
     DETECTOR_SHORT[detector],
@@ -124,6 +123,6 @@ function lineRow(line: LineChange): string[] {
     levelChangeDb === null ? '' : signedDbText(levelChangeDb),
     after ? dbText(after.marginDb) : '',
     lineStanding(line),
-    main ? visibleText(contributorText(main)) : '',
+    contributorsText(contributors.slice(0, 1)),
   ];
 }

@@ -102,7 +102,8 @@ const ghostPath = ([x, y]: Xy): string =>
 /** The worst lines, with the margin they moved by. */
 function labels(moves: readonly Move[]): Markup {
   const shown = moves.slice(0, LABELLED).flatMap(({ line, ghost, now }) => {
-    const anchor = now ?? ghost;
+    // The upper of both stands out of the crowd.
+    const anchor = ghost && now ? (ghost[1] < now[1] ? ghost : now) : (now ?? ghost);
     if (!anchor) return [];
     const change = line.marginChangeDb;
     const by = change === null ? line.status : `${change < 0 ? 'worse' : 'better'} by ${dbText(Math.abs(change))} dB`;

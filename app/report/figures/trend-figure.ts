@@ -5,7 +5,7 @@ import { type Markup, markup, shortName } from '../markup.ts';
 import { revisionName, standingOfPoint } from '../trend/trend-words.ts';
 import { linearScale, multiples, roundStep, type Scale } from './axis.ts';
 import { markGroup } from './marks.ts';
-import { linePath, px, type Xy } from './path.ts';
+import { dashPath, linePath, px, type Xy } from './path.ts';
 import type { Box } from './place-labels.ts';
 import { FIGURE_WIDTH, PLOT_LEFT } from './spectrum-frame.ts';
 
@@ -64,6 +64,9 @@ function marginScale(steps: readonly { worst: Worst }[], requiredMarginDb: numbe
   return linearScale(Math.floor((low - 2) / 5) * 5, Math.ceil((high + 2) / 5) * 5, BOX.bottom, BOX.top);
 }
 
+/** Half a dash that stands for a revision whose neighbours have no line. */
+const LONE_HALF_PX = 8;
+
 /** One path, interrupted where a revision has no line. */
 function pieces(places: readonly (Xy | undefined)[]): string {
   const runs: Xy[][] = [[]];
@@ -71,7 +74,7 @@ function pieces(places: readonly (Xy | undefined)[]): string {
     if (place) runs.at(-1)!.push(place);
     else runs.push([]);
   }
-  return runs.map(linePath).join('');
+  return runs.map((run) => (run.length === 1 ? dashPath(...run[0]!, LONE_HALF_PX, 0) : linePath(run))).join('');
 }
 
 /** As many names as fit, the last one always. */

@@ -33,7 +33,7 @@ function groupSection(group: TrendGroup, index: number): Section {
     blocks: [
       paragraph(name(group.board, 80), headline !== '' && ['. ', strong(`Worst margin ${headline}.`)]),
       { kind: 'figure', pictures: [trendFigure(group, `trend-hatch-${index}`)], captions },
-      table(POINT_COLUMNS, shown.map(pointRow)),
+      table(POINT_COLUMNS, shown.map(pointRow), 'bands'),
       ...(bands.length > 0 ? [bandTable(bands, points)] : []),
       note(
         'Of every revision its latest run counts. Runs with another limit, distance, site, orientation or structure have a section of their own.',
