@@ -1,5 +1,6 @@
 import type { Board } from '../board/board.ts';
 import type { Caveat } from '../errors.ts';
+import { coarseSlot } from '../structure/cell-grid.ts';
 import { largestParts } from '../structure/copper-parts.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
 import { hzToMhz } from '../units/convert.ts';
@@ -74,6 +75,15 @@ function structureCaveats(scene: Scene, toHz: number, roughHz: readonly number[]
     caveats.push({
       code: 'planes-apart',
       message: `the planes fall into ${partCount} parts that no copper joins; capacitors and other parts across the gap are not known: a trace that crosses it radiates here as if nothing joined them`,
+      where: '',
+      ...everywhere,
+    });
+  }
+  const coarse = coarseSlot(scene.board.planes, scene.structure!.mesh.sheet.grid);
+  if (coarse) {
+    caveats.push({
+      code: 'structure-cells-coarse',
+      message: `a slot of ${(coarse.lengthM * 1e3).toFixed(0)} mm in the planes is only ${coarse.cells.toFixed(0)} cells long (ten are wanted): with smaller cells (cellMm) levels may change by more than 0.5 dB, mostly above 400 MHz and where a trace crosses it`,
       where: '',
       ...everywhere,
     });

@@ -2,6 +2,7 @@ import type { RingM } from '../board/board.ts';
 import type { Region } from '../geometry/polygon.ts';
 import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
 import { largestParts } from './copper-parts.ts';
+import { openSlotsM } from './open-slots.ts';
 import { type Grid, rasterizePlanes } from './sheet.ts';
 
 /** Cells of 5 mm serve a 120 mm board to 1 GHz (compared with a moment-method model); never larger on their own account. */
@@ -12,6 +13,10 @@ const CELLS_ACROSS = 6;
 const CELLS_ALONG_SLOT = 10;
 /** Shorter openings change nothing that is heard below 1 GHz. */
 const SHORTEST_SLOT_M = 8e-3;
+/** Slots open to the edge that cut less of the planes' smaller side than this hardly move its currents. */
+const LEAST_CUT = 0.15;
+/** Cells come out this much larger than wanted at most, to divide the outline. */
+const CELL_SLACK = 1.3;
 /** Cells at most, so that a factorisation stays under a second; a large board gets larger cells (cellMm overrides). */
 const MOST_CELLS = 460;
 /** Cells at most where a slot or a narrow neck asks for them. */
@@ -34,8 +39,9 @@ export function chooseGrid(planes: readonly Region[], maxHz: number, cellM?: num
     SPEED_OF_LIGHT_M_PER_S / maxHz / CELLS_PER_WAVELENGTH,
     Math.min(widthM, heightM) / CELLS_ACROSS,
   );
-  const slotM = shortestSlotM(planes) / CELLS_ALONG_SLOT;
-  let wantedM = Math.max(Math.min(Math.max(coarse, leastM(MOST_CELLS)), slotM), leastM(MOST_CELLS_FOR_DETAIL));
+  const usualM = Math.max(coarse, leastM(MOST_CELLS));
+  const slotM = shortestSlotM(planes, gridOf(box, usualM)) / CELLS_ALONG_SLOT;
+  let wantedM = Math.max(Math.min(usualM, slotM), leastM(MOST_CELLS_FOR_DETAIL));
   let grid = gridOf(box, bestSide(widthM, heightM, wantedM));
   // A neck narrower than a cell must not part the copper: compare with a raster three times as fine.
   const parts = largestParts(rasterizePlanes(planes, gridOf(box, grid.cellM / 3), 0));
@@ -80,8 +86,11 @@ function gridOf({ lowXM, highXM, lowYM, highYM }: Box, cellM: number): Grid {
   };
 }
 
-/** Length of the shortest cutout that counts as a slot, ∞ without one. */
-function shortestSlotM(planes: readonly Region[]): number {
+/**
+ * Length of the shortest opening that counts as a slot, ∞ without one: a cutout, or one that is open to the plane's edge and cuts
+ * a good part of it.
+ */
+function shortestSlotM(planes: readonly Region[], grid: Grid): number {
   let shortest = Infinity;
   for (const { cutoutsM } of planes) {
     for (const ring of cutoutsM) {
@@ -90,7 +99,23 @@ function shortestSlotM(planes: readonly Region[]): number {
       if (lengthM >= SHORTEST_SLOT_M) shortest = Math.min(shortest, lengthM);
     }
   }
-  return shortest;
+  const acrossM = Math.min(grid.columns, grid.rows) * grid.cellM;
+  const leastM = Math.max(SHORTEST_SLOT_M, LEAST_CUT * acrossM);
+  const open = openSlotsM(rasterizePlanes(planes, grid, 0)).filter((lengthM) => lengthM >= leastM);
+  return Math.min(shortest, ...open);
+}
+
+/** A slot that has too few cells along it for its length to count right. */
+export interface CoarseSlot {
+  readonly lengthM: number;
+  readonly cells: number;
+}
+
+/** The shortest slot when the grid cannot follow it (memory, or the user's own cells), else null. */
+export function coarseSlot(planes: readonly Region[], grid: Grid): CoarseSlot | null {
+  const lengthM = shortestSlotM(planes, grid);
+  const cells = lengthM / grid.cellM;
+  return cells < CELLS_ALONG_SLOT / CELL_SLACK ? { lengthM, cells } : null;
 }
 
 /** Side near the wanted one that divides both lengths best. */

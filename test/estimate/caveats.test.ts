@@ -47,6 +47,26 @@ describe('caveats (physics 10): said when they apply, silent when not', () => {
     });
   });
 
+  it('a slot that the user’s own cells are too large for, closed or open to the edge', () => {
+    const notched: Mm[] = [
+      [0, 0],
+      [30, 0],
+      [30, 20],
+      [30.4, 20],
+      [30.4, 0],
+      [60, 0],
+      [60, 40],
+      [0, 40],
+    ];
+    const solved = { request: { structure: 'solved' as const } };
+    const plane = (more: Partial<BoardFileInput> = {}) =>
+      plain({ planes: [{ layer: 'BOT', net: 'GND', pointsMm: notched }], ...more });
+    expect(codesOf(plane(), solved)).not.toContain('structure-cells-coarse');
+    const coarse = caveat('structure-cells-coarse', plane({ structure: { cellMm: 5 } }), solved)!;
+    expect(coarse.message).toMatch(/a slot of 20 mm in the planes is only 4 cells long/);
+    expect(codesOf(plain({ structure: { cellMm: 5 } }), solved)).not.toContain('structure-cells-coarse');
+  });
+
   it('board larger than half a wave: diagonal of 224 mm at 671 MHz', () => {
     const wide = (xMm: number) =>
       plain({

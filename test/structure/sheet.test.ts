@@ -1,10 +1,12 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { PointM } from '../../app/board/board.ts';
-import { chooseGrid } from '../../app/structure/cell-grid.ts';
+import type { Region } from '../../app/geometry/polygon.ts';
+import { chooseGrid, coarseSlot } from '../../app/structure/cell-grid.ts';
 import { largestParts } from '../../app/structure/copper-parts.ts';
 import { copperRuns } from '../../app/structure/edge-profile.ts';
 import { walkGrid } from '../../app/structure/grid-walk.ts';
+import { openSlotsM } from '../../app/structure/open-slots.ts';
 import { cellAtIndex, cellUnder, type Sheet } from '../../app/structure/sheet.ts';
 import { rectangle, rectangleRing, sheetOf } from './support.ts';
 
@@ -162,6 +164,69 @@ describe('choice of cells', () => {
     expect(largestParts(sheetOf([plane], 0.1, 0.06, plain))).toBe(2);
     const { cellM } = chooseGrid([plane], 1e9);
     expect(largestParts(sheetOf([plane], 0.1, 0.06, cellM))).toBe(1);
+  });
+
+  it('a slot cut in from the edge counts like a closed one, a shallow or wide one does not', () => {
+    const plain = chooseGrid([rectangle(0.1, 0.06)], 1e9).cellM;
+    const notched = (depthM: number, widthM: number) => {
+      const [low, high] = [0.05 - widthM / 2, 0.05 + widthM / 2];
+      const ringM: PointM[] = [
+        [0, 0],
+        [low, 0],
+        [low, depthM],
+        [high, depthM],
+        [high, 0],
+        [0.1, 0],
+        [0.1, 0.06],
+        [0, 0.06],
+      ];
+      return { ringM, cutoutsM: [] };
+    };
+    const cellOf = (plane: Region) => chooseGrid([plane], 1e9).cellM;
+    // Half the height; the raster counts whole cells, and 900 cells are the least side of 2.6 mm.
+    for (const widthM of [0.3e-3, 2e-3, 6e-3]) expect(cellOf(notched(0.03, widthM))).toBeLessThanOrEqual(0.0345 / 10);
+    expect(cellOf(notched(0.007, 0.3e-3))).toBe(plain);
+    expect(cellOf(notched(0.03, 25e-3))).toBe(plain);
+    // From edge to edge there is no end to go around.
+    const halves = [0, 0.0502].map((xM) => ({ ringM: rectangleRing(xM, 0, xM + 0.0498, 0.06), cutoutsM: [] }));
+    expect(chooseGrid(halves, 1e9).cellM).toBe(plain);
+    // Turned, at the inner edge of an L, aslant.
+    const turned = notched(0.03, 0.3e-3).ringM.map(([x, y]): PointM => [y, x]);
+    expect(cellOf({ ringM: turned, cutoutsM: [] })).toBeCloseTo(cellOf(notched(0.03, 0.3e-3)), 12);
+    const lShape: PointM[] = [
+      [0, 0],
+      [0.1, 0],
+      [0.1, 0.03],
+      [0.0503, 0.03],
+      [0.0503, 0.01],
+      [0.0499, 0.01],
+      [0.0499, 0.03],
+      [0.04, 0.03],
+      [0.04, 0.08],
+      [0, 0.08],
+    ];
+    expect(cellOf({ ringM: lShape, cutoutsM: [] })).toBeLessThan(0.0036);
+    const slanted: PointM[] = [
+      [0, 0],
+      [0.03, 0],
+      [0.055, 0.025],
+      [0.0553, 0.0247],
+      [0.0306, 0],
+      [0.1, 0],
+      [0.1, 0.06],
+      [0, 0.06],
+    ];
+    expect(openSlotsM(sheetOf([{ ringM: slanted, cutoutsM: [] }], 0.1, 0.06, 5e-3))).toHaveLength(1);
+  });
+
+  it('says when a slot has too few cells', () => {
+    const slot = [rectangle(0.1, 0.06, [rectangleRing(0.05, 0.02, 0.0502, 0.04)])];
+    const own = chooseGrid(slot, 1e9);
+    // 2 mm would be wanted; memory allows 2.5.
+    expect(own.cellM).toBeGreaterThan(0.0024);
+    expect(coarseSlot(slot, chooseGrid(slot, 1e9, 2e-3))).toBeNull();
+    expect(coarseSlot(slot, chooseGrid(slot, 1e9, 5e-3))!.cells).toBeCloseTo(20.001 / 5, 3);
+    expect(coarseSlot([rectangle(0.1, 0.06)], own)).toBeNull();
   });
 
   it('obeys the user’s own size', () => {
