@@ -10,7 +10,7 @@ export interface DocumentFrame {
   readonly author: string;
   readonly subject: string;
   readonly keywords: string;
-  /** Begins with YYYY-MM-DD: dates the file. Anything else: the file has no date. */
+  /** Begins with YYYY-MM-DD: dates the file. Anything else: dated 1970-01-01, which says nothing. */
   readonly dateText: string;
   readonly programVersion: string;
   readonly paper: Paper;
@@ -71,12 +71,12 @@ const twoSided = (left: string, right: string) => ({
   color: QUIET,
 });
 
-/** The library wants a date; `renderPdf` takes it out again where this is no day. */
-export const NO_DATE = new Date(0);
+/** The format's properties need a date: without a day in the text the epoch, as reproducible builds have it. */
+const NO_DAY = '1970-01-01';
 
 /** Noon of that day, so that it is the same day in every time zone a reader may show it in. */
 export function creationDate(dateText: string): Date {
-  const day = /^\d{4}-\d{2}-\d{2}/.exec(dateText)?.[0];
-  const date = day === undefined ? NO_DATE : new Date(`${day}T12:00:00Z`);
-  return Number.isNaN(date.getTime()) ? NO_DATE : date;
+  const day = /^\d{4}-\d{2}-\d{2}/.exec(dateText)?.[0] ?? NO_DAY;
+  const date = new Date(`${day}T12:00:00Z`);
+  return Number.isNaN(date.getTime()) ? new Date(`${NO_DAY}T12:00:00Z`) : date;
 }

@@ -1,7 +1,6 @@
 import pdfmake from 'pdfmake';
 import type { TDocumentDefinitions } from 'pdfmake/interfaces.js';
 import { FONT_FILES } from './fonts.ts';
-import { NO_DATE } from './page-frame.ts';
 
 const ALLOWED_FILES = new Set(Object.values(FONT_FILES).flatMap(({ normal, bold }) => [normal, bold]));
 
@@ -11,7 +10,6 @@ export async function renderPdf(definition: TDocumentDefinitions): Promise<Uint8
   pdfmake.setUrlAccessPolicy(() => false);
   pdfmake.setLocalAccessPolicy((path) => ALLOWED_FILES.has(path));
   const document = await pdfmake.createPdf(definition).getStream();
-  if (definition.info?.creationDate === NO_DATE) delete document.info.CreationDate;
   return new Promise((resolve, reject) => {
     const chunks: Buffer[] = [];
     document.on('data', (chunk: Buffer) => chunks.push(chunk));

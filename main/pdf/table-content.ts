@@ -78,7 +78,11 @@ function cell(text: Text, { isNumber, isWhole, isStrong }: Column): TableCell {
   return { text: runs, alignment: isNumber ? 'right' : 'left', ...(isStrong && { bold: true }) } as TableCell;
 }
 
+/** A bookmark needs a line of text to lead to. */
 function addBookmark(row: TableCell[], text: string): void {
-  const at = row.findIndex((one) => 'text' in (one as object));
+  const at = row.findIndex((one) => {
+    const runs = (one as { readonly text?: unknown }).text;
+    return Array.isArray(runs) && runs.length > 0;
+  });
   if (at >= 0) row[at] = { ...(row[at] as object), outline: true, outlineText: text } as TableCell;
 }
