@@ -14,6 +14,7 @@ import { addNamedReturn, type TerminalEnd } from './named-return.ts';
 import type { NetContext, Terminals } from './net-context.ts';
 import { addPairElements, type PlacedSection, pairEpsilonR } from './pair-elements.ts';
 import { addPlaces } from './places.ts';
+import { planeNetChanges } from './plane-changes.ts';
 import { RuleCollector, type RuledElements } from './rule-collector.ts';
 import { type EndKind, endKinds, traceEndM } from './trace-end.ts';
 import { crossSectionOver, lineWithOverrides, statedLine } from './trace-line.ts';
@@ -112,7 +113,11 @@ export function buildNetModel(context: NetContext, net: Net): NetModel {
     pair: hasGaps ? pairWith(coupling.gapsBySection).pair : pairAlone,
     pairAlone,
     coupling,
-    findings: [...gapFindings(board, context.planes, net, graph, references, served), ...placeFindings],
+    findings: [
+      ...gapFindings(board, context.planes, net, graph, references, served),
+      ...planeNetChanges(board, context.planes, net, graph, sections),
+      ...placeFindings,
+    ],
     caveats: lineCaveats(net.name, lines),
   };
 }

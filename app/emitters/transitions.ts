@@ -32,13 +32,13 @@ export interface PlaceCurrents {
 }
 
 /**
- * Vertical currents and return detours of one place. Where a layer change also changes the reference plane, the return
- * crosses at the nearest stitching via of that plane net within 10 mm (its detour is part of the loop); without one it
- * is taken to cross beside the via, and a finding says so.
+ * Vertical currents and return detours of one place. Where the reference plane changes to another layer (at a via, or where
+ * the nearer plane ends), the return crosses at the nearest stitching via of that plane net within 10 mm (its detour is part
+ * of the loop); without one it is taken to cross beside the trace, and a finding says so.
  */
 export function placeCurrents(board: Board, stitches: StitchIndex, place: NetPlace): PlaceCurrents {
   const planeLayers = [...new Set(place.planes.map(({ layerIndex }) => layerIndex))];
-  if (planeLayers.length < 2 || place.hasTerminal || !place.hasVia) {
+  if (planeLayers.length < 2 || place.hasTerminal) {
     return { posts: postsAt(place.atM, place.leaving), detours: [], finding: null };
   }
   const nets = [...new Set(place.planes.map(({ net }) => net))];
@@ -73,7 +73,7 @@ function transitionFinding(board: Board, place: NetPlace, nets: readonly string[
   return {
     code: 'return-changes-plane',
     net: place.net,
-    message: `the layer change moves the return from ${[...new Set(layers)].join(' to ')}; ${why}`,
+    message: `${place.hasVia ? 'the layer change' : 'the trace'} moves the return from ${[...new Set(layers)].join(' to ')}; ${why}`,
     atM: [place.atM[0], place.atM[1]],
     layer: board.stackup[place.planes[0]!.layerIndex]!.name,
   };

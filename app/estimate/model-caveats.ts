@@ -261,8 +261,8 @@ const FINDING_CAVEATS: readonly (readonly [code: string, pairOnly: string, solve
   ],
   [
     'return-changes-plane',
-    'a layer change leaves the return no near way between planes; it is taken to cross beside the via',
-    'a layer change leaves the return no near way between planes; it is taken to cross beside the via',
+    'a trace goes over to another plane and its return has no near way there (or one through capacitors that are not known); it is taken to cross beside the trace',
+    'a trace goes over to another plane and its return has no near way there (or one through capacitors that are not known); it is taken to cross beside the trace',
   ],
 ];
 

@@ -23,6 +23,11 @@ export interface SegmentReference {
   readonly gaps: readonly Stretch[];
 }
 
+/** Part of a straight way (fractions of its length) over planes of one net. */
+export interface NetStretch extends Stretch {
+  readonly net: string;
+}
+
 /** A plane serves a segment when it covers at least this much of its length; the rest is a gap finding. */
 const SERVING_FRACTION = 0.5;
 
@@ -63,6 +68,17 @@ export class PlaneIndex {
       planes: chosen.map(({ plane }, i) => ({ ...plane, share: inverse[i]! / sum })),
       gaps: uncoveredStretches(nearest.covered),
     };
+  }
+
+  /** Planes of one layer (of other nets than the trace's own) under a straight way, in order of where each begins under it. */
+  netsAlong(layerIndex: number, fromM: PointM, toM: PointM, ownNet: string): NetStretch[] {
+    const areas = (this.#byLayer.get(layerIndex) ?? []).filter(({ net }) => net !== ownNet);
+    return [...new Set(areas.map(({ net }) => net))]
+      .flatMap((net) => {
+        const own = areas.filter((area) => area.net === net).map(({ region }) => region);
+        return coveredStretches(fromM, toM, own).map((stretch) => ({ net, ...stretch }));
+      })
+      .sort((one, other) => one.from - other.from);
   }
 
   /** Distance from a place without copper to the layer's copper in one direction (unit vector), m; Infinity: none. */

@@ -250,6 +250,90 @@ describe('a reference that changes without a via', () => {
   });
 });
 
+describe('a trace that goes over to another plane without a via', () => {
+  const L1_TRACE: Mm[] = [
+    [10, 20],
+    [50, 20],
+  ];
+  /** Trace on L1, planes on L2 from x = 0 to `splitMm` (GND) and beyond (VCC), or none beyond; a full GND on L3. */
+  const over = (pointsMm: Mm[], splitMm: number, beyond: string | null, stitchAt: Mm): BoardFileInput => {
+    const file = ontoPlaneLayer(0.03, stitchAt);
+    const half = (x1: number, x2: number): Mm[] => [
+      [x1, 0],
+      [x2, 0],
+      [x2, 40],
+      [x1, 40],
+    ];
+    return {
+      ...file,
+      planes: [
+        { layer: 'L2', net: 'GND', pointsMm: half(0, splitMm) },
+        ...(beyond === null ? [] : [{ layer: 'L2', net: beyond, pointsMm: half(splitMm + 0.5, 60) }]),
+        { layer: 'L3', net: 'GND' },
+      ],
+      nets: [
+        {
+          name: 'S',
+          traces: [{ layer: 'L1', widthMm: 0.3, pointsMm }],
+          pins: [
+            { name: 'U1.S', atMm: pointsMm[0]!, layer: 'L1' },
+            { name: 'U2.S', atMm: pointsMm.at(-1)!, layer: 'L1' },
+          ],
+        },
+        file.nets[1]!,
+      ],
+    };
+  };
+  const found = (file: BoardFileInput) =>
+    radiatorsAt(boardOf(file), LOW_MHZ * 1e6)
+      .scene.nets.get('S')!
+      .findings.filter(({ code }) => code === 'return-changes-plane');
+
+  it('another net’s plane on the same layer: found where it begins, in a straight run and at a bend', () => {
+    const [finding, ...more] = found(over(L1_TRACE, 30, 'VCC', [27, 23]));
+    expect(more).toEqual([]);
+    expect(finding!.message).toBe(
+      'the trace moves the return from GND on L2 to VCC on L2; planes of different nets: the return must cross through a capacitor',
+    );
+    expect(finding!.atM![0]).toBeCloseTo(30.25e-3, 9);
+    const bent: Mm[] = [
+      [10, 20],
+      [30.2, 20],
+      [50, 24],
+    ];
+    const atBend = found(over(bent, 30, 'VCC', [27, 23]));
+    expect(atBend.map(({ atM }) => [atM![0], atM![1]])).toEqual([[0.0302, 0.02]]);
+    expect(found(over(L1_TRACE, 30, 'GND', [27, 23]))).toEqual([]);
+    // The trace ends 0.4 mm past the split.
+    expect(
+      found(
+        over(
+          [
+            [10, 20],
+            [30.9, 20],
+          ],
+          30,
+          'VCC',
+          [27, 23],
+        ),
+      ),
+    ).toEqual([]);
+  });
+
+  it('a plane of another layer: found unless a stitching via is near', () => {
+    const bent: Mm[] = [
+      [10, 20],
+      [30.8, 20],
+      [50, 24],
+    ];
+    expect(found(over(bent, 31, null, [27, 23]))).toEqual([]);
+    const [finding] = found(over(bent, 31, null, [10, 30]));
+    expect(finding!.message).toMatch(
+      /^the trace moves the return from GND on L2 to GND on L3; the nearest stitching via is 2\d\.\d mm away$/,
+    );
+  });
+});
+
 describe('a trace between two planes', () => {
   /** L2 trace; planes above and below at these distances; or below only. */
   const moments = (aboveMm: number, belowMm: number, hasAbove: boolean, loadOhm?: number) => {
