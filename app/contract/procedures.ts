@@ -241,7 +241,7 @@ export type Handlers = { [N in ProcedureName]: (input: Received<N>) => Promise<D
 export type DeepReadonly<T> = unknown extends T
   ? T
   : T extends Uint8Array
-    ? T
+    ? Uint8Array
     : T extends object
       ? { readonly [K in keyof T]: DeepReadonly<T[K]> }
       : T;

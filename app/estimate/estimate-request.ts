@@ -1,5 +1,6 @@
 import type { LimitSet } from '../limits/choose.ts';
 import type { SiteRequest } from '../site/site.ts';
+import type { LineLevel } from './line-level.ts';
 
 /** What to estimate a board against, and how. */
 export interface EstimateRequest {
@@ -18,6 +19,8 @@ export interface EstimateRequest {
 /** Progress and stop of a long run. */
 export interface EstimateHooks {
   onProgress?(done: number, total: number): void;
+  /** Each level as it is found. */
+  onLevel?(level: LineLevel): void;
   /** Asked once a line; true ends the run with a `cancelled` error. */
   stop?(): boolean;
 }

@@ -33,7 +33,9 @@ export function solveShare(plan: EstimatePlan, share: WorkShare, hooks: Estimate
   const levels = own.map((lines, done) => {
     throwIfStopped();
     hooks.onProgress?.(done, own.length);
-    return lineLevel(scene, lines, responder);
+    const level = lineLevel(scene, lines, responder);
+    if (level) hooks.onLevel?.(level);
+    return level;
   });
   hooks.onProgress?.(own.length, own.length);
   return levels;

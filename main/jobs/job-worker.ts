@@ -3,6 +3,7 @@ import { AppError } from '../../app/errors.ts';
 import { solveShare } from '../../app/estimate/estimate.ts';
 import type { EstimateRequest } from '../../app/estimate/estimate-request.ts';
 import { finishEstimate } from '../../app/estimate/finish.ts';
+import type { LineLevel } from '../../app/estimate/line-level.ts';
 import { planEstimate } from '../../app/estimate/plan.ts';
 import { runFieldJob } from '../../app/fields/run-field-job.ts';
 import { chooseLimits } from '../../app/limits/choose.ts';
@@ -22,17 +23,23 @@ function onProgress(done: number, total: number): void {
   if (nowMs - saidAtMs < PROGRESS_INTERVAL_MS && done < total) return;
   saidAtMs = nowMs;
   say({ kind: 'progress', done, total });
+  if (newLevels.length > 0) say({ kind: 'levels', levels: newLevels });
+  newLevels = [];
 }
+
+/** Found since the last word about progress. */
+let newLevels: LineLevel[] = [];
+const onLevel = (level: LineLevel): void => void newLevels.push(level);
 
 const requestOf = ({ request, limits, catalogue }: EstimateJob): EstimateRequest => ({
   ...request,
   limits: chooseLimits(limits, catalogue),
 });
 
-function run(job: Job) {
+async function run(job: Job) {
   switch (job.name) {
     case 'estimate share':
-      return solveShare(planEstimate(job.input.board, requestOf(job.input)), job.input.share, { onProgress });
+      return solveShare(planEstimate(job.input.board, requestOf(job.input)), job.input.share, { onProgress, onLevel });
     case 'estimate finish': {
       const { board, levels } = job.input;
       const request = requestOf(job.input);
@@ -44,6 +51,9 @@ function run(job: Job) {
       return allChecks();
     case 'open files':
       return openFiles(job.input.files, job.input.onto, { onProgress });
+    case 'report':
+      // Most threads print nothing: they need not load what prints.
+      return (await import('../reports/render-report.ts')).renderReport(job.input);
   }
 }
 

@@ -10,6 +10,7 @@ import type { LimitLine } from '../../app/limits/limit-line.ts';
 import type { RunDocument } from '../../app/project/stored-run.ts';
 import type { Check } from '../../app/validate/check.ts';
 import type { NamedFile, OpenedFiles } from '../files/open-files.ts';
+import type { RenderedReport, ReportRequest } from '../reports/report-request.ts';
 
 /** An estimate as plain data: the limit lines are chosen again in the thread, as functions cannot be sent to it. */
 export interface EstimateJob {
@@ -27,6 +28,7 @@ export interface JobTypes {
   field: { input: FieldJob; output: FieldResult };
   validate: { input: null; output: Check[] };
   'open files': { input: { readonly files: readonly NamedFile[]; readonly onto?: RunDocument }; output: OpenedFiles };
+  report: { input: ReportRequest; output: RenderedReport };
 }
 export type JobName = keyof JobTypes;
 
@@ -36,5 +38,7 @@ export type Job = { [N in JobName]: { name: N; input: JobTypes[N]['input'] } }[J
 /** What the worker says. */
 export type JobMessage =
   | { kind: 'progress'; done: number; total: number }
+  /** Of an estimate's share, each time the new ones. */
+  | { kind: 'levels'; levels: readonly LineLevel[] }
   | { kind: 'done'; output: JobTypes[JobName]['output'] }
   | { kind: 'failed'; code: ErrorCode; message: string; path: string | undefined };

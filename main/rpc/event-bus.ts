@@ -1,4 +1,5 @@
 import type { EventName, EventOf } from '../../app/contract/events.ts';
+import type { DeepReadonly } from '../../app/contract/procedures.ts';
 
 export type EventListener = (name: EventName, payload: unknown) => void;
 
@@ -6,7 +7,7 @@ export type EventListener = (name: EventName, payload: unknown) => void;
 export class EventBus {
   readonly #listeners = new Set<EventListener>();
 
-  publish<N extends EventName>(name: N, payload: EventOf<N>): void {
+  publish<N extends EventName>(name: N, payload: DeepReadonly<EventOf<N>>): void {
     for (const listener of this.#listeners) listener(name, payload);
   }
 

@@ -6,7 +6,9 @@ import { dialogHandlers } from './handlers/dialog.ts';
 import { draftHandlers } from './handlers/draft.ts';
 import { estimateHandlers } from './handlers/estimate.ts';
 import { leverHandlers } from './handlers/levers.ts';
+import { measurementHandlers } from './handlers/measurements.ts';
 import { projectHandlers } from './handlers/project.ts';
+import { reportHandlers } from './handlers/reports.ts';
 import { runHandlers } from './handlers/runs.ts';
 
 /** A procedure without a handler does not compile. */
@@ -19,4 +21,6 @@ export const createHandlers = (context: HostContext): Partial<Handlers> => ({
   ...estimateHandlers(context),
   ...leverHandlers(context),
   ...runHandlers(context),
+  ...measurementHandlers(context),
+  ...reportHandlers(context),
 });

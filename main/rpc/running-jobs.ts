@@ -1,5 +1,5 @@
-import type { EventOf } from '../../app/contract/events.ts';
 import { AppError } from '../../app/errors.ts';
+import type { ResultPoint } from '../../app/estimate/result.ts';
 import type { EventBus } from './event-bus.ts';
 
 /** At most ten messages a second. */
@@ -12,7 +12,7 @@ export interface JobControl {
   readonly signal: AbortSignal;
   /** `total` 0: nobody knows. */
   readonly onProgress: (stage: string, done: number, total: number) => void;
-  readonly onPoints: (points: EventOf<'job.points'>['points']) => void;
+  readonly onPoints: (points: readonly ResultPoint[]) => void;
 }
 
 /** The long procedures under way, by the id their caller gave them. */
@@ -87,7 +87,7 @@ export class RunningJobs {
         this.#events.publish('job.progress', { jobId, stage, done, total });
       },
       onPoints: (points) => {
-        if (!signal.aborted && points.length > 0) this.#events.publish('job.points', { jobId, points: [...points] });
+        if (!signal.aborted && points.length > 0) this.#events.publish('job.points', { jobId, points });
       },
     };
   }

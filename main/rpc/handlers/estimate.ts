@@ -1,5 +1,7 @@
 import type { Handlers } from '../../../app/contract/procedures.ts';
 import { fileError } from '../../../app/errors.ts';
+import { judge } from '../../../app/estimate/points.ts';
+import { chooseLimits } from '../../../app/limits/choose.ts';
 import { estimateJob } from '../../jobs/estimate-job.ts';
 import { runEstimate } from '../../jobs/run-estimate.ts';
 import { runJob } from '../../jobs/run-job.ts';
@@ -10,7 +12,7 @@ type EstimateHandlers = Pick<Handlers, 'estimate.run' | 'job.stop' | 'validate.r
 export function estimateHandlers({ version, projects, bases, jobs, events }: HostContext): EstimateHandlers {
   return {
     'estimate.run': ({ projectId, jobId, document, settings, store, note }) =>
-      jobs.run(jobId, async ({ signal, onProgress }) => {
+      jobs.run(jobId, async ({ signal, onProgress, onPoints }) => {
         const project = projects.get(projectId);
         // Known before the long work.
         if (store && project.isReadOnly)
@@ -18,10 +20,13 @@ export function estimateHandlers({ version, projects, bases, jobs, events }: Hos
         const draft = { document: bases.document(project, document), settings };
         const startedAt = new Date().toISOString();
         const startedAtMs = performance.now();
+        const job = estimateJob(draft.document, settings, version);
+        const limits = chooseLimits(job.limits, job.catalogue);
         const result = await runEstimate(
-          estimateJob(draft.document, settings, version),
+          job,
           (done, total) => onProgress('Estimating', done, total),
           signal,
+          (levels) => onPoints(judge(levels, limits).points),
         );
         if (!store || signal.aborted) return { result, run: null };
         const durationS = (performance.now() - startedAtMs) / 1000;

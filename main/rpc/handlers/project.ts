@@ -1,11 +1,19 @@
 import type { Handlers, Output } from '../../../app/contract/procedures.ts';
 import type { HostContext } from '../context.ts';
-import { newProjectFile, projectFile } from '../new-project-file.ts';
+import { newProjectFile, PROJECT_ENDING, projectFile } from '../new-project-file.ts';
+import { projectBytes } from '../project-bytes.ts';
 import { makeSampleProject } from '../sample-project.ts';
 
 type ProjectHandlers = Pick<
   Handlers,
-  'project.recent' | 'project.open' | 'project.open-sample' | 'project.info' | 'project.rename' | 'project.close'
+  | 'project.recent'
+  | 'project.open'
+  | 'project.open-sample'
+  | 'project.info'
+  | 'project.rename'
+  | 'project.save-as'
+  | 'project.export'
+  | 'project.close'
 >;
 
 export function projectHandlers(context: HostContext): ProjectHandlers {
@@ -27,6 +35,16 @@ export function projectHandlers(context: HostContext): ProjectHandlers {
       projects.get(projectId).setName(name);
       events.publish('project.changed', { projectId, what: 'info', clientId: null });
       return {};
+    },
+    'project.save-as': async ({ projectId, file }) => {
+      const target = projectFile(projectsFolder, file);
+      // The system's dialog has asked about a file that is there; without one nobody has.
+      await projects.get(projectId).backupTo(target, context.dialogs === null ? 'refuse' : 'replace');
+      return open(target, false);
+    },
+    'project.export': async ({ projectId }) => {
+      const project = projects.get(projectId);
+      return { name: `${project.info().name}${PROJECT_ENDING}`, bytes: await projectBytes(project) };
     },
     'project.close': async ({ projectId }) => {
       projects.close(projectId);
