@@ -1,8 +1,8 @@
 import { randomBytes } from 'node:crypto';
-import { rmSync } from 'node:fs';
-import { access, constants, type FileHandle, open, realpath, rename, rm, stat, writeFile } from 'node:fs/promises';
+import { closeSync, fsyncSync, openSync, rmSync, writeFileSync } from 'node:fs';
+import { access, constants, realpath, rename, rm, stat } from 'node:fs/promises';
 import { basename, dirname, join } from 'node:path';
-import { fileError } from '../../app/errors.ts';
+import { AppError, fileError } from '../../app/errors.ts';
 import { fileFailure } from './file-failure.ts';
 
 /** Temporary files that exist now, ours and the database's; a host that is stopped removes them. */
@@ -17,25 +17,33 @@ export function removeTemporaryFiles(): void {
  * Writes a file whole or not at all: to a temporary file in the same folder, to the disk, then renamed. A failure leaves
  * the old file as it was. Links are followed; devices and pipes are written directly. Throws `file`.
  */
-export const writeText = (file: string, text: string): Promise<void> => writeWhole(file, text);
+export const writeText = (file: string, text: string): Promise<void> => writePieces(file, (write) => write(text));
 
 /** The same for bytes. */
-export const writeBytes = (file: string, bytes: Uint8Array): Promise<void> => writeWhole(file, bytes);
+export const writeBytes = (file: string, bytes: Uint8Array): Promise<void> =>
+  writePieces(file, (write) => write(bytes));
 
-async function writeWhole(file: string, text: string | Uint8Array): Promise<void> {
+/** The same for what comes in pieces: `make` gives them to `write`, one after the other. */
+export async function writePieces(
+  file: string,
+  make: (write: (piece: string | Uint8Array) => void) => void,
+): Promise<void> {
   await requireWritable(file);
   try {
     const kind = await stat(file).catch(() => undefined);
     if (kind !== undefined && !kind.isFile()) {
-      await writeFile(file, text);
+      fillFile(openSync(file, 'w'), make);
       return;
     }
     const target = kind === undefined ? file : await realpath(file);
     const temporary = join(dirname(target), `.${basename(target).slice(0, 100)}.${randomBytes(6).toString('hex')}.tmp`);
     temporaryFiles.add(temporary);
     try {
-      const handle = await open(temporary, 'wx', kind === undefined ? 0o666 : kind.mode & 0o777);
-      await writeAndClose(handle, text);
+      const descriptor = openSync(temporary, 'wx', kind === undefined ? 0o666 : kind.mode & 0o777);
+      fillFile(descriptor, (write) => {
+        make(write);
+        fsyncSync(descriptor);
+      });
       await rename(temporary, target);
     } catch (error) {
       await rm(temporary, { force: true });
@@ -44,16 +52,15 @@ async function writeWhole(file: string, text: string | Uint8Array): Promise<void
       temporaryFiles.delete(temporary);
     }
   } catch (error) {
-    throw fileFailure(file, 'written', error);
+    throw error instanceof AppError ? error : fileFailure(file, 'written', error);
   }
 }
 
-async function writeAndClose(handle: FileHandle, text: string | Uint8Array): Promise<void> {
+function fillFile(descriptor: number, make: (write: (piece: string | Uint8Array) => void) => void): void {
   try {
-    await handle.writeFile(text);
-    await handle.sync();
+    make((piece) => writeFileSync(descriptor, piece));
   } finally {
-    await handle.close();
+    closeSync(descriptor);
   }
 }
 

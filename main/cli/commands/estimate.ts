@@ -1,13 +1,13 @@
 import { type Command, Option } from 'commander';
+import { AppError } from '../../../app/errors.ts';
 import type { EstimateResult } from '../../../app/estimate/result.ts';
 import { chooseLimits } from '../../../app/limits/choose.ts';
 import type { RunSettings } from '../../../app/project/run-settings.ts';
-import { csvReport } from '../../../app/report/csv-report.ts';
-import { htmlReport } from '../../../app/report/html-report.ts';
-import { labelledLimits } from '../../../app/report/limit-labels.ts';
+import { visibleText } from '../../../app/report/safe-text.ts';
 import { textReport } from '../../../app/report/text-report.ts';
 import { mhzToHz } from '../../../app/units/convert.ts';
-import { jsonText } from '../../files/json-text.ts';
+import { Project } from '../../db/project.ts';
+import type { NewRun } from '../../db/runs-repository.ts';
 import { loadBoard } from '../../files/load-board.ts';
 import { estimateJob } from '../../jobs/estimate-job.ts';
 import { runEstimate } from '../../jobs/run-estimate.ts';
@@ -16,12 +16,20 @@ import { EXIT_DONE, EXIT_SHORT } from '../exit.ts';
 import { addLaterOptions, refuseLaterOptions } from '../later.ts';
 import { readLimitFile, standardAndClass } from '../limit-choice.ts';
 import { numberWithin, wholeNumberWithin } from '../numbers.ts';
-import { checkOutputs, outputWidth, STDOUT, writeOutput } from '../outputs.ts';
+import { checkOutputs, outputWidth, STDOUT } from '../outputs.ts';
 import { progressLine } from '../progress.ts';
+import { withProject } from '../project-file.ts';
+import {
+  addReportOptions,
+  type ReportOptions,
+  type RunOutputs,
+  runOutputFiles,
+  writeRunOutputs,
+} from '../report-outputs.ts';
 import { chooseStructure, STRUCTURE_DEFAULT } from '../structure-choice.ts';
 import { programVersion } from '../version.ts';
 
-export interface EstimateOptions {
+export interface EstimateOptions extends ReportOptions, RunOutputs {
   readonly sources?: string;
   readonly standard?: string;
   readonly class?: string;
@@ -35,13 +43,12 @@ export interface EstimateOptions {
   readonly maxMhz?: number;
   readonly requiredMargin: number;
   readonly top: number;
-  readonly json?: string;
-  readonly csv?: string;
-  readonly html?: string;
+  readonly project?: string;
+  readonly note?: string;
 }
 
 /** What later versions bring; refused by name until then. */
-const LATER = ['--project', '--pdf', '--waveform-at'];
+const LATER = ['--waveform-at'];
 
 export function addEstimate(program: Command): void {
   const command = program
@@ -74,7 +81,10 @@ export function addEstimate(program: Command): void {
     .option('--json <file>', 'write the result as JSON; - for standard output')
     .option('--csv <file>', 'write the points as CSV')
     .option('--html <file>', 'write the report as one HTML file')
-    .addHelpText('after', ESTIMATE_HELP);
+    .option('--junit <file>', 'write the bands as test cases for a build server')
+    .option('--project <file>', 'keep the run in this project file; made when absent')
+    .option('--note <text>', 'note to the kept run');
+  addReportOptions(command).addHelpText('after', ESTIMATE_HELP);
   addLaterOptions(command, LATER);
   command.action(async (file: string, options: EstimateOptions) => {
     refuseLaterOptions(command, LATER);
@@ -83,9 +93,12 @@ export function addEstimate(program: Command): void {
 }
 
 async function estimateFile(file: string, options: EstimateOptions): Promise<number> {
-  const { json, csv, html } = options;
+  const { json, project } = options;
+  if (options.note !== undefined && project === undefined) {
+    throw new AppError('input', '--note must go with --project; received no project', '--note');
+  }
   const inputs = [file, options.sources, options.limitFile];
-  await checkOutputs({ '--json': json, '--csv': csv, '--html': html }, inputs);
+  await checkOutputs({ ...runOutputFiles(options), '--project': project }, inputs);
   const limitFile = await readLimitFile(options.limitFile);
   const { standard, class: limitClass } = standardAndClass(options, limitFile);
   const loaded = await loadBoard(file, options.sources);
@@ -104,15 +117,30 @@ async function estimateFile(file: string, options: EstimateOptions): Promise<num
   };
   const job = estimateJob(loaded.document, settings, programVersion());
   const chosen = chooseLimits(job.limits, job.catalogue);
+  // A project that cannot be opened must not be found out after minutes of work.
+  if (project !== undefined) Project.open(project, { create: true }).close();
   const progress = progressLine('Frequency');
+  const startedAt = new Date();
   const result = await runEstimate(job, progress.show).finally(progress.clear);
-
-  await writeOutput(csv, () => csvReport(result));
-  await writeOutput(html, () => htmlReport(result, loaded.board, labelledLimits(chosen.lines)));
-  await writeOutput(json, () => jsonText(result));
-  if (json !== STDOUT) process.stdout.write(textReport(result, { top: options.top, width: outputWidth() }));
+  const run = { startedAt: startedAt.toISOString(), document: loaded.document, settings, result };
+  const durationS = (Date.now() - startedAt.getTime()) / 1000;
+  const stored =
+    project === undefined ? undefined : await keep(project, { ...run, durationS, note: options.note ?? '' });
+  await writeRunOutputs({ result, board: job.board, limits: chosen, ...(stored && { stored }) }, options, options);
+  if (json !== STDOUT) {
+    process.stdout.write(textReport(result, { top: options.top, width: outputWidth() }));
+    if (stored) process.stdout.write(`\nKept as run #${stored.run} in ${visibleText(project!)}.\n`);
+  }
   return exitCodeOf(result);
 }
+
+const keep = (file: string, run: NewRun & { readonly note: string }) =>
+  withProject(file, 'write', (project) => ({
+    project: project.info().name,
+    run: project.addRun(run),
+    startedAt: run.startedAt,
+    note: run.note,
+  }));
 
 /** By the worst margin: every one must reach the required one. */
 const exitCodeOf = ({ worst, limit }: EstimateResult): number =>

@@ -1,6 +1,7 @@
 import type { Command } from 'commander';
 import type { RunSummary } from '../../../../app/project/stored-run.ts';
 import { fixed, trimmed } from '../../../../app/report/format.ts';
+import { visibleText } from '../../../../app/report/safe-text.ts';
 import { wrapText } from '../../../../app/report/wrap.ts';
 import { hzToMhz } from '../../../../app/units/convert.ts';
 import { jsonText } from '../../../files/json-text.ts';
@@ -51,12 +52,15 @@ const listed = ({ layoutSha256, sourcesSha256, ...summary }: RunSummary) => ({
 function runLines(name: string, runs: readonly RunSummary[], width: number): string[] {
   if (runs.length === 0) return ['No runs yet. Keep one with: quietboard estimate BOARD --project FILE'];
   const notes = runs.filter(({ note }) => note !== '');
+  const boards = new Set(runs.map(({ board }) => board));
+  const columns = COLUMNS.filter(({ head }) => head !== 'board' || boards.size > 1);
+  const counted = `${runs.length} ${runs.length === 1 ? 'run' : 'runs'}${boards.size === 1 ? ` of ${[...boards][0]}` : ''}`;
   return [
-    ...wrapText(`${name}: ${runs.length} ${runs.length === 1 ? 'run' : 'runs'}`, width),
+    ...wrapText(visibleText(`${name}: ${counted}`), width),
     '',
-    ...table(runs, COLUMNS, width),
+    ...table(runs, columns, width),
     ...(notes.length === 0 ? [] : ['']),
-    ...notes.flatMap(({ run, note }) => wrapText(`#${run}: ${note}`, width, '', '    ')),
+    ...notes.flatMap(({ run, note }) => wrapText(visibleText(`#${run}: ${note}`), width, '', '    ')),
   ];
 }
 
