@@ -63,10 +63,9 @@ export class StructureResponder {
     this.#sweep =
       served.length > DIRECT_LINES
         ? adaptiveSweep((hz) => this.#solved(hz), {
-            fromHz: served[0]!,
-            toHz: served.at(-1)!,
+            frequenciesHz: served,
             tolerance: TOLERANCE,
-            mostSolutions: Math.min(MOST_SOLUTIONS, served.length),
+            mostSolutions: MOST_SOLUTIONS,
           })
         : null;
   }

@@ -11,21 +11,26 @@ export interface RationalFit {
   readonly weights: Float64Array;
 }
 
+/** Support points at most, as a share of the samples: the others must be enough to find the weights. */
+const MOST_SUPPORT = 0.75;
+
 /**
  * AAA fit with one set of weights for all components ("set-valued AAA").
  *
- * `xs`: sample places; `values[i]`: `width` complex numbers (re, im) at place i, scaled so that 1 is large. Support points
- * are added where the error is largest until every sample is met within `tolerance` (absolute), or half the samples are
- * support points.
+ * `xs`: sample places; `values[i]`: `width` complex numbers (re, im) at place i. Support points are added where the error is
+ * largest until every sample is met within `tolerance`, relative to its own largest component, or as many samples are
+ * support points as w components allow: each other sample gives w equations for the weights.
  * Source: Y. Nakatsukasa, O. Sète, L. N. Trefethen, The AAA algorithm for rational approximation, SIAM J. Sci. Comput.
  * 40(3), 2018; for vectors: P. Lietaert et al., IMA J. Numer. Anal. 42(2), 2022. The least singular vector of the Loewner
  * matrix comes from inverse iteration on its Gram matrix, good to about 1e-7 relative.
  */
 export function fitRational(xs: readonly number[], values: readonly Float64Array[], tolerance: number): RationalFit {
-  const most = Math.max(1, Math.floor(xs.length / 2));
+  const width = values[0]!.length / 2;
+  const most = Math.max(1, Math.floor(xs.length * Math.min(MOST_SUPPORT, width / (width + 1))));
   const support: number[] = [];
   let weights: Float64Array = new Float64Array(0);
-  const error = xs.map((_, i) => largest(values[i]!));
+  const sizes = values.map((value) => largest(value) || 1);
+  const error = values.map((value, i) => largest(value) / sizes[i]!);
   while (support.length < most) {
     let next = -1;
     for (let i = 0; i < xs.length; i++) {
@@ -33,10 +38,11 @@ export function fitRational(xs: readonly number[], values: readonly Float64Array
     }
     if (next < 0) break;
     support.push(next);
-    weights = leastSingularVector(xs, values, support);
+    weights = leastSingularVector(xs, values, sizes, support);
     let worst = 0;
     for (let i = 0; i < xs.length; i++) {
-      error[i] = support.includes(i) ? 0 : distance(evaluateAt({ support, weights }, xs, values, xs[i]!), values[i]!);
+      const isMet = support.includes(i);
+      error[i] = isMet ? 0 : distance(evaluateAt({ support, weights }, xs, values, xs[i]!), values[i]!) / sizes[i]!;
       worst = Math.max(worst, error[i]!);
     }
     if (worst <= tolerance) break;
@@ -109,6 +115,7 @@ export function distance(a: Float64Array, b: Float64Array): number {
 function leastSingularVector(
   xs: readonly number[],
   values: readonly Float64Array[],
+  sizes: readonly number[],
   support: readonly number[],
 ): Float64Array {
   const m = support.length;
@@ -119,22 +126,33 @@ function leastSingularVector(
     if (support.includes(i)) continue;
     for (let d = 0; d < width; d += 2) {
       for (let j = 0; j < m; j++) {
-        const scale = 1 / (xs[i]! - xs[support[j]!]!);
+        const scale = 1 / ((xs[i]! - xs[support[j]!]!) * sizes[i]!);
         row[2 * j] = (values[i]![d]! - values[support[j]!]![d]!) * scale;
         row[2 * j + 1] = (values[i]![d + 1]! - values[support[j]!]![d + 1]!) * scale;
       }
       addOuter(gram, row, m);
     }
   }
+  mirror(gram, m);
   return smallestEigenvector(gram, m);
 }
 
-/** gram += conj(row)ᵀ row. */
+/** gram += conj(row)ᵀ row, on and above the diagonal. */
 function addOuter(gram: Float64Array, row: Float64Array, m: number): void {
   for (let a = 0; a < m; a++) {
-    for (let b = 0; b < m; b++) {
+    for (let b = a; b < m; b++) {
       gram[2 * (a * m + b)]! += row[2 * a]! * row[2 * b]! + row[2 * a + 1]! * row[2 * b + 1]!;
       gram[2 * (a * m + b) + 1]! += row[2 * a]! * row[2 * b + 1]! - row[2 * a + 1]! * row[2 * b]!;
+    }
+  }
+}
+
+/** Fills a Hermitian matrix below the diagonal from what is above. */
+function mirror(gram: Float64Array, m: number): void {
+  for (let a = 0; a < m; a++) {
+    for (let b = 0; b < a; b++) {
+      gram[2 * (a * m + b)] = gram[2 * (b * m + a)]!;
+      gram[2 * (a * m + b) + 1] = -gram[2 * (b * m + a) + 1]!;
     }
   }
 }
