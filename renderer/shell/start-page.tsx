@@ -1,5 +1,4 @@
 import type { ReactElement } from 'react';
-import { CAUTIONS_SHORT } from '../../app/report/cautions.ts';
 import { runCommand } from '../commands/run-command.ts';
 import { Button } from '../components/button.tsx';
 import { dateTimeText } from '../i18n/format.ts';
@@ -41,7 +40,6 @@ export function StartPage(): ReactElement {
         </section>
         <RecentProjects />
       </div>
-      <p className={css.caution}>{CAUTIONS_SHORT}</p>
     </div>
   );
 }

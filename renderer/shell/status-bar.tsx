@@ -5,9 +5,9 @@ import { limitName, standingOf, VERDICT_STANDING, verdictText } from '../../app/
 import { showOverlay } from '../commands/overlays.ts';
 import { Button } from '../components/button.tsx';
 import { StandingBadge } from '../components/marks/standing-badge.tsx';
-import { inLocale, numberText } from '../i18n/format.ts';
+import { frequencyText, inLocale, levelText, numberText } from '../i18n/format.ts';
 import { type DraftState, useApp } from '../state/app-store.ts';
-import { useShown } from '../state/hooks.ts';
+import { useSelectedPoint, useShown } from '../state/hooks.ts';
 import type { Shown } from '../state/result.ts';
 import css from './status-bar.module.css';
 import { CaveatList, ProblemList } from './status-lists.tsx';
@@ -20,6 +20,7 @@ export function StatusBar(): ReactElement {
       {hasDocument && (
         <>
           <VerdictText />
+          <ChosenLine />
           <ProblemList />
           <CaveatList />
         </>
@@ -65,6 +66,19 @@ function Counts({ shown, limit }: { readonly shown: Shown; readonly limit: Estim
       {over > 0 && <StandingBadge standing="over">{numberText(over)} over</StandingBadge>}
       {short > 0 && <StandingBadge standing="short">{numberText(short)} short</StandingBadge>}
     </>
+  );
+}
+
+/** The chosen line in words; said aloud as the keys step through the lines. */
+function ChosenLine(): ReactElement {
+  const point = useSelectedPoint();
+  if (point === null) return <span role="status" />;
+  const { frequencyHz, levelDbuvPerM, marginDb } = point;
+  const margin = marginDb < 0 ? `${levelText(-marginDb)} dB over` : `${levelText(marginDb)} dB under`;
+  return (
+    <span className={css.line} role="status">
+      {frequencyText(frequencyHz)}: {levelText(levelDbuvPerM)} dBµV/m, {margin}
+    </span>
   );
 }
 

@@ -4,7 +4,7 @@ import { EMPTY_PROJECT, getState, type Project, setState } from './app-store.ts'
 import { needBase, showWork } from './document.ts';
 import { forgetDraft, saveDraft, takeSaved } from './draft.ts';
 import { runJob } from './jobs.ts';
-import { loadRemembered } from './remembered.ts';
+import { leaveRemembered, loadRemembered } from './remembered.ts';
 import { loadRun } from './result.ts';
 import { refreshMeasurements, refreshRuns } from './runs.ts';
 import { clearSelection } from './selection.ts';
@@ -72,6 +72,7 @@ async function leaveProject(): Promise<void> {
   const { project } = getState();
   clearSelection();
   forgetDraft();
+  await leaveRemembered();
   if (project !== null) await call('project.close', { projectId: project.projectId });
 }
 

@@ -8,8 +8,8 @@ import { getState, setState, useApp } from './app-store.ts';
 export type Scope = 'project' | 'program';
 
 const SAVE_AFTER_MS = 400;
-const PROJECT_KEY = 'views';
-const PROGRAM_KEY = 'views';
+/** Under which the host keeps each scope's values, as one object. */
+const KEY = 'views';
 const timers = new Map<Scope, ReturnType<typeof setTimeout>>();
 
 const fullKey = (scope: Scope, key: string): string => `${scope}:${key}`;
@@ -18,15 +18,27 @@ const fullKey = (scope: Scope, key: string): string => `${scope}:${key}`;
 export async function loadRemembered(scope: Scope): Promise<void> {
   const projectId = scope === 'project' ? (getState().project?.projectId ?? null) : null;
   if (scope === 'project' && projectId === null) return;
-  const key = scope === 'project' ? PROJECT_KEY : PROGRAM_KEY;
-  const { value } = await call('settings.get', { projectId, key });
+  const { value } = await call('settings.get', { projectId, key: KEY });
   const entries = typeof value === 'object' && value !== null ? Object.entries(value) : [];
-  setState(({ remembered }) => {
-    const others = [...remembered].filter(([name]) => !name.startsWith(fullKey(scope, '')));
-    return {
-      remembered: new Map([...others, ...entries.map(([name, item]) => [fullKey(scope, name), item] as const)]),
-    };
-  });
+  setState(({ remembered }) => ({
+    remembered: new Map([
+      ...without(scope, remembered),
+      ...entries.map(([name, item]) => [fullKey(scope, name), item] as const),
+    ]),
+  }));
+}
+
+const without = (scope: Scope, remembered: ReadonlyMap<string, unknown>): [string, unknown][] =>
+  [...remembered].filter(([name]) => !name.startsWith(fullKey(scope, '')));
+
+/** Saves what still waits for the open project, and forgets it: another one is about to be opened. */
+export async function leaveRemembered(): Promise<void> {
+  const timer = timers.get('project');
+  if (timer !== undefined) {
+    clearTimeout(timer);
+    await save('project');
+  }
+  setState(({ remembered }) => ({ remembered: new Map(without('project', remembered)) }));
 }
 
 export function remember(scope: Scope, key: string, value: unknown): void {
@@ -39,6 +51,7 @@ export function remember(scope: Scope, key: string, value: unknown): void {
 }
 
 async function save(scope: Scope): Promise<void> {
+  timers.delete(scope);
   const { project, remembered } = getState();
   const projectId = scope === 'project' ? (project?.projectId ?? null) : null;
   if (scope === 'project' && projectId === null) return;
@@ -46,9 +59,7 @@ async function save(scope: Scope): Promise<void> {
   const entries = [...remembered].filter(([name]) => name.startsWith(prefix));
   const value = Object.fromEntries(entries.map(([name, item]) => [name.slice(prefix.length), item]));
   // What a view remembers is a convenience: a host that cannot keep it must not disturb the work.
-  await call('settings.put', { projectId, key: scope === 'project' ? PROJECT_KEY : PROGRAM_KEY, value }).catch(
-    () => {},
-  );
+  await call('settings.put', { projectId, key: KEY, value }).catch(() => {});
 }
 
 /**
