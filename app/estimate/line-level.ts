@@ -78,7 +78,7 @@ export function lineLevel(scene: Scene, lines: FrequencyLines, responder: Struct
   };
 }
 
-interface AntennaPlace {
+export interface AntennaPlace {
   readonly component: Component;
   readonly angleRad: number;
   readonly heightM: number;

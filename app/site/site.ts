@@ -86,3 +86,9 @@ export function boundaryRadiusM(board: Board, frame: SiteFrame, cables: readonly
 export function scanRadiusM(request: SiteRequest, boundaryM: number): number {
   return request.measuredFrom === 'boundary' ? request.distanceM + boundaryM : request.distanceM;
 }
+
+/** Site axes → board axes: the inverse of `toSitePoint`. */
+export function toBoardPoint(frame: SiteFrame, [xM, yM, zM]: Point3M): Point3M {
+  if (frame.orientation === 'flat') return [xM + frame.centreXM, yM + frame.centreYM, zM - TABLE_HEIGHT_M];
+  return [xM + frame.centreXM, zM + frame.lowestYM - TABLE_HEIGHT_M, frame.centreZM - yM];
+}
