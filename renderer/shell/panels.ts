@@ -1,4 +1,5 @@
+import { ledgerPanel } from '../ledger/index.ts';
 import type { Panel } from './panel.ts';
 
 /** All parts of the window, in the order of their tabs. A part adds its own line. */
-export const PANELS: readonly Panel[] = [];
+export const PANELS: readonly Panel[] = [ledgerPanel];
