@@ -4,7 +4,7 @@ import type { Reply } from '../../app/contract/transport.ts';
 import { AppError } from '../../app/errors.ts';
 import { refusal } from '../rpc/dispatch.ts';
 import type { Host } from '../rpc/host.ts';
-import { sendReply } from './answer.ts';
+import { sendRefusal, sendReply } from './answer.ts';
 import { readBody, TooLarge } from './read-body.ts';
 
 const MAX_JSON_BYTES = 64e6;
@@ -12,7 +12,7 @@ const MAX_JSON_BYTES = 64e6;
 const MAX_FRAMED_BYTES = 260e6;
 /** An answer that takes long is begun with white space, so that nobody on the way takes the connection for dead. */
 const KEEP_ALIVE_MS = 15_000;
-/** How long the rest of a refused body is read and thrown away, so that the caller gets to see the answer. */
+/** How long the rest of a refused body is read and thrown away, so that the caller gets to see the answer; then it is cut off. */
 const LINGER_MS = 2_000;
 
 /** `POST /rpc/<name>`: the caller is known already. */
@@ -80,9 +80,10 @@ function framedReply(reply: Reply): Uint8Array | undefined {
 
 /** Turns a request away whose body was not read, or not to its end. */
 function refuse(request: IncomingMessage, response: ServerResponse, status: number, message: string): void {
-  response.setHeader('Connection', 'close');
-  sendReply(response, status, { ok: false, error: { code: 'input', message } });
+  sendRefusal(response, status, message);
+  if (request.complete) return;
   request.resume();
   const linger = setTimeout(() => request.destroy(), LINGER_MS);
+  request.on('end', () => clearTimeout(linger));
   request.on('close', () => clearTimeout(linger));
 }
