@@ -11,16 +11,12 @@ export type Dispatch = (name: string, input: unknown) => Promise<Reply>;
  * rejects. `logFailure` keeps an unexpected failure and answers with the number it is found under: its words are for us
  * and may hold anything, so the caller gets only the number.
  */
-export function createDispatch(
-  handlers: Partial<Handlers>,
-  logFailure: (name: string, error: unknown) => number,
-): Dispatch {
+export function createDispatch(handlers: Handlers, logFailure: (name: string, error: unknown) => number): Dispatch {
   return async (name, input) => {
     try {
       if (!isProcedure(name)) throw inputError('procedure', 'one of the contract', name);
       const received = parseWith(procedures[name].input, input);
-      const handler = handlers[name] as ((input: unknown) => Promise<unknown>) | undefined;
-      if (handler === undefined) throw inputError('procedure', 'one of this host', name);
+      const handler = handlers[name] as (input: unknown) => Promise<unknown>;
       return { ok: true, value: checkedOutput(name, await handler(received)) };
     } catch (error) {
       return refusal(error, (unexpected) => logFailure(isProcedure(name) ? name : 'unknown procedure', unexpected));

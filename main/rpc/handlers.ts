@@ -12,7 +12,7 @@ import { reportHandlers } from './handlers/reports.ts';
 import { runHandlers } from './handlers/runs.ts';
 
 /** A procedure without a handler does not compile. */
-export const createHandlers = (context: HostContext): Partial<Handlers> => ({
+export const createHandlers = (context: HostContext): Handlers => ({
   ...appHandlers(context),
   ...projectHandlers(context),
   ...dialogHandlers(context),

@@ -7,7 +7,7 @@ import { runEstimate } from '../../jobs/run-estimate.ts';
 import { runJob } from '../../jobs/run-job.ts';
 import type { HostContext } from '../context.ts';
 
-type EstimateHandlers = Pick<Handlers, 'estimate.run' | 'job.stop' | 'validate.run'>;
+type EstimateHandlers = Pick<Handlers, 'estimate.run' | 'estimate.line-detail' | 'job.stop' | 'validate.run'>;
 
 export function estimateHandlers({ version, projects, bases, jobs, events }: HostContext): EstimateHandlers {
   return {
@@ -22,12 +22,11 @@ export function estimateHandlers({ version, projects, bases, jobs, events }: Hos
         const startedAtMs = performance.now();
         const job = estimateJob(draft.document, settings, version);
         const limits = chooseLimits(job.limits, job.catalogue);
-        const result = await runEstimate(
-          job,
-          (done, total) => onProgress('Estimating', done, total),
+        const result = await runEstimate(job, {
+          onProgress: (done, total) => onProgress('Estimating', done, total),
+          onLevels: (levels) => onPoints(judge(levels, limits).points),
           signal,
-          (levels) => onPoints(judge(levels, limits).points),
-        );
+        });
         if (!store || signal.aborted) return { result, run: null };
         const durationS = (performance.now() - startedAtMs) / 1000;
         const run = project.addRun({ ...draft, startedAt, durationS, result, note });
@@ -35,6 +34,12 @@ export function estimateHandlers({ version, projects, bases, jobs, events }: Hos
           events.publish('project.changed', { projectId, what, clientId: null });
         }
         return { result, run };
+      }),
+    'estimate.line-detail': ({ projectId, jobId, document, settings, frequencyHz }) =>
+      jobs.run(jobId, async ({ signal, onProgress }) => {
+        const job = estimateJob(bases.document(projects.get(projectId), document), settings, version);
+        const told = (done: number, total: number) => onProgress('Looking at the line', done, total);
+        return { detail: await runJob('line detail', { ...job, frequencyHz }, told, signal) };
       }),
     'job.stop': async ({ jobId }) => ({ wasRunning: jobs.stop(jobId) }),
     'validate.run': ({ jobId }) =>
