@@ -179,8 +179,10 @@ export class KeptLine {
     const bySource = this.#sources.map(({ radiators, structureCurrentsA }) => {
       const own = perAmpere(radiators[0]!.elements);
       return [
-        pairs(radiators.map(({ currentsA }) => dot(own, currentsA))),
-        ...parts.map(({ edges }, p) => pairs(structureCurrentsA.map((all) => dotAt(observers[p]!, all, edges)))),
+        Float64Array.from(radiators.flatMap(({ currentsA }) => dot(own, currentsA))),
+        ...parts.map(({ edges }, p) =>
+          Float64Array.from(structureCurrentsA.flatMap((all) => dotAt(observers[p]!, all, edges))),
+        ),
       ];
     });
     return { component, angleRad, heightM, bySource };
@@ -272,8 +274,6 @@ function dotAt(a: Float64Array, b: Float64Array, places: readonly number[]): [re
   }
   return [re, im];
 }
-
-const pairs = (values: readonly (readonly [number, number])[]): Float64Array => Float64Array.from(values.flat());
 
 /** Phasors add within a domain, powers between domains, V/m. */
 function totalOf(fields: readonly PathField[]): number {

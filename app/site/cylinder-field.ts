@@ -80,7 +80,7 @@ export function fieldOnCylinder(
       for (const heightM of plan.heightsM) {
         const zM = part === 0 ? heightM : -heightM;
         const r0M = centreDistanceM(plan, zM);
-        const place = { kPerM: plan.kPerM, radiusM: plan.radiusM, angleRad, zM, referenceM: r0M, factor: r0M, terms };
+        const place = { ...antennaAt(plan, angleRad, zM, terms), referenceM: r0M, factor: r0M };
         for (const group of shared) addSample(group, place, out, at);
         at += SAMPLE_STRIDE;
       }
@@ -181,13 +181,32 @@ const [C2, C4, C6, C8, C10, C12] = [-1 / 2, 1 / 24, -1 / 720, 1 / 40320, -1 / 36
 export interface SamplePlace {
   readonly kPerM: number;
   readonly radiusM: number;
-  readonly angleRad: number;
+  /** Of the angle about the turntable axis. */
+  readonly cosAngle: number;
+  readonly sinAngle: number;
   readonly zM: number;
   /** The field is multiplied by `factor`·e^(+jk·referenceM): R0 and R0 take e^(−jkR0)/R0 out, 0 and 1 leave it. */
   readonly referenceM: number;
   readonly factor: number;
   readonly terms: FieldTerms;
 }
+
+/** The place at an angle and height (of the mirrored part: negative); the field as it is. */
+export const antennaAt = (
+  { kPerM, radiusM }: Pick<CylinderPlan, 'kPerM' | 'radiusM'>,
+  angleRad: number,
+  zM: number,
+  terms: FieldTerms,
+): SamplePlace => ({
+  kPerM,
+  radiusM,
+  cosAngle: Math.cos(angleRad),
+  sinAngle: Math.sin(angleRad),
+  zM,
+  referenceM: 0,
+  factor: 1,
+  terms,
+});
 
 /**
  * Adds the φ and z components (re, im each) of sources at one place to every sharing domain's array at `at`; all terms of
@@ -199,9 +218,7 @@ export function addSample(
   out: readonly Float64Array[],
   at: number,
 ): void {
-  const { kPerM, radiusM, angleRad, zM, referenceM } = place;
-  const cosA = Math.cos(angleRad);
-  const sinA = Math.sin(angleRad);
+  const { kPerM, radiusM, cosAngle: cosA, sinAngle: sinA, zM, referenceM } = place;
   const ox = radiusM * cosA;
   const oy = radiusM * sinA;
   const strength = (ETA0_OHM / (4 * Math.PI)) * place.factor;

@@ -1,6 +1,13 @@
 import type { FieldTerms } from '../fields/element-field.ts';
 import type { ElementSet, Radiator } from '../fields/element-set.ts';
-import { addSample, cylinderPlan, fieldOnCylinder, groupByElements, SAMPLE_STRIDE } from './cylinder-field.ts';
+import {
+  addSample,
+  antennaAt,
+  cylinderPlan,
+  fieldOnCylinder,
+  groupByElements,
+  SAMPLE_STRIDE,
+} from './cylinder-field.ts';
 import { findMaximum, type ScanMaximum } from './find-maximum.ts';
 import type { Box } from './moment-grid.ts';
 import { type Component, PowerMap } from './power-map.ts';
@@ -55,7 +62,7 @@ export function fieldsAtAntenna(
   const totals = domains.map((): [number, number] => [0, 0]);
   for (const sign of site === 'ground-plane' ? [1, -1] : [1]) {
     const samples = domains.map(() => new Float64Array(SAMPLE_STRIDE));
-    const place = { kPerM, radiusM: scanRadiusM, angleRad, zM: sign * heightM, referenceM: 0, factor: 1, terms };
+    const place = antennaAt({ kPerM, radiusM: scanRadiusM }, angleRad, sign * heightM, terms);
     for (const group of groups) addSample(group, place, samples, 0);
     const kept = component === 'horizontal' ? sign : 1;
     for (const [d, sample] of samples.entries()) {
@@ -85,18 +92,23 @@ export function unitFieldsAtAntenna(
 ): Float64Array {
   const out = new Float64Array(2 * elements.count);
   const offset = component === 'horizontal' ? 0 : 2;
-  const sample = [new Float64Array(SAMPLE_STRIDE)];
+  const sample = new Float64Array(SAMPLE_STRIDE);
+  const samples = [sample];
   const moments = new Float64Array(6);
+  const positionsM = new Float64Array(3);
+  const group = { positionsM, shares: [{ domain: 0, moments }] };
   for (const sign of site === 'ground-plane' ? [1, -1] : [1]) {
-    const place = { kPerM, radiusM: scanRadiusM, angleRad, zM: sign * heightM, referenceM: 0, factor: 1, terms };
+    const place = antennaAt({ kPerM, radiusM: scanRadiusM }, angleRad, sign * heightM, terms);
     const kept = component === 'horizontal' ? sign : 1;
     for (let e = 0; e < elements.count; e++) {
-      for (let axis = 0; axis < 3; axis++) moments[2 * axis] = elements.vectorsM[3 * e + axis]!;
-      sample[0]!.fill(0);
-      const positionsM = elements.positionsM.subarray(3 * e, 3 * e + 3);
-      addSample({ positionsM, shares: [{ domain: 0, moments }] }, place, sample, 0);
-      out[2 * e]! += kept * sample[0]![offset]!;
-      out[2 * e + 1]! += kept * sample[0]![offset + 1]!;
+      for (let axis = 0; axis < 3; axis++) {
+        moments[2 * axis] = elements.vectorsM[3 * e + axis]!;
+        positionsM[axis] = elements.positionsM[3 * e + axis]!;
+      }
+      sample.fill(0);
+      addSample(group, place, samples, 0);
+      out[2 * e]! += kept * sample[offset]!;
+      out[2 * e + 1]! += kept * sample[offset + 1]!;
     }
   }
   return out;
