@@ -53,6 +53,8 @@ function unusedTimer(isBusy: () => boolean): { onWindowCount: (count: number) =>
   let timer: NodeJS.Timeout | undefined;
   const wait = () => {
     timer = setTimeout(() => (isBusy() ? wait() : unused.abort()), UNUSED_MS);
+    // The server keeps the program running; this must not, once the server has ended.
+    timer.unref();
   };
   const onWindowCount = (count: number) => {
     clearTimeout(timer);

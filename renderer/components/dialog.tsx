@@ -30,7 +30,10 @@ export function Dialog({ title, isOpen, onClose, children, actions }: DialogProp
               <Icon name="close" />
             </IconButton>
           </header>
-          <div className={css.body}>{children}</div>
+          {/* biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reached by keys, even where it holds only text. */}
+          <section className={css.body} tabIndex={0} aria-label={title}>
+            {children}
+          </section>
           {actions !== undefined && <footer className={css.actions}>{actions}</footer>}
         </AriaDialog>
       </Modal>

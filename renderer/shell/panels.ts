@@ -1,5 +1,6 @@
 import { ledgerPanel } from '../ledger/index.ts';
+import { reportPanel } from '../report/index.ts';
 import type { Panel } from './panel.ts';
 
 /** All parts of the window, in the order of their tabs. A part adds its own line. */
-export const PANELS: readonly Panel[] = [ledgerPanel];
+export const PANELS: readonly Panel[] = [ledgerPanel, reportPanel];

@@ -1,4 +1,4 @@
-import { useEffect } from 'react';
+import { useLayoutEffect } from 'react';
 import { on } from '../api/api.ts';
 import type { Command } from '../commands/command.ts';
 import { CORE_COMMANDS } from '../commands/core-commands.ts';
@@ -32,7 +32,8 @@ export const commandNamed = (name: string): Command => COMMANDS.find((command) =
 
 /** Keys and native menus run commands. */
 export function useCommands(): void {
-  useEffect(() => {
+  // Before the first picture: the keys work as soon as anything is seen.
+  useLayoutEffect(() => {
     const onKeyDown = (event: KeyboardEvent) => {
       const command = commandOf(COMMANDS, event);
       if (command === undefined) return;

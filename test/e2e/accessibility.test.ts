@@ -1,0 +1,62 @@
+import type { Page } from 'playwright-core';
+import { afterAll, beforeAll, expect, it } from 'vitest';
+import { violations } from './axe.ts';
+import { describeInBrowser, picture, ServedWindow } from './served-window.ts';
+
+/** Oracle: WCAG 2.2 A and AA as axe-core checks them (contrast among them), and reflow at 200 %. */
+
+describeInBrowser('accessibility of the window', () => {
+  let served: ServedWindow;
+
+  beforeAll(async () => {
+    served = await ServedWindow.start();
+  });
+
+  afterAll(async () => {
+    await served.close();
+  });
+
+  const overlays: readonly (readonly [name: string, open: (page: Page) => Promise<void>])[] = [
+    ['menu', async (page) => page.getByRole('button', { name: 'Menu' }).click()],
+    ['palette', async (page) => page.keyboard.press('Control+k')],
+    ['shortcuts', async (page) => page.keyboard.press('F1')],
+    ['cautions', async (page) => page.getByRole('button', { name: /^An estimate, not a measurement/ }).click()],
+  ];
+
+  it.each(['light', 'dark'] as const)(
+    'has no violation on the start page, in the work and in what lies over it: %s',
+    async (colorScheme) => {
+      const { page } = await served.open({ colorScheme });
+      expect(await violations(page)).toEqual([]);
+      await page.getByRole('button', { name: 'Open the sample project' }).click();
+      await page.getByRole('button', { name: /^Estimate/ }).waitFor();
+      expect(await violations(page)).toEqual([]);
+      await page.screenshot({ path: picture(`work-${colorScheme}`) });
+      for (const [name, open] of overlays) {
+        await open(page);
+        await page
+          .getByRole(name === 'menu' ? 'menu' : 'dialog')
+          .first()
+          .waitFor();
+        expect(await violations(page), name).toEqual([]);
+        await page.screenshot({ path: picture(`${name}-${colorScheme}`) });
+        await page.keyboard.press('Escape');
+      }
+    },
+  );
+
+  it('needs no sideways scrolling at 200 % on a screen of 1280 × 720', async () => {
+    // What the browser's zoom does: half as many CSS pixels, twice the density.
+    const { page } = await served.open({ viewport: { width: 640, height: 360 }, deviceScaleFactor: 2 });
+    const overflow = () => page.evaluate(() => document.documentElement.scrollWidth - innerWidth);
+    expect(await overflow()).toBeLessThanOrEqual(0);
+    await page.screenshot({ path: picture('zoom-start') });
+    await page.getByRole('button', { name: 'Open the sample project' }).click();
+    const estimate = page.getByRole('button', { name: /^Estimate/ });
+    await estimate.waitFor();
+    expect(await overflow()).toBeLessThanOrEqual(0);
+    const box = (await estimate.boundingBox())!;
+    expect(box.x + box.width).toBeLessThanOrEqual(640);
+    await page.screenshot({ path: picture('zoom-work') });
+  });
+});
