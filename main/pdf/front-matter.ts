@@ -51,6 +51,10 @@ export const verdictBox = (headline: Text, summary: Text): Content => ({
   margin: [0, 6, 0, 0],
 });
 
+/** What keeps the verdict from being taken at its word. */
+export const warningLine = (text: Text): Content =>
+  textContent(text, { fontSize: TEXT_PT, margin: [0, 4, 0, 0] }, TEXT_PT);
+
 const ROLES = ['Prepared', 'Reviewed', 'Approved'];
 const LINE_HEIGHT_PT = 30;
 

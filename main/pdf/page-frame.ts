@@ -21,6 +21,12 @@ export interface DocumentFrame {
   readonly footLeft: string;
 }
 
+export const FOOT_TEXT = 'Calculated estimate of radiated emission, not a measurement';
+
+/** The parts that say something, apart from one another. */
+export const headText = (parts: readonly string[], separator = '  ·  '): string =>
+  parts.filter((part) => part !== '').join(separator);
+
 const HEAD_TOP_PT = 22;
 const FOOT_TOP_PT = 12;
 

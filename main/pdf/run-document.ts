@@ -23,8 +23,8 @@ import { verdictHeadline, verdictSummary } from '../../app/report/sections/verdi
 import type { ValidationSummary } from '../../app/report/validation-summary.ts';
 import { signOff, titleBlock, verdictBox } from './front-matter.ts';
 import { roomOn } from './page.ts';
-import { framedDocument } from './page-frame.ts';
-import { onNewPage, sectionContent, titledContent } from './section-content.ts';
+import { type DocumentFrame, FOOT_TEXT, framedDocument, headText } from './page-frame.ts';
+import { sectionContent, titledContent } from './section-content.ts';
 
 export interface RunReport {
   readonly result: EstimateResult;
@@ -58,43 +58,41 @@ export function runDocument(report: RunReport): TDocumentDefinitions {
       stripSection(result, limitLines),
       suretySection(result),
     ]),
-    ...onNewPage(
-      contents([
-        spectrumSection(result, limitLines),
-        radiationSection(result, limitLines),
-        pointsSection(result, MOST_POINTS),
-        sharesSection(result),
-        emittersSection(board, result),
-        boardSection(board, result),
-        findingsSection(result, MOST_FINDINGS),
-        currentsSection(result, board),
-        setupSection(board, result),
-        limitSection(result, limitLines),
-        sourcesSection(board, MOST_SOURCES),
-        modelSection(result, MOST_CAVEATS),
-        notesSection(result, MOST_NOTES),
-        validationSection(report.validation),
-        cautionsSection(),
-      ]),
-    ),
+    ...contents([
+      spectrumSection(result, limitLines),
+      radiationSection(result, limitLines),
+      pointsSection(result, MOST_POINTS),
+      sharesSection(result),
+      emittersSection(board, result),
+      findingsSection(result, MOST_FINDINGS),
+      boardSection(board, result),
+      limitSection(result, limitLines),
+      setupSection(board, result),
+      currentsSection(result, board),
+      sourcesSection(board, MOST_SOURCES),
+      modelSection(result, MOST_CAVEATS),
+      notesSection(result, MOST_NOTES),
+      validationSection(report.validation),
+      cautionsSection(),
+    ]),
     titledContent('Sign-off', signOff(title.author), room),
   ]);
 }
 
-function frameOf({ result, title, paper }: RunReport) {
+function frameOf({ result, title, paper }: RunReport): DocumentFrame {
   const { name, revision, sha256 } = result.board;
   const board = `${shortName(name, 48)}${revision === '' ? '' : `, revision ${shortName(revision, 20)}`}`;
   const run = title.runNumber === null ? '' : `run ${title.runNumber}`;
   return {
     title: `${REPORT_TITLE}: ${board}`,
     author: title.author,
-    subject: [title.project, board, run].filter((part) => part !== '').join('; '),
+    subject: headText([title.project, board, run], '; '),
     keywords: `sha256 ${sha256.slice(0, 64)}`,
     dateText: title.dateText,
     programVersion: result.program.version.slice(0, 20),
     paper,
-    headLeft: [shortName(title.project, 32), board].filter((part) => part !== '').join('  ·  '),
-    headRight: [run, shortName(title.dateText, 24), sha256.slice(0, 12)].filter((part) => part !== '').join('  ·  '),
-    footLeft: 'Calculated estimate of radiated emission, not a measurement',
+    headLeft: headText([shortName(title.project, 32), board]),
+    headRight: headText([run, shortName(title.dateText, 24), sha256.slice(0, 12)]),
+    footLeft: FOOT_TEXT,
   };
 }

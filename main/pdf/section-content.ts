@@ -1,5 +1,5 @@
 import type { Content } from 'pdfmake/interfaces.js';
-import { type Block, joined, type Section, type Text } from '../../app/report/blocks.ts';
+import type { Block, Section, Text } from '../../app/report/blocks.ts';
 import type { Markup } from '../../app/report/markup.ts';
 import { factsContent } from './facts-content.ts';
 import { printableText } from './fonts.ts';
@@ -11,10 +11,11 @@ import { hasPicture, plainRuns, textContent } from './text-content.ts';
 
 const TITLE_PT = 11.5;
 const HEADING_PT = 9;
-const BEFORE_SECTION_PT = 11;
+const BEFORE_SECTION_PT = 9;
 /** Room that a figure leaves for its title and key on a page of its own. */
 const FIGURE_SPARE_PT = 90;
 const KEY_PT = 7;
+const KEPT_ITEMS = 2;
 const SHORT_TABLE_ROWS = 8;
 const SHORT_TABLE_CHARACTERS = 1200;
 
@@ -26,10 +27,6 @@ export function sectionContent({ title, blocks }: Section, room: PageRoom): Cont
   if (blocks.length === 0) return [];
   return new Flow(room, title).add(blocks).contents();
 }
-
-/** The same contents, the first of them at the top of a page. */
-export const onNewPage = ([first, ...others]: readonly Content[]): Content[] =>
-  first === undefined ? [] : [{ stack: [first], pageBreak: 'before' }, ...others];
 
 /** Content of its own kind under a section's title, on one page. */
 export const titledContent = (title: string, content: Content, room: PageRoom): Content =>
@@ -57,7 +54,9 @@ class Flow {
         this.#out.push(together([this.#tableOf(block), paragraphContent(next.text, next.style)]));
         i++;
       } else if (isShort) this.#out.push(together([this.#tableOf(block)]));
-      else this.#addBlock(block);
+      else if (block.kind === 'paragraph' && next?.kind === 'figure') {
+        this.#pending.push(() => paragraphContent(block.text, block.style));
+      } else this.#addBlock(block);
     }
     return this;
   }
@@ -113,7 +112,7 @@ class Flow {
     return tableContent(columns, rows, table, this.#room, this.#takeTitle());
   }
 
-  /** The first item stays with the heading, the others may go to the next page. */
+  /** The first items stay with the heading, the others may go to the next page. */
   #addList(items: readonly Text[], isNumbered: boolean): void {
     const listOf = (from: number, to?: number): Content => {
       const contents = items
@@ -123,8 +122,8 @@ class Flow {
       return isNumbered ? { ol: contents, start: from + 1, ...style } : { ul: contents, ...style };
     };
     if (items.length === 0) return;
-    this.#kept([listOf(0, 1)]);
-    if (items.length > 1) this.#out.push(listOf(1));
+    this.#kept([listOf(0, KEPT_ITEMS)]);
+    if (items.length > KEPT_ITEMS) this.#out.push(listOf(KEPT_ITEMS));
   }
 
   /** Puts contents down together with the headings that wait for them. */
@@ -199,9 +198,7 @@ function keyContent(captions: readonly Text[]): Content[] {
   const plain = captions.filter((caption) => !hasPicture(caption));
   const style = { fontSize: NOTE_PT, color: QUIET };
   return [
-    ...(marked.length > 0
-      ? [textContent(joined(marked, '\u00a0\u00a0\u00a0'), { ...style, margin: [0, 1, 0, 0] }, KEY_PT)]
-      : []),
+    ...(marked.length > 0 ? [textContent(marked, { ...style, margin: [0, 1, 0, 0] }, KEY_PT)] : []),
     ...(plain.length > 0
       ? [
           {

@@ -10,7 +10,7 @@ import { plainRuns } from './text-content.ts';
 
 const COLUMN_GAP_PT = 22;
 const LEVEL_PT = 30;
-const BAR_SHARE = 0.4;
+const BAR_SHARE = 0.36;
 const PATH_INDENT_PT = 9;
 
 /** What readings are made of, as bars, two readings side by side; one row of them for each item. */

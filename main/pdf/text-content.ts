@@ -1,4 +1,4 @@
-import type { Content, ContentText, Style } from 'pdfmake/interfaces.js';
+import type { Content, ContentStack, ContentText, Style } from 'pdfmake/interfaces.js';
 import type { Text } from '../../app/report/blocks.ts';
 import { dashPicture, inlineMark } from '../../app/report/figures/marks.ts';
 import type { Markup } from '../../app/report/markup.ts';
@@ -54,6 +54,9 @@ export const plainRuns = (text: Text): Run[] => piecesOf(text, {}).filter(isRun)
 /** Whether anything of it is a picture. */
 export const hasPicture = (text: Text): boolean => piecesOf(text, {}).some((piece) => !isRun(piece));
 
+/** Before a mark that follows a text. */
+const BETWEEN_MARKS_PT = 5;
+
 /** One text node, or where it holds marks a row of marks and texts of which the last takes the rest of the width. */
 export function textContent(text: Text, style: Style, markPt = 8): Content {
   const pieces = piecesOf(text, {});
@@ -68,7 +71,8 @@ export function textContent(text: Text, style: Style, markPt = 8): Content {
     if (isRun(piece)) runs.push(piece);
     else {
       endText('auto');
-      columns.push(pictureColumn(piece.picture, markPt, style.fontSize ?? markPt));
+      const leftPt = columns.length > 0 ? BETWEEN_MARKS_PT : 0;
+      columns.push(pictureColumn(piece.picture, markPt, style.fontSize ?? markPt, leftPt));
     }
   }
   endText('*');
@@ -76,9 +80,19 @@ export function textContent(text: Text, style: Style, markPt = 8): Content {
 }
 
 /** A mark as high as the text beside it, centred on its lower-case letters. */
-const pictureColumn = (picture: Markup, sizePt: number, fontPt: number): Content => ({
-  svg: printFigure(picture),
-  width: sizePt,
-  height: sizePt,
-  margin: [0, Math.max(0, 0.74 * fontPt - sizePt / 2), 0, 0],
+const pictureColumn = (
+  picture: Markup,
+  sizePt: number,
+  fontPt: number,
+  leftPt: number,
+): ContentStack & { width: number } => ({
+  stack: [
+    {
+      svg: printFigure(picture),
+      width: sizePt,
+      height: sizePt,
+      margin: [leftPt, Math.max(0, 0.74 * fontPt - sizePt / 2), 0, 0],
+    },
+  ],
+  width: sizePt + leftPt,
 });

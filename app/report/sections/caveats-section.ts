@@ -13,9 +13,9 @@ const MOST_PLACES = 12;
 const FINDING_COLUMNS: readonly Column[] = [
   { head: 'No.', width: 5, isNumber: true },
   { head: 'Net', width: 19 },
-  { head: 'Place, mm', width: 16, isWhole: true },
-  { head: 'Layer', width: 12 },
-  { head: 'Finding', width: 48 },
+  { head: 'Place, mm', width: 14, isWhole: true },
+  { head: 'Layer', width: 11 },
+  { head: 'Finding', width: 51 },
 ];
 
 /** Places on the board a reviewer can go and look at. */

@@ -25,6 +25,8 @@ import { standingKey } from './spectrum-section.ts';
 
 /** Causes listed: more would not be read in a minute. */
 const MOST_CAUSES = 3;
+/** Findings named for one net. */
+const MOST_NUMBERS = 6;
 /** A user's limit file may have hundreds of bands. */
 const MOST_BANDS = 8;
 
@@ -98,7 +100,7 @@ export function causesSection(result: EstimateResult): Section {
       table(CAUSE_COLUMNS, rows),
       ...cureBlocks(result, causes),
       note(
-        `Each by itself at its own worst line; "must fall by": until it alone keeps ${needed}. "Without it": the worst margin of all lines when the power of this one cause is gone; phases are not counted, so this may be off by several dB. What a change really does, an estimate with the change tells.`,
+        `Each by itself at its own worst line; it must fall until it alone keeps ${needed}. Without it: its power gone, phases not counted, so off by several dB at times. What a change really does, an estimate with the change tells.`,
       ),
     ],
   };
@@ -113,18 +115,25 @@ function cureBlocks(result: EstimateResult, causes: readonly Cause[]) {
   const nets = [...new Map(causes.map((cause) => [cause.contributor.name, cause])).values()];
   const found = nets.filter((cause) => numbers(cause).length > 0);
   const said: Text[] = [
-    ...(together ? [[`Without ${causes.length === 2 ? 'both' : 'all three'}: about ${withoutText(together)}.`]] : []),
-    ...found.map((cause) => {
-      const list = numbers(cause);
-      const shown = list.slice(0, 6);
-      return [
-        name(cause.contributor.name, 30),
-        ` has ${list.length === 1 ? 'a finding' : 'findings'} on the board: No. ${shown.join(', ')}${list.length > shown.length ? ' …' : ''}.`,
-      ];
-    }),
+    ...(together ? [`Without ${causes.length === 2 ? 'both' : 'all three'}: about ${withoutText(together)}.`] : []),
+    ...(found.length > 0
+      ? [
+          [
+            'Findings on the board: ',
+            joined(
+              found.map((cause) => [name(cause.contributor.name, 30), ` No. ${listed(numbers(cause))}`]),
+              '; ',
+            ),
+            '.',
+          ],
+        ]
+      : []),
   ];
   return said.length === 0 ? [] : [paragraph(joined(said, ' '))];
 }
+
+const listed = (numbers: readonly string[]): string =>
+  `${numbers.slice(0, MOST_NUMBERS).join(', ')}${numbers.length > MOST_NUMBERS ? ' …' : ''}`;
 
 const withoutText = (worst: ReturnType<typeof worstWithout>): string =>
   worst === undefined

@@ -1,6 +1,6 @@
 import type { Board } from '../../board/board.ts';
 import type { EstimateResult } from '../../estimate/result.ts';
-import { code, type Fact, name } from '../blocks.ts';
+import { code, type Fact, name, type Text } from '../blocks.ts';
 import { trimmed } from '../format.ts';
 import type { ReportTitle } from '../report-title.ts';
 import { limitName } from '../verdict.ts';
@@ -28,14 +28,23 @@ export function titleFacts(result: EstimateResult, board: Board, dateText: strin
 }
 
 /** The same for a printed report, which belongs to a project and has an author, a date, perhaps a run's number. */
-export function runTitleFacts(result: EstimateResult, board: Board, title: ReportTitle): Fact[] {
-  const said = (text: string, length: number) => (text === '' ? '—' : name(text, length));
-  return [
-    { term: 'Project', value: said(title.project, 60) },
-    { term: 'Run', value: title.runNumber === null ? 'not stored' : String(title.runNumber) },
-    { term: 'Author', value: said(title.author, 60) },
-    { term: 'Date', value: said(title.dateText, 40) },
-    ...titleFacts(result, board, undefined),
-    ...(title.note === '' ? [] : [{ term: 'Note', value: name(title.note, 300), isWide: true }]),
-  ];
-}
+export const runTitleFacts = (result: EstimateResult, board: Board, title: ReportTitle): Fact[] => [
+  { term: 'Project', value: said(title.project, 60) },
+  { term: 'Run', value: title.runNumber === null ? 'not stored' : String(title.runNumber) },
+  { term: 'Author', value: said(title.author, 60) },
+  { term: 'Date', value: said(title.dateText, 40) },
+  ...titleFacts(result, board, undefined),
+  ...noteFact(title),
+];
+
+/** Whose report it is, for those about several runs. */
+export const projectFacts = (title: ReportTitle): Fact[] => [
+  { term: 'Project', value: said(title.project, 60) },
+  { term: 'Author', value: said(title.author, 60) },
+  ...noteFact(title),
+];
+
+const said = (text: string, length: number): Text => (text === '' ? '—' : name(text, length));
+
+const noteFact = ({ note }: ReportTitle): Fact[] =>
+  note === '' ? [] : [{ term: 'Note', value: name(note, 300), isWide: true }];
