@@ -68,10 +68,10 @@ export function RunTable({ onCompare }: RunTableProps): ReactElement {
             <HeadCell isNumber>Run</HeadCell>
             <HeadCell>Rev.</HeadCell>
             <HeadCell>Worst margin</HeadCell>
-            <HeadCell>Limit</HeadCell>
-            <HeadCell>When</HeadCell>
             <HeadCell>Note</HeadCell>
-            <HeadCell>Do</HeadCell>
+            <HeadCell>
+              <span className={css.hidden}>What to do</span>
+            </HeadCell>
           </tr>
         </thead>
         <tbody>
@@ -90,11 +90,10 @@ export function RunTable({ onCompare }: RunTableProps): ReactElement {
               <Cell>{run.revision || '–'}</Cell>
               <Cell>
                 <MarginText run={run} />
+                <span className={css.about}>
+                  {run.standard} {run.class}, {run.distanceM} m · {dateTimeText(run.startedAt)}
+                </span>
               </Cell>
-              <Cell>
-                {run.standard} {run.class}, {run.distanceM} m
-              </Cell>
-              <Cell className={css.when}>{dateTimeText(run.startedAt)}</Cell>
               <Cell className={css.note}>
                 <TextField
                   label={`Note to run ${run.run}`}
