@@ -91,8 +91,11 @@ export function weighChanges(
 ): { changes: Change[]; causesOf: (line: Omit<LineChange, 'causes'>) => number[] } {
   const asked = new Set(drafts.flatMap(subjectsOf));
   const own = asked.size === 0 ? new Map<string, OwnChange>() : ownChanges(pairs, asked, renames);
-  // A change of the whole board can have done as much as any line changed.
-  const most = pairs.reduce((held, pair) => Math.max(held, totalWeight(pair)), 0);
+  // A change of the whole board can have done all of what any line or contributor did.
+  const most = [...[...own.values()].map(({ weight }) => weight), ...pairs.map(totalWeight)].reduce(
+    (held, weight) => Math.max(held, weight),
+    0,
+  );
   const weighed = drafts.map((each) => {
     const strongest = subjectsOf(each).flatMap((key) => (own.has(key) ? [{ key, ...own.get(key)! }] : []));
     const found = strongest.reduce<(typeof strongest)[number] | undefined>(

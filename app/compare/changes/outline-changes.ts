@@ -9,9 +9,13 @@ export function outlineChanges(before: BoardFile, after: BoardFile): Draft[] {
   const key = ({ outline }: BoardFile) =>
     JSON.stringify((outline ?? []).map(({ pointsMm }) => ringKey(pointsMm)).sort());
   if (key(before) === key(after)) return [];
-  const text = one === other ? `outline: another shape, still ${other}` : `outline: ${one} → ${other}`;
+  const text = one === other ? `outline: another shape, still ${other}` : `outline: ${shorter(one, other)} → ${other}`;
   return [wideDraft('outline', text)];
 }
+
+/** The unit once where both sides have it. */
+const shorter = (one: string, other: string): string =>
+  one.endsWith(' mm') && other.endsWith(' mm') ? one.slice(0, -' mm'.length) : one;
 
 function boxText({ outline }: BoardFile): string {
   if (!outline) return 'around the copper';

@@ -1,6 +1,7 @@
 import { shortName } from '../../report/markup.ts';
 import { copperKeys, type Net } from './copper-key.ts';
 import { chainLengthMm, lengthChange } from './place-text.ts';
+import { boxMm } from './rings.ts';
 import { joined, lengthMmText, numberChange, type Words } from './words.ts';
 
 type Traces = Net['traces'];
@@ -10,9 +11,12 @@ interface LayerCopper {
   readonly lengthMm: number;
   /** The only width, or undefined. */
   readonly widthMm: number | undefined;
-  readonly key: string;
+  /** Corners of what encloses it, nm: other corners are other copper, and cheap to see. */
+  readonly corners: string;
+  /** Equal for equal copper (`copperKeys`). */
+  readonly key: () => string;
   /** The same whatever the widths. */
-  readonly routeKey: string;
+  readonly routeKey: () => string;
 }
 
 /** "trace on TOP 54 → 19 mm, on BOT none → 26 mm"; undefined for the same copper. */
@@ -32,12 +36,13 @@ function layerText(one: LayerCopper | undefined, other: LayerCopper | undefined)
     const side = (copper: LayerCopper | undefined) => (copper ? `${lengthMmText(copper.lengthMm)} mm` : 'none');
     return `${side(one)} → ${side(other)}`;
   }
-  if (one.key === other.key) return undefined;
+  const isSameBox = one.corners === other.corners;
+  if (isSameBox && one.key() === other.key()) return undefined;
   const length = lengthChange('', one.lengthMm, other.lengthMm)?.trim();
   const isUniform = one.widthMm !== undefined && other.widthMm !== undefined;
   const width = isUniform ? numberChange('width', one.widthMm, other.widthMm, 'mm') : undefined;
   if (length !== undefined || width !== undefined) return joined([length, width], ', ');
-  return one.routeKey === other.routeKey
+  return isSameBox && one.routeKey() === other.routeKey()
     ? 'other widths along the way'
     : `another way, still ${lengthMmText(other.lengthMm)} mm`;
 }
@@ -62,13 +67,17 @@ function byLayer(traces: Traces, nanometres: (valueMm: number) => number): Map<s
         {
           lengthMm: own.reduce((sum, { pointsMm }) => sum + chainLengthMm(pointsMm), 0),
           widthMm: widths.size === 1 ? own[0]!.widthMm : undefined,
-          key: text(copperKeys(own, nanometres)),
-          routeKey: text(
-            copperKeys(
-              own.map((trace) => ({ ...trace, widthMm: 0 })),
-              nanometres,
+          corners: boxMm(own.flatMap(({ pointsMm }) => pointsMm))
+            .map(nanometres)
+            .join(' '),
+          key: () => text(copperKeys(own, nanometres)),
+          routeKey: () =>
+            text(
+              copperKeys(
+                own.map((trace) => ({ ...trace, widthMm: 0 })),
+                nanometres,
+              ),
             ),
-          ),
         },
       ];
     }),

@@ -32,13 +32,16 @@ export function waveformSets(before: RunDocument, after: RunDocument): WaveformS
   };
 }
 
-const byName = ({ board, samples }: RunDocument): Map<string, SampledWaveform> =>
-  new Map(
+function byName({ board, samples }: RunDocument): Map<string, SampledWaveform> {
+  // A file may be called "__proto__".
+  const columns = new Map(Object.entries(samples));
+  return new Map(
     (board.waveforms ?? []).map((waveform) => [
       waveform.name,
-      { waveform, columns: waveform.kind === 'samples' ? samples[waveform.file] : undefined },
+      { waveform, columns: waveform.kind === 'samples' ? columns.get(waveform.file) : undefined },
     ]),
   );
+}
 
 /** Nets and loops that a waveform feeds. */
 interface Users {
