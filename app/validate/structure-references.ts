@@ -3,7 +3,9 @@ import { type Check, check } from './check.ts';
 import { STRUCTURE_CASES, STRUCTURE_DISTANCE_M, type StructureCase, type StructureMaximum } from './structure-cases.ts';
 import { closedFormChecks } from './structure-closed-forms.ts';
 import { compareStructure, type StructureComparison } from './structure-compare.ts';
+import { convergenceChecks } from './structure-convergence.ts';
 import { estimateStructure } from './structure-estimate.ts';
+import { structureLawChecks } from './structure-law-checks.ts';
 import { STRUCTURE_MAXIMA } from './structure-maxima.ts';
 import { resonanceOf } from './structure-resonance.ts';
 
@@ -37,7 +39,7 @@ export function structureChecks(): Check[] {
   const rows = STRUCTURE_CASES.flatMap((testCase) =>
     testCase.isResonance ? resonanceRows(testCase) : levelRows(testCase),
   );
-  return [...rows, ...closedFormChecks()];
+  return [...rows, ...structureLawChecks(), ...convergenceChecks(), ...closedFormChecks()];
 }
 
 function levelRows(testCase: StructureCase): Check[] {

@@ -1,56 +1,20 @@
 import { describe, expect, it } from 'vitest';
-import { STRUCTURE_CASES, type StructureCase } from '../../app/validate/structure-cases.ts';
-import { estimateStructure } from '../../app/validate/structure-estimate.ts';
+import { STRUCTURE_CASES } from '../../app/validate/structure-cases.ts';
+import {
+  levelsPerThickness,
+  roughnessDb,
+  THICKNESS_CASES,
+  THICKNESSES_M,
+} from '../../app/validate/structure-convergence.ts';
 import { expectClose } from '../support/expect-close.ts';
 
-const BASE = STRUCTURE_CASES.find(({ id }) => id === 'plane-80x50-220ohm')!;
 const SLOT = STRUCTURE_CASES.find(({ id }) => id === 'slot-100x60')!;
-const SMALL = STRUCTURE_CASES.find(({ id }) => id === 'plane-60x40')!;
-const OPEN: StructureCase = {
-  ...SMALL,
-  id: 'plane-60x40 with a cable',
-  cables: [
-    {
-      name: 'OPEN',
-      farEnd: 'open',
-      pointsM: [
-        [0.06, 0.0225, 0],
-        [0.76, 0.0225, 0],
-      ],
-    },
-  ],
-};
-
-/**
- * Levels per thickness from 0.1 to 5 mm; h/a is kept, so the line stays the same (Z0 = 60·acosh(h/a)) and only the geometry of
- * pair and structure changes.
- */
-const THICKNESSES_MM = Array.from({ length: 13 }, (_, i) => 0.1 * 50 ** (i / 12));
-
-function levelsPerHeight(testCase: StructureCase, frequencyHz: number): number[][] {
-  return THICKNESSES_MM.map((mm) => {
-    const traceHeightM = mm * 1e-3;
-    const scaled = { ...testCase, traceHeightM, traceRadiusM: traceHeightM / 12, frequenciesHz: [frequencyHz] };
-    const [row] = estimateStructure(scaled);
-    return [row!.horizontalVPerM, row!.verticalVPerM, ...row!.cableCurrentsA].map((value) => value / traceHeightM);
-  });
-}
-
-/** Largest second difference of a series in dB: zero for a power law. */
-function roughnessDb(values: readonly number[]): number {
-  const db = values.map((value) => 20 * Math.log10(value));
-  return Math.max(...db.slice(2).map((value, i) => Math.abs(value - 2 * db[i + 1]! + db[i]!)));
-}
 
 describe('dielectric thickness from 0.1 to 5 mm', () => {
-  it.each([
-    { testCase: BASE, frequencyHz: 100e6 },
-    { testCase: BASE, frequencyHz: 700e6 },
-    { testCase: OPEN, frequencyHz: 200e6 },
-  ])(
+  it.each(THICKNESS_CASES.map(([testCase, frequencyHz]) => ({ testCase, frequencyHz })))(
     '$testCase.id at $frequencyHz Hz: proportional to h where it is small, smooth up to 5 mm',
     ({ testCase, frequencyHz }) => {
-      const series = levelsPerHeight(testCase, frequencyHz);
+      const series = levelsPerThickness(testCase, frequencyHz);
       for (let quantity = 0; quantity < series[0]!.length; quantity++) {
         const values = series.map((row) => row[quantity]!);
         const because =
@@ -65,8 +29,8 @@ describe('dielectric thickness from 0.1 to 5 mm', () => {
   );
 
   it('over a slot the plane carries the current: a part without h and one with it', () => {
-    const squares = levelsPerHeight(SLOT, 400e6).map(([value], i) => (value! * THICKNESSES_MM[i]!) ** 2);
-    const heights = THICKNESSES_MM;
+    const squares = levelsPerThickness(SLOT, 400e6).map(([value], i) => (value! * THICKNESSES_M[i]!) ** 2);
+    const heights = THICKNESSES_M;
     // |a + b·h|² with complex a, b is a parabola in h; laid through three thicknesses it must meet all others.
     const fitted = [0, 8, 12];
     for (const [i, h] of heights.entries()) {

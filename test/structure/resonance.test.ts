@@ -1,44 +1,21 @@
 import { describe, expect } from 'vitest';
-import { emptyIncident } from '../../app/structure/incident.ts';
-import { buildMesh } from '../../app/structure/mesh.ts';
-import { StructureSolver } from '../../app/structure/structure-solver.ts';
+import { STRIP_LENGTH_M, STRIP_WIDTH_M, stripReactanceOhm, zeroCrossingHz } from '../../app/validate/structure-laws.ts';
 import { itNeedsNec2c } from '../support/it-needs-nec2c.ts';
 import { type NecDeck, runNec2c } from '../support/nec2c.ts';
-import { rectangle, sheetOf } from './support.ts';
 
-const LENGTH_M = 0.15;
-const WIDTH_M = 0.01;
 /** On either side of the lowest resonance. */
 const FREQUENCIES_HZ = [880e6, 930e6] as const;
 
 /** Reactance of one volt over a current. */
 const reactance = (re: number, im: number): number => -im / (re * re + im * im);
 
-/** Where the reactance passes through zero, Hz, by linear interpolation. */
-const resonance = ([low, high]: readonly number[]): number =>
-  FREQUENCIES_HZ[0] + ((FREQUENCIES_HZ[1] - FREQUENCIES_HZ[0]) * low!) / (low! - high!);
-
-/** Strip driven by 1 V across its middle. */
-function ownReactance(cellsAcross: number, frequencyHz: number): number {
-  const cellM = WIDTH_M / cellsAcross;
-  const mesh = buildMesh(sheetOf([rectangle(LENGTH_M, WIDTH_M)], LENGTH_M, WIDTH_M, cellM), [], null);
-  const solver = new StructureSolver(mesh);
-  solver.setFrequency(frequencyHz, []);
-  const incident = emptyIncident(mesh);
-  const middle = Array.from({ length: mesh.xEdgeCount }, (_, e) => e).filter(
-    (e) => Math.abs(mesh.edgeCentreM[3 * e]! - LENGTH_M / 2) < cellM / 4,
-  );
-  expect(middle).toHaveLength(cellsAcross);
-  for (const e of middle) incident.emfRe[e] = 1;
-  const { re, im } = solver.solve(incident);
-  const total = (part: Float64Array): number => middle.reduce((sum, e) => sum + part[e]!, 0);
-  return reactance(total(re), total(im));
-}
+const resonance = (reactances: readonly number[]): number =>
+  zeroCrossingHz(FREQUENCIES_HZ, [reactances[0]!, reactances[1]!]);
 
 /** The same strip as a wire grid: radius pitch/2π, outer wires half a pitch inside. */
 async function gridReactances(rows: number): Promise<number[]> {
-  const pitchM = WIDTH_M / rows;
-  const columns = Math.round(LENGTH_M / pitchM);
+  const pitchM = STRIP_WIDTH_M / rows;
+  const columns = Math.round(STRIP_LENGTH_M / pitchM);
   const wires: NecDeck['wires'][number][] = [];
   const sources: NecDeck['sources'][number][] = [];
   const add = (x1: number, y1: number, x2: number, y2: number): void => {
@@ -75,7 +52,7 @@ describe('lowest resonance of a plate', () => {
       [2, 0.01],
       [4, 0.005],
     ] as const) {
-      const actualHz = resonance(FREQUENCIES_HZ.map((hz) => ownReactance(cellsAcross, hz)));
+      const actualHz = resonance(FREQUENCIES_HZ.map((hz) => stripReactanceOhm(cellsAcross, hz)));
       // Seen: 923.6 and 928.2 MHz. Both halves of the correction for edges (inductance, capacitance) move it by 1 % each.
       expect(Math.abs(actualHz / expectedHz - 1)).toBeLessThan(tolerance);
     }
