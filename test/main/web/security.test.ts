@@ -150,10 +150,12 @@ test('the page comes with a policy that lets nothing in from outside', async () 
   expect(answer.status).toBe(200);
   expect(answer.headers['content-type']).toBe('text/html; charset=utf-8');
   const policy = new Map(
-    answer.headers['content-security-policy']!.split('; ').map((rule) => {
-      const [name, ...sources] = rule.split(' ');
-      return [name!, sources.join(' ')];
-    }),
+    String(answer.headers['content-security-policy'])
+      .split('; ')
+      .map((rule) => {
+        const [name, ...sources] = rule.split(' ');
+        return [name!, sources.join(' ')];
+      }),
   );
   expect(policy.get('default-src')).toBe("'none'");
   expect(policy.get('script-src')).toBe("'self'");
