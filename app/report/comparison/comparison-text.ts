@@ -48,7 +48,7 @@ function headline(comparison: Comparison, width: number): string[] {
 }
 
 function changes({ changes: all }: Comparison, width: number): string[] {
-  if (all.length === 0) return ['What changed: nothing in board, sources and set-up.'];
+  if (all.length === 0) return wrapText('What changed: nothing in board, sources and set-up.', width);
   const groups = changeGroups(all);
   const shown = groups.slice(0, GROUPS_SHOWN);
   const left = groups.slice(GROUPS_SHOWN).reduce((sum, group) => sum + group.changes.length, 0);
@@ -94,7 +94,7 @@ const LINE_COLUMNS: readonly PlainColumn[] = [
 ];
 
 function lines(comparison: Comparison, top: number, width: number): string[] {
-  const head = [...wrapText(`${countsText(comparison)}.`, width), `${crossingsText(comparison)}.`];
+  const head = [...wrapText(`${countsText(comparison)}.`, width), ...wrapText(`${crossingsText(comparison)}.`, width)];
   const changed = changedLines(comparison);
   const shown = changed.slice(0, Math.max(0, top));
   const left = changed.length - shown.length;
