@@ -5,6 +5,7 @@ import { factsMarkup, sectionMarkup } from './html/section-markup.ts';
 import { textMarkup } from './html/text-markup.ts';
 import { markup, shortName } from './markup.ts';
 import { reportPage } from './page.ts';
+import type { ReportTitle } from './report-title.ts';
 import { boardSection } from './sections/board-section.ts';
 import { findingsSection, modelSection } from './sections/caveats-section.ts';
 import { cautionsSection, notesSection } from './sections/closing-section.ts';
@@ -15,7 +16,7 @@ import { limitSection, setupSection } from './sections/setup-section.ts';
 import { sharesSection } from './sections/shares-section.ts';
 import { sourcesSection } from './sections/sources-section.ts';
 import { spectrumSection } from './sections/spectrum-section.ts';
-import { REPORT_TITLE, titleFacts } from './sections/title-section.ts';
+import { REPORT_TITLE, runTitleFacts, titleFacts } from './sections/title-section.ts';
 import { verdictHeadline, verdictSummary } from './sections/verdict-section.ts';
 
 export type { ReportLimitLine } from './figures/limit-lines.ts';
@@ -23,6 +24,8 @@ export type { ReportLimitLine } from './figures/limit-lines.ts';
 export interface HtmlReportOptions {
   /** Date to print in the title block. Without it the page has none: the same input gives the same bytes. */
   readonly dateText?: string;
+  /** The whole title block of a project's report; its date counts. */
+  readonly title?: ReportTitle;
 }
 
 /**
@@ -51,7 +54,7 @@ export function htmlReport(
     cautionsSection(),
   ];
   const body = markup`<header><h1>${REPORT_TITLE}</h1>
-${factsMarkup(titleFacts(result, board, options.dateText))}</header>
+${factsMarkup(options.title ? runTitleFacts(result, board, options.title) : titleFacts(result, board, options.dateText))}</header>
 <section class="verdict"><p class="headline">${textMarkup(verdictHeadline(result))}</p>
 <p class="summary">${textMarkup(verdictSummary(result))}</p></section>
 ${sections.map(

@@ -42,9 +42,7 @@ export async function writeOutput(file: string | undefined, makeText: () => stri
 }
 
 /** The same for a file of bytes. */
-export async function writeBytesOutput(file: string | undefined, makeBytes: () => Promise<Uint8Array>): Promise<void> {
-  if (file !== undefined) await writeBytes(file, await makeBytes());
-}
+export const writeBytesOutput = (file: string, bytes: Uint8Array): Promise<void> => writeBytes(file, bytes);
 
 /** Columns to fill: the terminal's, or 80. */
 export const outputWidth = (): number => (process.stdout.isTTY ? (process.stdout.columns ?? 80) : 80);

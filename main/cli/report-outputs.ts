@@ -1,15 +1,8 @@
 import { type Command, Option } from 'commander';
-import type { Board } from '../../app/board/board.ts';
-import type { EstimateResult } from '../../app/estimate/result.ts';
-import type { LimitSet } from '../../app/limits/choose.ts';
-import { csvReport } from '../../app/report/csv-report.ts';
-import { htmlReport } from '../../app/report/html-report.ts';
-import { junitReport } from '../../app/report/junit.ts';
-import { labelledLimits } from '../../app/report/limit-labels.ts';
 import type { ReportTitle } from '../../app/report/report-title.ts';
-import { BUILT_IN_CHECKS } from '../../app/validate/built-in-summary.ts';
-import { jsonText } from '../files/json-text.ts';
-import { runPdf } from '../pdf/run-pdf.ts';
+import { reportContent } from '../reports/report-content.ts';
+import type { ReportFormat, ReportSubject } from '../reports/report-request.ts';
+import { dateTextOf } from '../reports/reported-run.ts';
 import { type OutputFiles, writeBytesOutput, writeOutput } from './outputs.ts';
 import { programVersion } from './version.ts';
 
@@ -20,14 +13,16 @@ export interface ReportOptions {
   readonly date?: string;
 }
 
-/** Files to write about one run. */
-export interface RunOutputs {
+/** Files to write. */
+export interface ReportOutputs {
   readonly json?: string;
   readonly csv?: string;
   readonly html?: string;
   readonly pdf?: string;
   readonly junit?: string;
 }
+
+const FORMATS: readonly ReportFormat[] = ['csv', 'html', 'junit', 'pdf', 'json'];
 
 export const addReportOptions = (command: Command): Command =>
   command
@@ -36,69 +31,39 @@ export const addReportOptions = (command: Command): Command =>
     .option('--author <name>', 'who answers for the report, for its title block')
     .option('--date <text>', "date for the title block (default: the stored run's)");
 
-export const runOutputFiles = ({ json, csv, html, pdf, junit }: RunOutputs): OutputFiles => ({
-  '--json': json,
-  '--csv': csv,
-  '--html': html,
-  '--pdf': pdf,
-  '--junit': junit,
-});
+export const reportFiles = (outputs: ReportOutputs): OutputFiles =>
+  Object.fromEntries(FORMATS.map((format) => [`--${format}`, outputs[format]]));
 
-interface StoredTitle {
+/** What a project knows of the runs in a report. */
+export interface StoredTitle {
   readonly project: string;
+  /** null: several runs. */
   readonly run: number | null;
   readonly startedAt: string;
   readonly note: string;
 }
 
-/** A result with what its reports show beside it. */
-export interface ReportedRun {
-  readonly result: EstimateResult;
-  readonly board: Board;
-  readonly limits: LimitSet;
-  /** Absent: not kept in a project. */
-  readonly stored?: StoredTitle;
-}
-
-/** Writes what was asked for. The same run gives the same bytes: the date is the run's own or the one given. */
-export async function writeRunOutputs(
-  run: ReportedRun,
-  outputs: RunOutputs,
-  { paper, author, date }: ReportOptions,
+/** Writes what was asked for. The same runs give the same bytes: the date is the run's own or the one given. */
+export async function writeReports(
+  subject: ReportSubject,
+  stored: StoredTitle | undefined,
+  options: ReportOutputs & ReportOptions,
 ): Promise<void> {
-  const { result, board, limits, stored } = run;
-  const limitLines = labelledLimits(limits.lines);
-  const title = titleOf(stored, { paper, author, date });
-  await writeOutput(outputs.csv, () => csvReport(result));
-  await writeOutput(outputs.html, () => htmlReport(result, board, limitLines, title));
-  await writeOutput(outputs.junit, () =>
-    junitReport(
-      result,
-      limits.lines,
-      stored ? { startedAt: stored.startedAt, ...(stored.run !== null && { run: stored.run }) } : {},
-    ),
-  );
-  await writeBytesOutput(outputs.pdf, () =>
-    runPdf({
-      result,
-      board,
-      limitLines,
-      title,
-      paper,
-      validation: { programVersion: programVersion(), groups: BUILT_IN_CHECKS },
-    }),
-  );
-  await writeOutput(outputs.json, () => jsonText(result));
+  const title = titleOf(stored, options);
+  for (const format of FORMATS) {
+    const file = options[format];
+    if (file === undefined) continue;
+    const request = { subject, format, title, paper: options.paper, programVersion: programVersion() };
+    const content = await reportContent(request);
+    if (typeof content === 'string') await writeOutput(file, () => content);
+    else await writeBytesOutput(file, content);
+  }
 }
 
-/** The title block's own part. A report about several runs has no run number. */
-export const titleOf = (stored: StoredTitle | undefined, { author, date }: ReportOptions): ReportTitle => ({
+const titleOf = (stored: StoredTitle | undefined, { author, date }: ReportOptions): ReportTitle => ({
   project: stored?.project ?? '',
   author: author ?? '',
   dateText: date ?? (stored ? dateTextOf(stored.startedAt) : ''),
   runNumber: stored?.run ?? null,
   note: stored?.note ?? '',
 });
-
-/** "2026-12-01 14:05 UTC": the same on every machine. */
-const dateTextOf = (isoUtc: string): string => `${isoUtc.slice(0, 10)} ${isoUtc.slice(11, 16)} UTC`;

@@ -1,10 +1,21 @@
+import type { Board } from '../../app/board/board.ts';
 import type { Comparison, Trend } from '../../app/compare/types.ts';
-import type { StoredRun } from '../../app/project/stored-run.ts';
-import type { Paper } from '../../app/report/report-title.ts';
+import type { EstimateResult } from '../../app/estimate/result.ts';
+import type { LimitLine } from '../../app/limits/limit-line.ts';
+import type { Paper, ReportTitle } from '../../app/report/report-title.ts';
 
-/** What is reported about, as plain data: a report is made in a thread of its own. */
+/** A result with what its reports show beside it. */
+export interface ReportedRun {
+  readonly result: EstimateResult;
+  readonly board: Board;
+  readonly limitLines: readonly LimitLine[];
+  /** ISO 8601; absent: not kept in a project. */
+  readonly startedAt?: string;
+}
+
+/** What is reported about, as plain data: it can be sent to a thread. */
 export type ReportSubject =
-  | { readonly kind: 'run'; readonly run: StoredRun }
+  | { readonly kind: 'run'; readonly run: ReportedRun }
   | { readonly kind: 'comparison'; readonly comparison: Comparison }
   | { readonly kind: 'trend'; readonly trend: Trend };
 
@@ -14,10 +25,7 @@ export interface ReportRequest {
   readonly subject: ReportSubject;
   readonly format: ReportFormat;
   readonly paper: Paper;
-  /** For the title block. */
-  readonly project: string;
-  readonly author: string;
-  readonly dateText: string;
+  readonly title: ReportTitle;
   readonly programVersion: string;
 }
 

@@ -22,14 +22,14 @@ import { withProject } from '../project-file.ts';
 import {
   addReportOptions,
   type ReportOptions,
-  type RunOutputs,
-  runOutputFiles,
-  writeRunOutputs,
+  type ReportOutputs,
+  reportFiles,
+  writeReports,
 } from '../report-outputs.ts';
 import { chooseStructure, STRUCTURE_DEFAULT } from '../structure-choice.ts';
 import { programVersion } from '../version.ts';
 
-export interface EstimateOptions extends ReportOptions, RunOutputs {
+export interface EstimateOptions extends ReportOptions, ReportOutputs {
   readonly sources?: string;
   readonly standard?: string;
   readonly class?: string;
@@ -98,7 +98,7 @@ async function estimateFile(file: string, options: EstimateOptions): Promise<num
     throw new AppError('input', '--note must go with --project; received no project', '--note');
   }
   const inputs = [file, options.sources, options.limitFile];
-  await checkOutputs({ ...runOutputFiles(options), '--project': project }, inputs);
+  await checkOutputs({ ...reportFiles(options), '--project': project }, inputs);
   const limitFile = await readLimitFile(options.limitFile);
   const { standard, class: limitClass } = standardAndClass(options, limitFile);
   const loaded = await loadBoard(file, options.sources);
@@ -121,12 +121,18 @@ async function estimateFile(file: string, options: EstimateOptions): Promise<num
   if (project !== undefined) Project.open(project, { create: true }).close();
   const progress = progressLine('Frequency');
   const startedAt = new Date();
-  const result = await runEstimate(job, progress.show).finally(progress.clear);
+  const result = await runEstimate(job, { onProgress: progress.show }).finally(progress.clear);
   const run = { startedAt: startedAt.toISOString(), document: loaded.document, settings, result };
   const durationS = (Date.now() - startedAt.getTime()) / 1000;
   const stored =
     project === undefined ? undefined : await keep(project, { ...run, durationS, note: options.note ?? '' });
-  await writeRunOutputs({ result, board: job.board, limits: chosen, ...(stored && { stored }) }, options, options);
+  const reported = {
+    result,
+    board: job.board,
+    limitLines: chosen.lines,
+    ...(stored && { startedAt: stored.startedAt }),
+  };
+  await writeReports({ kind: 'run', run: reported }, stored, options);
   if (json !== STDOUT) {
     process.stdout.write(textReport(result, { top: options.top, width: outputWidth() }));
     if (stored) process.stdout.write(`\nKept as run #${stored.run} in ${visibleText(project!)}.\n`);

@@ -5,6 +5,7 @@ import type { Project } from '../../db/project.ts';
 import { trendRuns } from '../../db/trend-runs.ts';
 import { runJob } from '../../jobs/run-job.ts';
 import type { ReportSubject } from '../../reports/report-request.ts';
+import { reportedRun } from '../../reports/reported-run.ts';
 import type { HostContext } from '../context.ts';
 
 type ReportHandlers = Pick<Handlers, 'runs.compare' | 'runs.trend' | 'report.render'>;
@@ -15,10 +16,17 @@ export function reportHandlers({ version, projects }: HostContext): ReportHandle
       comparison: comparisonOf(projects.get(projectId), before, after),
     }),
     'runs.trend': async ({ projectId }) => ({ trend: trendOf(trendRuns(projects.get(projectId))) }),
-    'report.render': async ({ projectId, subject, ...title }) => {
+    'report.render': async ({ projectId, subject, format, paper, author, dateText }) => {
       const project = projects.get(projectId);
-      const request = { ...title, project: project.info().name, programVersion: version };
-      return runJob('report', { ...request, subject: subjectOf(project, subject) });
+      const stored = subject.kind === 'run' ? project.run(subject.run) : undefined;
+      const title = {
+        project: project.info().name,
+        author,
+        dateText,
+        runNumber: stored?.run ?? null,
+        note: stored?.note ?? '',
+      };
+      return runJob('report', { subject: subjectOf(project, subject), format, paper, title, programVersion: version });
     },
   };
 }
@@ -29,7 +37,7 @@ const comparisonOf = (project: Project, before: number, after: number) =>
 function subjectOf(project: Project, subject: Received<'report.render'>['subject']): ReportSubject {
   switch (subject.kind) {
     case 'run':
-      return { kind: 'run', run: project.run(subject.run) };
+      return { kind: 'run', run: reportedRun(project.run(subject.run)) };
     case 'comparison':
       return { kind: 'comparison', comparison: comparisonOf(project, subject.before, subject.after) };
     case 'trend':

@@ -1,18 +1,15 @@
 import type { Command } from 'commander';
 import { compareRuns } from '../../../../app/compare/compare-runs.ts';
-import { comparisonCsv } from '../../../../app/report/comparison/comparison-csv.ts';
-import { comparisonHtml } from '../../../../app/report/comparison/comparison-html.ts';
 import { comparisonText } from '../../../../app/report/comparison/comparison-text.ts';
-import { jsonText } from '../../../files/json-text.ts';
 import { wholeNumberWithin } from '../../numbers.ts';
-import { checkOutputs, outputWidth, STDOUT, writeOutput } from '../../outputs.ts';
+import { checkOutputs, outputWidth, STDOUT } from '../../outputs.ts';
 import { addProjectOption, type ProjectOption, runNumber, withProject } from '../../project-file.ts';
 import {
   addReportOptions,
   type ReportOptions,
-  type RunOutputs,
-  runOutputFiles,
-  titleOf,
+  type ReportOutputs,
+  reportFiles,
+  writeReports,
 } from '../../report-outputs.ts';
 
 const HELP = `
@@ -24,7 +21,7 @@ Examples:
   quietboard compare --project valve.quietboard 2 3 --pdf b-to-c.pdf
 `;
 
-interface CompareOptions extends ProjectOption, ReportOptions, RunOutputs {
+interface CompareOptions extends ProjectOption, ReportOptions, ReportOutputs {
   readonly top: number;
 }
 
@@ -44,16 +41,14 @@ export function addCompare(program: Command): void {
 }
 
 async function compare(before: string, after: string, options: CompareOptions): Promise<void> {
-  await checkOutputs(runOutputFiles(options), [options.project]);
+  await checkOutputs(reportFiles(options), [options.project]);
   const numbers = [runNumber(before), runNumber(after)] as const;
   const { name, comparison } = await withProject(options.project, 'read', (project) => ({
     name: project.info().name,
     comparison: compareRuns(project.run(numbers[0]), project.run(numbers[1])),
   }));
-  const title = titleOf({ project: name, run: null, startedAt: comparison.after.startedAt, note: '' }, options);
-  await writeOutput(options.csv, () => comparisonCsv(comparison));
-  await writeOutput(options.html, () => comparisonHtml(comparison, title));
-  await writeOutput(options.json, () => jsonText(comparison));
+  const title = { project: name, run: null, startedAt: comparison.after.startedAt, note: '' };
+  await writeReports({ kind: 'comparison', comparison }, title, options);
   if (options.json !== STDOUT) {
     process.stdout.write(comparisonText(comparison, { top: options.top, width: outputWidth() }));
   }

@@ -44,7 +44,7 @@ async function rerun(run: number, { project: file, json }: RerunOptions): Promis
   const stored = await withProject(file, 'read', (project) => project.run(run));
   const progress = progressLine('Frequency');
   const job = estimateJob(stored.document, stored.settings, programVersion());
-  const result = await runEstimate(job, progress.show).finally(progress.clear);
+  const result = await runEstimate(job, { onProgress: progress.show }).finally(progress.clear);
   const difference = compareResults(stored.result, result);
   await writeOutput(json, () =>
     jsonText({

@@ -1,16 +1,15 @@
 import type { Command } from 'commander';
-import { chooseLimits } from '../../../../app/limits/choose.ts';
 import { textReport } from '../../../../app/report/text-report.ts';
-import { estimateJob } from '../../../jobs/estimate-job.ts';
+import { reportedRun } from '../../../reports/reported-run.ts';
 import { wholeNumberWithin } from '../../numbers.ts';
 import { checkOutputs, outputWidth, STDOUT } from '../../outputs.ts';
 import { addProjectOption, type ProjectOption, runNumber, withProject } from '../../project-file.ts';
 import {
   addReportOptions,
   type ReportOptions,
-  type RunOutputs,
-  runOutputFiles,
-  writeRunOutputs,
+  type ReportOutputs,
+  reportFiles,
+  writeReports,
 } from '../../report-outputs.ts';
 
 const HELP = `
@@ -19,7 +18,7 @@ Examples:
   quietboard show --project valve.quietboard 7 --pdf review.pdf --author "A. Designer"
 `;
 
-interface ShowOptions extends ProjectOption, ReportOptions, RunOutputs {
+interface ShowOptions extends ProjectOption, ReportOptions, ReportOutputs {
   readonly top: number;
 }
 
@@ -39,16 +38,14 @@ export function addShow(program: Command): void {
 }
 
 async function show(number: string, options: ShowOptions): Promise<void> {
-  await checkOutputs(runOutputFiles(options), [options.project]);
+  await checkOutputs(reportFiles(options), [options.project]);
   const run = runNumber(number);
   const { name, stored } = await withProject(options.project, 'read', (project) => ({
     name: project.info().name,
     stored: project.run(run),
   }));
-  const job = estimateJob(stored.document, stored.settings, stored.programVersion);
-  const limits = chooseLimits(job.limits, job.catalogue);
   const title = { project: name, run, startedAt: stored.startedAt, note: stored.note };
-  await writeRunOutputs({ result: stored.result, board: job.board, limits, stored: title }, options, options);
+  await writeReports({ kind: 'run', run: reportedRun(stored) }, title, options);
   if (options.json !== STDOUT) {
     process.stdout.write(textReport(stored.result, { top: options.top, width: outputWidth() }));
   }

@@ -1,18 +1,15 @@
 import type { Command } from 'commander';
 import { trendOf } from '../../../../app/compare/trend.ts';
-import { trendCsv } from '../../../../app/report/trend/trend-csv.ts';
-import { trendHtml } from '../../../../app/report/trend/trend-html.ts';
 import { trendText } from '../../../../app/report/trend/trend-text.ts';
 import { trendRuns } from '../../../db/trend-runs.ts';
-import { jsonText } from '../../../files/json-text.ts';
-import { checkOutputs, outputWidth, STDOUT, writeOutput } from '../../outputs.ts';
+import { checkOutputs, outputWidth, STDOUT } from '../../outputs.ts';
 import { addProjectOption, type ProjectOption, withProject } from '../../project-file.ts';
 import {
   addReportOptions,
   type ReportOptions,
-  type RunOutputs,
-  runOutputFiles,
-  titleOf,
+  type ReportOutputs,
+  reportFiles,
+  writeReports,
 } from '../../report-outputs.ts';
 
 const HELP = `
@@ -24,7 +21,7 @@ Examples:
   quietboard trend --project valve.quietboard --html trend.html
 `;
 
-type TrendOptions = ProjectOption & ReportOptions & RunOutputs;
+type TrendOptions = ProjectOption & ReportOptions & ReportOutputs;
 
 export function addTrend(program: Command): void {
   const command = program
@@ -39,18 +36,13 @@ export function addTrend(program: Command): void {
 }
 
 async function showTrend(options: TrendOptions): Promise<void> {
-  await checkOutputs(runOutputFiles(options), [options.project]);
+  await checkOutputs(reportFiles(options), [options.project]);
   const { name, trend, lastAt } = await withProject(options.project, 'read', (project) => ({
     name: project.info().name,
     trend: trendOf(trendRuns(project)),
     lastAt: project.runs({ limit: 1 })[0]?.startedAt,
   }));
-  const title = titleOf(
-    lastAt === undefined ? undefined : { project: name, run: null, startedAt: lastAt, note: '' },
-    options,
-  );
-  await writeOutput(options.csv, () => trendCsv(trend));
-  await writeOutput(options.html, () => trendHtml(trend, title));
-  await writeOutput(options.json, () => jsonText(trend));
+  const title = lastAt === undefined ? undefined : { project: name, run: null, startedAt: lastAt, note: '' };
+  await writeReports({ kind: 'trend', trend }, title, options);
   if (options.json !== STDOUT) process.stdout.write(trendText(trend, { width: outputWidth() }));
 }
