@@ -1,14 +1,14 @@
 import type { Board, Drive, Net } from '../board/board.ts';
 import { type Caveat, inputError } from '../errors.ts';
 import type { Finding } from '../estimate/result.ts';
-import type { CrossSection, Line } from '../lines/cross-section.ts';
+import type { Line } from '../lines/cross-section.ts';
 import { lineNotTemCaveat } from '../lines/validity.ts';
 import { buildNetGraph, type GraphSegment, type NetGraph } from '../network/net-graph.ts';
 import type { Network } from '../network/network.ts';
 import { viaInductanceH } from '../network/via.ts';
 import type { SegmentReference } from '../returns/reference.ts';
 import { NetCoupling } from '../structure/couplings.ts';
-import { SPEED_OF_LIGHT_M_PER_S } from '../units/constants.ts';
+import { endLengthsM, withEndCharges } from './end-charges.ts';
 import { gapFindings } from './gap-findings.ts';
 import { addNamedReturn, type TerminalEnd } from './named-return.ts';
 import type { NetContext, Terminals } from './net-context.ts';
@@ -16,7 +16,7 @@ import { addPairElements, type PlacedSection, pairEpsilonR } from './pair-elemen
 import { addPlaces } from './places.ts';
 import { planeNetChanges } from './plane-changes.ts';
 import { RuleCollector, type RuledElements } from './rule-collector.ts';
-import { type EndKind, endKinds, traceEndM } from './trace-end.ts';
+import { endKinds } from './trace-end.ts';
 import { crossSectionOver, lineWithOverrides, statedLine } from './trace-line.ts';
 
 /** A driven net ready to be solved and to radiate. */
@@ -181,28 +181,6 @@ function withEnds(network: Network, ends: readonly TerminalEnd[]): Network {
       ...ends.map(({ node, gapCapacitanceF }) => ({ node: place(node), capacitanceF: gapCapacitanceF })),
     ],
   };
-}
-
-/** Between two planes an end's charge has no moment and changes next to nothing. */
-function endLengthsM(section: CrossSection, line: Line, kinds: readonly [EndKind, EndKind]): [number, number] {
-  if (section.kind !== 'microstrip') return [0, 0];
-  const { widthM, heightM, epsilonR } = section;
-  const { z0Ohm, epsilonEff } = line;
-  const lengthM = (kind: EndKind) => traceEndM({ widthM, heightM, epsilonR, z0Ohm, epsilonEff }, kind);
-  return [lengthM(kinds[0]), lengthM(kinds[1])];
-}
-
-/** The charge of the traces' ends as capacitors at their nodes: it flows through the line like its own. */
-function withEndCharges(network: Network, sections: readonly PlacedSection[]): Network {
-  const ends = sections.flatMap(({ index, endsM: [startM, endM], z0Ohm, epsilonEff }) => {
-    const { nodeA, nodeB } = network.sections[index]!;
-    const capacitanceFPerM = Math.sqrt(epsilonEff) / (z0Ohm * SPEED_OF_LIGHT_M_PER_S);
-    return [
-      { node: nodeA, capacitanceF: capacitanceFPerM * startM },
-      { node: nodeB, capacitanceF: capacitanceFPerM * endM },
-    ].filter(({ capacitanceF }) => capacitanceF > 0);
-  });
-  return { ...network, loads: [...network.loads, ...ends] };
 }
 
 function unreferencedFraction(graph: NetGraph, references: readonly SegmentReference[]): number {

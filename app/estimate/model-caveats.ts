@@ -257,7 +257,7 @@ const FINDING_CAVEATS: readonly (readonly [code: string, pairOnly: string, solve
   [
     'plane-gap',
     'a trace runs where its reference plane is missing; its return is taken straight on, though it must go around',
-    'a trace runs where its reference plane is missing; the solved plane finds the way around on cells, where the outline is coarse',
+    'a trace runs where its reference plane is missing; the solved plane finds the way around on cells, which take a narrow slot up to one cell too long: levels come out up to 2 dB high',
   ],
   [
     'return-changes-plane',
