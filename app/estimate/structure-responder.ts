@@ -28,7 +28,7 @@ export interface StructureAnswer {
 type UnitCurrents = readonly Float64Array[];
 
 /** With no more lines than this every line is solved itself; more are interpolated between solved frequencies. */
-const DIRECT_LINES = 64;
+export const DIRECT_LINES = 64;
 /** 0.05 dB: half of what is allowed at a line. */
 const TOLERANCE = 0.006;
 const MOST_SOLUTIONS = 160;

@@ -1,6 +1,6 @@
 /** Below this a pivot counts as none: its square would underflow. Entries are of the order of 1. */
 const SMALLEST_PIVOT = 1e-140;
-/** Growth by a pivot taken over from another frequency beyond which new ones are chosen. */
+/** Growth by a pivot taken over from other values beyond which new ones are chosen. */
 const LARGEST_FACTOR = 100;
 
 /**
@@ -21,6 +21,7 @@ export class SparseLu {
   readonly #placeOf: Int32Array;
   /** The other way round: pivot row of each step. */
   readonly #rowOf: Int32Array;
+  readonly #typical: Float64Array;
   #isPlanned = false;
   #lower = new Factor(64);
   #upper = new Factor(64);
@@ -33,8 +34,13 @@ export class SparseLu {
   readonly #resume: Int32Array;
   readonly #mark: Int32Array;
 
-  constructor(columnStarts: Int32Array, rowIndices: Int32Array, order: Int32Array) {
+  /**
+   * `typical`: values whose pivots serve others too while they are large enough; what comes out for given values then does not
+   * depend on what was factored before.
+   */
+  constructor(columnStarts: Int32Array, rowIndices: Int32Array, order: Int32Array, typical: Float64Array) {
     const n = order.length;
+    this.#typical = typical;
     this.#n = n;
     this.#starts = columnStarts;
     this.#rows = rowIndices;
@@ -51,12 +57,11 @@ export class SparseLu {
     this.#mark = new Int32Array(n);
   }
 
-  /**
-   * Factors the matrix whose entries, in the order of the pattern, are `values` (re, im pairs). Pivots of an earlier call
-   * are used again while they are large enough.
-   */
+  /** Factors the matrix whose entries, in the order of the pattern, are `values` (re, im pairs). */
   factor(values: Float64Array): void {
-    if (!this.#refactor(values)) this.#factorAnew(values);
+    if (!this.#isPlanned) this.#factorAnew(this.#typical);
+    this.#isPlanned = this.#refactor(values);
+    if (!this.#isPlanned) this.#factorAnew(values);
   }
 
   #factorAnew(values: Float64Array): void {
@@ -95,7 +100,6 @@ export class SparseLu {
       lower.starts[k + 1] = lower.length;
     }
     this.#placeLeftRows();
-    this.#isPlanned = true;
   }
 
   /** Columns without a pivot (they have no lower part, so any place will do) take the rows that no column has taken. */
@@ -111,7 +115,6 @@ export class SparseLu {
 
   /** The same pattern and pivots with new values; false (and nothing usable) when a pivot has become too small. */
   #refactor(values: Float64Array): boolean {
-    if (!this.#isPlanned) return false;
     const xRe = this.#xRe;
     const xIm = this.#xIm;
     const lower = this.#lower;

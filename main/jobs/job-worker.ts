@@ -1,15 +1,12 @@
 import { parentPort, workerData } from 'node:worker_threads';
 import { AppError } from '../../app/errors.ts';
-import { solveShare } from '../../app/estimate/estimate.ts';
-import type { EstimateRequest } from '../../app/estimate/estimate-request.ts';
-import { finishEstimate } from '../../app/estimate/finish.ts';
-import type { LineLevel } from '../../app/estimate/line-level.ts';
+import { lineDetail } from '../../app/estimate/line-detail.ts';
 import { planEstimate } from '../../app/estimate/plan.ts';
 import { runFieldJob } from '../../app/fields/run-field-job.ts';
 import { chooseLimits } from '../../app/limits/choose.ts';
 import { allChecks } from '../../app/validate/all-checks.ts';
 import { openFiles } from '../files/open-files.ts';
-import type { EstimateJob, Job, JobMessage } from './job.ts';
+import type { Job, JobMessage } from './job.ts';
 
 /** Entry of the worker thread: one job, then the thread ends. */
 
@@ -23,27 +20,14 @@ function onProgress(done: number, total: number): void {
   if (nowMs - saidAtMs < PROGRESS_INTERVAL_MS && done < total) return;
   saidAtMs = nowMs;
   say({ kind: 'progress', done, total });
-  if (newLevels.length > 0) say({ kind: 'levels', levels: newLevels });
-  newLevels = [];
 }
-
-/** Found since the last word about progress. */
-let newLevels: LineLevel[] = [];
-const onLevel = (level: LineLevel): void => void newLevels.push(level);
-
-const requestOf = ({ request, limits, catalogue }: EstimateJob): EstimateRequest => ({
-  ...request,
-  limits: chooseLimits(limits, catalogue),
-});
 
 async function run(job: Job) {
   switch (job.name) {
-    case 'estimate share':
-      return solveShare(planEstimate(job.input.board, requestOf(job.input)), job.input.share, { onProgress, onLevel });
-    case 'estimate finish': {
-      const { board, levels } = job.input;
-      const request = requestOf(job.input);
-      return finishEstimate(board, request, planEstimate(board, request), levels);
+    case 'line detail': {
+      const { board, request, limits, catalogue, frequencyHz } = job.input;
+      const plan = planEstimate(board, { ...request, limits: chooseLimits(limits, catalogue) });
+      return lineDetail(plan, frequencyHz, { onProgress });
     }
     case 'field':
       return runFieldJob(job.input);

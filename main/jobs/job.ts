@@ -1,9 +1,7 @@
 import type { Board } from '../../app/board/board.ts';
+import type { LineDetail } from '../../app/contract/line-detail.ts';
 import type { ErrorCode } from '../../app/errors.ts';
-import type { WorkShare } from '../../app/estimate/estimate.ts';
 import type { EstimateRequest } from '../../app/estimate/estimate-request.ts';
-import type { LineLevel } from '../../app/estimate/line-level.ts';
-import type { EstimateResult } from '../../app/estimate/result.ts';
 import type { FieldJob, FieldResult } from '../../app/fields/field-job.ts';
 import type { LimitRequest } from '../../app/limits/choose.ts';
 import type { LimitLine } from '../../app/limits/limit-line.ts';
@@ -23,8 +21,7 @@ export interface EstimateJob {
 
 /** Long computations that run beside the host's own thread, so that it can be stopped at any moment. */
 export interface JobTypes {
-  'estimate share': { input: EstimateJob & { readonly share: WorkShare }; output: (LineLevel | null)[] };
-  'estimate finish': { input: EstimateJob & { readonly levels: readonly LineLevel[] }; output: EstimateResult };
+  'line detail': { input: EstimateJob & { readonly frequencyHz: number }; output: LineDetail };
   field: { input: FieldJob; output: FieldResult };
   validate: { input: null; output: Check[] };
   'open files': { input: { readonly files: readonly NamedFile[]; readonly onto?: RunDocument }; output: OpenedFiles };
@@ -38,7 +35,5 @@ export type Job = { [N in JobName]: { name: N; input: JobTypes[N]['input'] } }[J
 /** What the worker says. */
 export type JobMessage =
   | { kind: 'progress'; done: number; total: number }
-  /** Of an estimate's share, each time the new ones. */
-  | { kind: 'levels'; levels: readonly LineLevel[] }
   | { kind: 'done'; output: JobTypes[JobName]['output'] }
   | { kind: 'failed'; code: ErrorCode; message: string; path: string | undefined };

@@ -1,6 +1,5 @@
 import { Worker } from 'node:worker_threads';
 import { AppError } from '../../app/errors.ts';
-import type { LineLevel } from '../../app/estimate/line-level.ts';
 import type { Job, JobMessage, JobName, JobTypes } from './job.ts';
 
 /**
@@ -12,7 +11,6 @@ export function runJob<N extends JobName>(
   input: JobTypes[N]['input'],
   onProgress?: (done: number, total: number) => void,
   signal?: AbortSignal,
-  onLevels?: (levels: readonly LineLevel[]) => void,
 ): Promise<JobTypes[N]['output']> {
   return new Promise((resolve, reject) => {
     const job = { name, input } as Job;
@@ -22,7 +20,6 @@ export function runJob<N extends JobName>(
     signal?.addEventListener('abort', end, { once: true });
     worker.on('message', (message: JobMessage) => {
       if (message.kind === 'progress') onProgress?.(message.done, message.total);
-      else if (message.kind === 'levels') onLevels?.(message.levels);
       else if (message.kind === 'done') resolve(message.output as JobTypes[N]['output']);
       else reject(new AppError(message.code, message.message, message.path));
     });
