@@ -1,10 +1,10 @@
 import Database from 'better-sqlite3';
 import type { EstimateResult } from '../../app/estimate/result.ts';
 import type { DoctorFinding } from '../../app/project/project-info.ts';
+import { DamagedDocument } from './damaged-document.ts';
 import type { ReadableDb } from './database.ts';
 import {
   countOrphans,
-  DamagedDocument,
   DOCUMENT_TABLES,
   type DocumentTable,
   documentSha256,
@@ -15,7 +15,6 @@ import { getDraft } from './draft-repository.ts';
 import { getProject } from './info-repository.ts';
 import { listMeasurements } from './measurements-repository.ts';
 import { listStoredSummaries, type SummaryColumns, summaryColumns } from './runs-repository.ts';
-import { newestSchemaText, schemaText } from './schema-text.ts';
 
 /** Things amiss that a finding names; the rest is counted. */
 const MOST_NAMED = 5;
@@ -27,9 +26,6 @@ export function examine(db: ReadableDb): DoctorFinding[] {
   return [
     finding('integrity', 'the structure of the file is sound', () => integrityComplaints(db)),
     finding('links', 'every run finds its documents', () => brokenLinks(db)),
-    finding('tables', 'the tables are those of this version', () =>
-      schemaText(db) === newestSchemaText() ? [] : ['the tables differ from those this version makes'],
-    ),
     finding('documents', 'every document unpacks and is the one that was written', () =>
       DOCUMENT_TABLES.flatMap((table) => damagedDocuments(db, table, results)),
     ),

@@ -1,7 +1,9 @@
 import { createHash } from 'node:crypto';
 import { canonicalJson, exactJson, sortedKeys } from '../../app/project/exact-json.ts';
+import { DamagedDocument } from './damaged-document.ts';
 import type { ReadableDb, WritableDb } from './database.ts';
 import { packJson, unpackJson } from './packed-json.ts';
+import { soundRow } from './text-column.ts';
 
 /** Tables of documents that are kept once, however many runs name them. */
 export const DOCUMENT_TABLES = ['layout', 'sources', 'samples', 'opening', 'settings', 'result'] as const;
@@ -30,11 +32,6 @@ export function putDocument(db: WritableDb, table: DocumentTable, document: unkn
   return sha256;
 }
 
-/** A document that a project's tables name, and that is not there or not what was written. */
-export class DamagedDocument extends Error {
-  override readonly name = 'DamagedDocument';
-}
-
 /** Throws `DamagedDocument`. */
 export function getDocument(db: ReadableDb, table: DocumentTable, sha256: string): unknown {
   const row = db.prepare<[string], { body: Buffer }>(`SELECT body FROM ${table} WHERE sha256 = ?`).get(sha256);
@@ -43,7 +40,10 @@ export function getDocument(db: ReadableDb, table: DocumentTable, sha256: string
 }
 
 export const documentSha256s = (db: ReadableDb, table: DocumentTable): string[] =>
-  db.prepare<[], string>(`SELECT sha256 FROM ${table} ORDER BY sha256`).pluck().all();
+  db
+    .prepare<[], { sha256: string }>(`SELECT sha256 FROM ${table} ORDER BY sha256`)
+    .all()
+    .map((row) => soundRow(row).sha256);
 
 /** Throws `DamagedDocument` that names the block. */
 export function unpacked(name: string, body: Uint8Array): unknown {

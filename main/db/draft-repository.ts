@@ -2,12 +2,17 @@ import type { StoredDraft } from '../../app/project/draft.ts';
 import type { ReadableDb, WritableDb } from './database.ts';
 import { removeUnused } from './documents-repository.ts';
 import { getParts, type PartHashes, putParts } from './parts-repository.ts';
+import { soundRow } from './text-column.ts';
 
 type DraftRow = Pick<StoredDraft, 'version' | 'savedAt'> & PartHashes;
 
 /** Undefined before the first save. */
-export const draftRow = (db: ReadableDb): DraftRow | undefined =>
-  db.prepare<[], DraftRow>('SELECT version, saved_at AS savedAt, layout, sources, opening, settings FROM draft').get();
+export function draftRow(db: ReadableDb): DraftRow | undefined {
+  const row = db
+    .prepare<[], DraftRow>('SELECT version, saved_at AS savedAt, layout, sources, opening, settings FROM draft')
+    .get();
+  return row && soundRow(row);
+}
 
 /** Of the newest save; 0 before the first. */
 export const draftVersion = (db: ReadableDb): number => draftRow(db)?.version ?? 0;

@@ -1,7 +1,8 @@
 import type { ProjectInfo } from '../../app/project/project-info.ts';
+import { DamagedDocument } from './damaged-document.ts';
 import type { ReadableDb, WritableDb } from './database.ts';
 import { schemaVersionOf } from './migrate.ts';
-import { fromColumn, toColumn } from './text-column.ts';
+import { fromColumn, soundRow, toColumn } from './text-column.ts';
 
 /** What a new project is told about itself; numbers given so far count as used. */
 export interface NewProject {
@@ -37,7 +38,9 @@ export function insertProject(db: WritableDb, project: NewProject): void {
 }
 
 export function getProject(db: ReadableDb): NewProject {
-  const row = db.prepare<[], ProjectRow>('SELECT * FROM project').get()!;
+  const row = db.prepare<[], ProjectRow>('SELECT * FROM project').get();
+  if (row === undefined) throw new DamagedDocument('the project has no name');
+  soundRow(row);
   return {
     name: fromColumn(row.name),
     createdAt: row.created_at,
@@ -75,8 +78,10 @@ export function updateWriter(db: WritableDb, version: string): void {
 
 /** The next number of its kind: never one that was given before, even if what had it was deleted. */
 export function nextNumber(db: WritableDb, kind: 'run' | 'measurement'): number {
-  return db
+  const number = db
     .prepare<[], number>(`UPDATE project SET last_${kind} = last_${kind} + 1 RETURNING last_${kind}`)
     .pluck()
-    .get()!;
+    .get();
+  if (number === undefined) throw new DamagedDocument('the project has no name');
+  return number;
 }

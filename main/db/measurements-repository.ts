@@ -2,7 +2,7 @@ import type { Measurement } from '../../app/project/measurement.ts';
 import type { ReadableDb, WritableDb } from './database.ts';
 import { unpacked } from './documents-repository.ts';
 import { packJson } from './packed-json.ts';
-import { fromColumn, toColumn } from './text-column.ts';
+import { fromColumn, soundRow, toColumn } from './text-column.ts';
 
 interface MeasurementRow {
   readonly id: number;
@@ -27,6 +27,7 @@ export const listMeasurements = (db: ReadableDb): Measurement[] =>
   db
     .prepare<[], MeasurementRow>('SELECT * FROM measurement ORDER BY id')
     .all()
+    .map((row) => soundRow(row))
     .map(({ id, name, revision, source, points }) => ({
       id,
       name: fromColumn(name),

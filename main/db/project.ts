@@ -7,7 +7,7 @@ import type { DoctorReport, ProjectInfo, RevisionSummary } from '../../app/proje
 import type { RunSummary, StoredRun } from '../../app/project/stored-run.ts';
 import { parseWith } from '../../app/schema/parse-with.ts';
 import { programVersion } from '../cli/version.ts';
-import { ProjectConnection, writeBarrier } from './connection.ts';
+import { ProjectConnection } from './connection.ts';
 import { createProjectFile } from './create-project-file.ts';
 import type { WritableDb } from './database.ts';
 import { examine } from './doctor.ts';
@@ -18,6 +18,7 @@ import { getInfo, insertProject, nextNumber, updateName, updateWriter } from './
 import { insertMeasurement, listMeasurements, removeMeasurement } from './measurements-repository.ts';
 import type { MigrationReport } from './migrate.ts';
 import { migrations } from './migrations/migrations.ts';
+import { writeBarrier } from './open-database.ts';
 import { readProjectHeader } from './project-header.ts';
 import { type IfThere, putProjectFile } from './replace-file.ts';
 import { listRevisions } from './revisions-repository.ts';

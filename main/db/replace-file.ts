@@ -1,4 +1,4 @@
-import { existsSync, readFileSync, realpathSync } from 'node:fs';
+import { existsSync, readFileSync, statSync } from 'node:fs';
 import Database from 'better-sqlite3';
 import { AppError, fileError } from '../../app/errors.ts';
 import { fileFailure } from '../files/file-failure.ts';
@@ -12,7 +12,7 @@ import {
   writeNumbered,
 } from './place-file.ts';
 import { isProjectFile } from './project-header.ts';
-import { storeFailure } from './store-failure.ts';
+import { isDamage, storeFailure } from './store-failure.ts';
 
 /** What becomes of a file that has the name already. */
 export type IfThere = 'refuse' | 'replace' | 'keep-copy';
@@ -42,7 +42,8 @@ export async function putProjectFile(
     placeOver(temporary, target);
     return kept;
   } catch (error) {
-    throw error instanceof AppError ? error : fileFailure(file, 'written', error);
+    const failure = storeFailure(file, RELEASE_TIMEOUT_MS, error);
+    throw failure instanceof AppError ? failure : fileFailure(file, 'written', failure);
   } finally {
     removeTemporary(temporary);
   }
@@ -51,9 +52,15 @@ export async function putProjectFile(
 function refuseTarget(file: string, target: string, own: string, ifThere: IfThere): void {
   if (!existsSync(target)) return;
   if (ifThere === 'refuse') throw fileError(file, 'is there already; nothing was changed');
-  if (realpathSync(target) === realpathSync(own)) throw fileError(file, 'must be another file than the project itself');
+  if (isSameFile(target, own)) throw fileError(file, 'must be another file than the project itself');
   if (isProjectFile(target)) return;
   throw fileError(file, 'is no Quietboard project and will not be replaced: remove it first, or choose another name');
+}
+
+/** Whatever their names. */
+function isSameFile(one: string, other: string): boolean {
+  const [a, b] = [one, other].map((file) => statSync(file, { bigint: true, throwIfNoEntry: false }));
+  return a !== undefined && b !== undefined && a.dev === b.dev && a.ino === b.ino;
 }
 
 /**
@@ -77,7 +84,7 @@ function release(file: string, target: string): void {
       });
     }
     // A damaged file is what a backup is for.
-    if (code?.startsWith('SQLITE_CORRUPT') || code === 'SQLITE_NOTADB') removeSidecars(target);
+    if (isDamage(code ?? '')) removeSidecars(target);
     else throw storeFailure(file, RELEASE_TIMEOUT_MS, error);
   }
 }

@@ -1,6 +1,6 @@
 import type { RevisionSummary, SetupMargins } from '../../app/project/project-info.ts';
 import type { ReadableDb } from './database.ts';
-import { fromColumn } from './text-column.ts';
+import { fromColumn, soundRow } from './text-column.ts';
 
 interface SetupRow {
   readonly board: string;
@@ -18,6 +18,8 @@ interface SetupRow {
   readonly last_margin_db: number | null;
   readonly lowest_margin_db: number | null;
 }
+
+const NULLABLE = ['last_margin_db', 'lowest_margin_db'] as const;
 
 /** By the first run of each: the order in which the board was changed. */
 export function listRevisions(db: ReadableDb): RevisionSummary[] {
@@ -37,6 +39,7 @@ export function listRevisions(db: ReadableDb): RevisionSummary[] {
     .all();
   const revisions = new Map<string, SetupRow[]>();
   for (const row of rows) {
+    soundRow(row, NULLABLE);
     const key = JSON.stringify([row.board, row.revision, row.layout]);
     const setups = revisions.get(key);
     if (setups) setups.push(row);

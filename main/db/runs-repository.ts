@@ -4,7 +4,7 @@ import type { RunSummary, StoredRun } from '../../app/project/stored-run.ts';
 import type { ReadableDb, WritableDb } from './database.ts';
 import { getDocument, putDocument, removeUnused } from './documents-repository.ts';
 import { getParts, type PartHashes, putParts } from './parts-repository.ts';
-import { fromColumn, toColumn } from './text-column.ts';
+import { fromColumn, soundRow, toColumn } from './text-column.ts';
 
 /** A finished run to be kept. */
 export interface NewRun extends Draft {
@@ -40,6 +40,8 @@ interface RunRow extends PartHashes {
   readonly program_version: string;
   readonly note: string;
 }
+
+const NULLABLE = ['worst_frequency_hz', 'worst_margin_db'] as const;
 
 const summaryOf = (row: RunRow): RunSummary => ({
   run: row.run,
@@ -114,7 +116,7 @@ export const listRunEntries = (db: ReadableDb): RunEntry[] =>
        FROM run ORDER BY run`,
     )
     .all()
-    .map((entry) => ({ ...entry, note: fromColumn(entry.note) }));
+    .map((entry) => ({ ...soundRow(entry), note: fromColumn(entry.note) }));
 
 /** What the columns say, by number: to be held against the results. */
 export const listStoredSummaries = (db: ReadableDb): (SummaryColumns & Pick<RunRow, 'run' | 'result'>)[] =>
@@ -127,7 +129,7 @@ export function listRuns(db: ReadableDb, { revision, limit }: RunFilter = {}): R
       'SELECT * FROM run WHERE @revision IS NULL OR revision = @revision ORDER BY run DESC LIMIT @limit',
     )
     .all({ revision: revision === undefined ? null : toColumn(revision), limit: limit ?? -1 })
-    .map(summaryOf);
+    .map((row) => summaryOf(soundRow(row, NULLABLE)));
 }
 
 const rowOf = (db: ReadableDb, run: number): RunRow | undefined =>
@@ -138,7 +140,7 @@ export function getRun(db: ReadableDb, run: number): StoredRun | undefined {
   const row = rowOf(db, run);
   if (row === undefined) return undefined;
   return {
-    ...summaryOf(row),
+    ...summaryOf(soundRow(row, NULLABLE)),
     durationS: row.duration_s,
     ...getParts(db, row),
     result: getDocument(db, 'result', row.result) as EstimateResult,

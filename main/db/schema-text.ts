@@ -1,23 +1,17 @@
 import Database from 'better-sqlite3';
 import type { ReadableDb } from './database.ts';
-import { migrate } from './migrate.ts';
-import { migrations } from './migrations/migrations.ts';
+import { type Migration, migrate } from './migrate.ts';
 
-/** Every table and index as SQL, by name. */
-export function schemaText(db: ReadableDb): string {
-  const statements = db
-    .prepare<[], string>('SELECT sql FROM sqlite_schema WHERE sql IS NOT NULL ORDER BY type DESC, name')
-    .pluck()
-    .all();
-  return `${statements.join(';\n\n')};\n`;
-}
+/** Every table and index as SQL: tables first, by name. */
+export const schemaStatements = (db: ReadableDb): string[] =>
+  db.prepare<[], string>('SELECT sql FROM sqlite_schema WHERE sql IS NOT NULL ORDER BY type DESC, name').pluck().all();
 
-/** The tables this version makes. */
-export function newestSchemaText(): string {
+/** The tables that the steps make of nothing. */
+export function madeBy(steps: readonly Migration[]): string[] {
   const db = new Database(':memory:');
   try {
-    migrate(db, 'new project', migrations, () => '');
-    return schemaText(db as ReadableDb);
+    migrate(db, 'new project', steps, () => '');
+    return schemaStatements(db as ReadableDb);
   } finally {
     db.close();
   }

@@ -1,11 +1,11 @@
 import { exactJson } from '../../app/project/exact-json.ts';
 import type { ReadableDb, WritableDb } from './database.ts';
-import { fromColumn, toColumn } from './text-column.ts';
+import { fromColumn, jsonOfColumn, soundRow, toColumn } from './text-column.ts';
 
 /** Undefined for a key that was never put. */
 export function getUiState(db: ReadableDb, key: string): unknown {
-  const value = db.prepare<[string], string>('SELECT value FROM ui_state WHERE key = ?').pluck().get(toColumn(key));
-  return value === undefined ? undefined : (JSON.parse(value) as unknown);
+  const row = db.prepare<[string], { value: string }>('SELECT value FROM ui_state WHERE key = ?').get(toColumn(key));
+  return row === undefined ? undefined : jsonOfColumn(soundRow(row).value);
 }
 
 /** `undefined` removes the key. Throws `input` for what JSON cannot hold. */
@@ -19,4 +19,5 @@ export const listUiState = (db: ReadableDb): { key: string; value: unknown }[] =
   db
     .prepare<[], { key: string; value: string }>('SELECT key, value FROM ui_state ORDER BY key')
     .all()
-    .map(({ key, value }) => ({ key: fromColumn(key), value: JSON.parse(value) as unknown }));
+    .map((row) => soundRow(row))
+    .map(({ key, value }) => ({ key: fromColumn(key), value: jsonOfColumn(value) }));
