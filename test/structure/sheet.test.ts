@@ -188,8 +188,9 @@ describe('choice of cells', () => {
     expect(cellOf(notched(0.007, 0.3e-3))).toBe(plain);
     expect(cellOf(notched(0.03, 25e-3))).toBe(plain);
     // From edge to edge there is no end to go around.
-    const halves = [0, 0.0502].map((xM) => ({ ringM: rectangleRing(xM, 0, xM + 0.0498, 0.06), cutoutsM: [] }));
-    expect(chooseGrid(halves, 1e9).cellM).toBe(plain);
+    const halves = [0, 0.0502].map((xM) => ({ ringM: rectangleRing(xM, 0, xM + 0.0498, 0.03), cutoutsM: [] }));
+    expect(openSlotsM(sheetOf(halves, 0.1, 0.03, 5e-3))).toEqual([]);
+    expect(chooseGrid(halves, 1e9).cellM).toBe(chooseGrid([rectangle(0.1, 0.03)], 1e9).cellM);
     // Turned, at the inner edge of an L, aslant.
     const turned = notched(0.03, 0.3e-3).ringM.map(([x, y]): PointM => [y, x]);
     expect(cellOf({ ringM: turned, cutoutsM: [] })).toBeCloseTo(cellOf(notched(0.03, 0.3e-3)), 12);
