@@ -1,11 +1,6 @@
 import type { Radiator } from '../fields/element-set.ts';
-import {
-  type CylinderPlan,
-  centreDistanceM,
-  cylinderPlan,
-  fieldOnCylinder,
-  SAMPLE_STRIDE,
-} from '../site/cylinder-field.ts';
+import { SAMPLE_STRIDE } from '../site/antenna-sample.ts';
+import { type CylinderPlan, centreDistanceM, cylinderPlan, fieldOnCylinder } from '../site/cylinder-field.ts';
 import type { Component } from '../site/power-map.ts';
 import { chebyshevWeights, trigonometricWeights } from '../site/sampling.ts';
 import type { ScanRequest } from '../site/scan.ts';

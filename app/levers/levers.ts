@@ -29,6 +29,17 @@ export type LeverAnswer =
 /** Kept responses may take this much memory; more is refused. */
 export const MOST_KEPT_BYTES = 1 << 30;
 
+interface Prepared {
+  readonly board: Board;
+  readonly request: LeverRequest;
+  readonly range: JudgedRange;
+  readonly scene: Scene;
+  readonly ports: ReadonlyMap<string, NetPorts>;
+  /** In order of frequency. */
+  readonly lines: readonly KeptLine[];
+  readonly bytes: number;
+}
+
 /** Lines of one frequency are found again within this, relative: harmonics of different waveforms that meet are one. */
 const SAME_FREQUENCY = 3e-9;
 
@@ -54,21 +65,16 @@ export class Levers {
   readonly #scene: Scene;
   readonly #ports: ReadonlyMap<string, NetPorts>;
   readonly #lines: readonly KeptLine[];
+  readonly keptBytes: number;
 
-  constructor(
-    board: Board,
-    request: LeverRequest,
-    range: JudgedRange,
-    scene: Scene,
-    ports: ReadonlyMap<string, NetPorts>,
-    lines: readonly KeptLine[],
-  ) {
+  constructor({ board, request, range, scene, ports, lines, bytes }: Prepared) {
     this.#board = board;
     this.#request = request;
     this.#range = range;
     this.#scene = scene;
     this.#ports = ports;
     this.#lines = lines;
+    this.keptBytes = bytes;
   }
 
   /** Throws `input` for sources that cannot be estimated at all. */
@@ -188,7 +194,10 @@ export function prepareLevers(
     return new KeptLine(scene, unitLines, responder);
   });
   hooks.onProgress?.(table.length, table.length);
-  return new Levers(board, request, range, scene, ports, lines);
+  const levers = new Levers({ board, request, range, scene, ports, lines, bytes });
+  // The board as it is: what cannot be estimated is refused here, and the first change starts from its maxima.
+  levers.try(board, request);
+  return levers;
 }
 
 function unitLinesOf({ frequencyHz, lines }: FrequencyLines, ports: ReadonlyMap<string, NetPorts>): UnitLines {

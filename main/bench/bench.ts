@@ -2,6 +2,9 @@ import { writeFileSync } from 'node:fs';
 import { cpus, totalmem } from 'node:os';
 import type { BenchResult } from './bench-result.ts';
 import { factorBench } from './factor-bench.ts';
+import { killBench } from './kill-bench.ts';
+import { leversBench } from './levers-bench.ts';
+import { projectBench } from './project-bench.ts';
 import { scanBench } from './scan-bench.ts';
 import { largeStructureBench, smallStructureBench } from './structure-bench.ts';
 
@@ -10,6 +13,9 @@ const BENCHES: readonly (() => BenchResult | Promise<BenchResult>)[] = [
   scanBench,
   smallStructureBench,
   largeStructureBench,
+  leversBench,
+  projectBench,
+  killBench,
 ];
 
 async function main(): Promise<void> {
