@@ -58,11 +58,8 @@ function Findings({ findings }: Pick<ImportSummary, 'findings'>): ReactElement {
   return (
     <Disclosure title={title}>
       <ul className={css.findings}>
-        {findings.map(({ code, message, count }) => (
-          <li key={`${code} ${message}`}>
-            {inLocale(message)}
-            {count > 1 && ` (${numberText(count)} times)`}
-          </li>
+        {findings.map(({ code, message }) => (
+          <li key={`${code} ${message}`}>{inLocale(message)}</li>
         ))}
       </ul>
     </Disclosure>

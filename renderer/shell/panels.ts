@@ -1,6 +1,7 @@
 import { ledgerPanel } from '../ledger/index.ts';
 import { reportPanel } from '../report/index.ts';
+import { rangeStripPanel, sharesPanel, spectrumPanel } from '../spectrum/index.ts';
 import type { Panel } from './panel.ts';
 
 /** All parts of the window, in the order of their tabs. A part adds its own line. */
-export const PANELS: readonly Panel[] = [ledgerPanel, reportPanel];
+export const PANELS: readonly Panel[] = [rangeStripPanel, spectrumPanel, sharesPanel, ledgerPanel, reportPanel];

@@ -1,3 +1,4 @@
+import type { Output } from '../../app/contract/procedures.ts';
 import { runSettingsSchema } from '../../app/project/run-settings.ts';
 import { call } from '../api/api.ts';
 import { EMPTY_PROJECT, getState, type Project, setState } from './app-store.ts';
@@ -111,28 +112,37 @@ async function showNewestRun(): Promise<void> {
 /** Board files, layouts, sources files and waveform tables, chosen or dropped. Without a project a new one is begun. */
 export async function openFiles(files: readonly File[]): Promise<void> {
   if (files.length === 0) return;
-  if (getState().project === null) await openProject();
+  const isBegun = getState().project === null;
+  if (isBegun) await openProject();
   const { projectId } = getState().project!;
-  const opened = await runJob(
-    'open',
-    `Reading ${files.length === 1 ? files[0]!.name : `${files.length} files`}`,
-    async (jobId) => {
-      const uploadIds: string[] = [];
-      for (const file of files) {
-        const bytes = new Uint8Array(await file.arrayBuffer());
-        uploadIds.push((await call('file.upload', { name: file.name, bytes })).uploadId);
-      }
-      const present = getState().history?.present;
-      return call('board.open', { projectId, jobId, uploadIds, ...(present && { onto: documentRefOf(present) }) });
-    },
+  const names = files.map((file) => file.name).join(', ');
+  const { baseId, base, sources, summary } = await runJob('open', `Reading ${names}`, (jobId) =>
+    readFiles(projectId, jobId, files),
   );
   if (getState().project?.projectId !== projectId) return;
-  const { baseId, base, sources, summary } = opened;
   const before = getState().history?.present;
   const settings = before?.settings ?? runSettingsSchema.parse({});
-  showWork(`Open ${files.map((file) => file.name).join(', ')}`, { baseId, sources, settings }, base);
+  showWork(`Open ${names}`, { baseId, sources, settings }, base);
   if (baseId !== before?.baseId) {
     clearSelection();
     setState({ importSummary: summary ?? null });
   }
+  if (isBegun) await renameProject(projectName(base.layout.name, files, summary !== undefined));
+}
+
+/** A begun project is called as its board; layout programs often call every board the same, so a layout's file counts. */
+function projectName(boardName: string, files: readonly File[], isLayout: boolean): string {
+  const ofFile = files[0]!.name.replace(/(?:\.(?:board|sources))?\.\w+$/, '');
+  return (isLayout ? ofFile : boardName).slice(0, 200) || 'Untitled';
+}
+
+/** The document that the files make, upon the present one where there is one. */
+async function readFiles(projectId: string, jobId: string, files: readonly File[]): Promise<Output<'board.open'>> {
+  const uploadIds: string[] = [];
+  for (const file of files) {
+    const bytes = new Uint8Array(await file.arrayBuffer());
+    uploadIds.push((await call('file.upload', { name: file.name, bytes })).uploadId);
+  }
+  const present = getState().history?.present;
+  return call('board.open', { projectId, jobId, uploadIds, ...(present && { onto: documentRefOf(present) }) });
 }

@@ -13,7 +13,7 @@ describeInBrowser('accessibility of the window', () => {
   });
 
   afterAll(async () => {
-    await served.close();
+    await served?.close();
   });
 
   const overlays: readonly (readonly [name: string, open: (page: Page) => Promise<void>])[] = [

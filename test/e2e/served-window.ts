@@ -7,10 +7,13 @@ import { type Browser, type BrowserContextOptions, chromium, type Page } from 'p
 import { describe } from 'vitest';
 import { findBrowser } from '../../main/web/find-browser.ts';
 import { PROGRAM } from '../support/run-cli.ts';
+import type { NamedFile } from './small-board.ts';
 
 /** The built program, serving a folder of its own, and a browser before it: what a user has. */
 
 const BROWSER = findBrowser();
+/** `QUIETBOARD_PROGRAM` names another build to be tested, for example an installed one. */
+const TESTED = process.env.QUIETBOARD_PROGRAM ?? PROGRAM;
 
 /** Tests that need a browser of the Chromium family; says when there is none. */
 export function describeInBrowser(name: string, tests: () => void): void {
@@ -43,7 +46,7 @@ export class ServedWindow {
 
   /** `home`: the program's folder of an earlier start, to go on with. */
   static async start(home: string = mkdtempSync(join(tmpdir(), 'quietboard-e2e-'))): Promise<ServedWindow> {
-    const program = spawn(process.execPath, [PROGRAM, 'serve', '--no-open'], {
+    const program = spawn(process.execPath, [TESTED, 'serve', '--no-open'], {
       env: { ...process.env, QUIETBOARD_HOME: home },
     });
     const address = await addressOf(program);
@@ -66,19 +69,36 @@ export class ServedWindow {
     });
     page.on('pageerror', (error) => complaints.push(String(error)));
     page.on('requestfailed', (request) => complaints.push(`${request.url()} ${request.failure()?.errorText}`));
+    // A listener of its own from the start: without one, the first choice could reach the system's dialog.
+    page.on('filechooser', () => {});
     await page.goto(this.address);
     await page.getByRole('main').waitFor();
     return { page, complaints };
   }
 
-  /** Ends program and browser; the program's folder is removed unless it is to be gone on with. */
-  async close(keepsHome = false): Promise<void> {
-    await this.#browser.close();
-    const ended = new Promise((resolve) => this.#program.once('close', resolve));
-    this.#program.kill('SIGINT');
-    await ended;
-    if (!keepsHome) rmSync(this.home, { recursive: true });
+  /** Ends program and browser and removes the program's folder. */
+  async close(): Promise<void> {
+    await this.#end('SIGINT');
+    rmSync(this.home, { recursive: true });
   }
+
+  /** Ends the program as a power cut does; its folder stays, to be started with again. */
+  kill(): Promise<void> {
+    return this.#end('SIGKILL');
+  }
+
+  async #end(signal: NodeJS.Signals): Promise<void> {
+    const ended = new Promise((resolve) => this.#program.once('close', resolve));
+    this.#program.kill(signal);
+    await ended;
+    await this.#browser.close();
+  }
+}
+
+/** Chooses files by the window's own key, as a user does in the system's dialog. */
+export async function chooseFiles(page: Page, files: readonly NamedFile[]): Promise<void> {
+  const [chooser] = await Promise.all([page.waitForEvent('filechooser'), page.keyboard.press('Control+o')]);
+  await chooser.setFiles([...files]);
 }
 
 function addressOf(program: ChildProcess): Promise<string> {

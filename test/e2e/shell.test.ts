@@ -1,6 +1,6 @@
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, it } from 'vitest';
-import { describeInBrowser, picture, ServedWindow } from './served-window.ts';
+import { chooseFiles, describeInBrowser, picture, ServedWindow } from './served-window.ts';
 import { jsonFile, otherSources, smallBoard } from './small-board.ts';
 
 /** The window's frame from outside. Oracle: what the interface's brief promises a user, written out. */
@@ -13,15 +13,10 @@ describeInBrowser('the window', () => {
   });
 
   afterAll(async () => {
-    await served.close();
+    await served?.close();
   });
 
   const status = (page: Page) => page.getByRole('contentinfo');
-
-  async function chooseFiles(page: Page, files: ReturnType<typeof smallBoard>[]): Promise<void> {
-    const [chooser] = await Promise.all([page.waitForEvent('filechooser'), page.keyboard.press('Control+o')]);
-    await chooser.setFiles([...files]);
-  }
 
   async function openSmallBoard(page: Page): Promise<void> {
     await chooseFiles(page, [smallBoard()]);
@@ -120,7 +115,7 @@ describeInBrowser('the window', () => {
     await page.getByText('is opened in a new project').waitFor();
     await page.screenshot({ path: picture('drop') });
     await main.dispatchEvent('drop', { dataTransfer: carried });
-    await page.getByRole('banner').getByText('Greenhouse lamp').first().waitFor();
+    await page.getByRole('heading', { name: 'Greenhouse lamp' }).waitFor();
     expect(await page.getByText('is opened in a new project').count()).toBe(0);
   });
 

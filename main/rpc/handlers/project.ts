@@ -18,9 +18,11 @@ type ProjectHandlers = Pick<
 
 export function projectHandlers(context: HostContext): ProjectHandlers {
   const { projects, projectsFolder, state, events } = context;
+  const listRecent = ({ file, name }: Output<'project.info'>['project']) =>
+    state.addRecent({ file, name, openedAt: new Date().toISOString() });
   const open = async (file: string, create: boolean): Promise<Output<'project.open'>> => {
     const project = projects.open(file, create);
-    await state.addRecent({ file: project.file, name: project.name, openedAt: new Date().toISOString() });
+    await listRecent(project);
     return { project };
   };
   return {
@@ -33,6 +35,7 @@ export function projectHandlers(context: HostContext): ProjectHandlers {
     'project.info': async ({ projectId }) => ({ project: projects.answer(projectId) }),
     'project.rename': async ({ projectId, name }) => {
       projects.get(projectId).setName(name);
+      await listRecent(projects.answer(projectId));
       events.publish('project.changed', { projectId, what: 'info', clientId: null });
       return {};
     },
