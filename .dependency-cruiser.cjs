@@ -24,7 +24,13 @@ module.exports = {
       to: { path: '^renderer/(components|shell|commands)/' },
     },
     { name: 'no-cycles', severity: 'error', from: {}, to: { circular: true } },
-    { name: 'nothing-unresolved', severity: 'error', from: {}, to: { couldNotResolve: true } },
+    {
+      name: 'nothing-unresolved',
+      comment: "pdfmake/interfaces is a file of pdfmake's type package alone",
+      severity: 'error',
+      from: {},
+      to: { couldNotResolve: true, pathNot: '^pdfmake/interfaces' },
+    },
   ],
   options: {
     doNotFollow: { path: 'node_modules' },

@@ -50,6 +50,3 @@ export function shortName(name: string, length = NAME_LENGTH): string {
   const head = Math.ceil((length - 1) * 0.6);
   return `${characters.slice(0, head).join('')}…${characters.slice(head + 1 - length).join('')}`;
 }
-
-/** A name in running text: kept apart from the direction of its surroundings. */
-export const nameMarkup = (name: string, length?: number): Markup => markup`<bdi>${shortName(name, length)}</bdi>`;

@@ -24,11 +24,7 @@ export function comparisonDocument(comparison: Comparison, title: ReportTitle, p
   const room = roomOn(paper);
   const sections = [...comparisonSections(comparison, LENGTH), cautionsSection()];
   const content: Content[] = [
-    ...titleBlock(
-      COMPARISON_TITLE,
-      [...projectFacts(title), ...comparisonFacts(comparison, title.dateText === '' ? undefined : title.dateText)],
-      room,
-    ),
+    ...titleBlock(COMPARISON_TITLE, [...projectFacts(title), ...comparisonFacts(comparison, undefined)], room),
     verdictBox(comparison.headline, comparisonSummary(comparison)),
     ...comparisonWarnings(comparison).map(warningLine),
     ...sections.flatMap((section) => sectionContent(section, room)),

@@ -27,9 +27,8 @@ export function trendDocument(trend: Trend, title: ReportTitle, paper: Paper): T
       : []),
     cautionsSection(),
   ];
-  const date = title.dateText === '' ? [] : [{ term: 'Date', value: title.dateText }];
   const content: Content[] = [
-    ...titleBlock(TREND_TITLE, [...projectFacts(title), ...date], room),
+    ...titleBlock(TREND_TITLE, projectFacts(title), room),
     ...sections.flatMap((section) => sectionContent(section, room)),
   ];
   return framedDocument(frameOf(trend, title, paper), content);

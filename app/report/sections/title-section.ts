@@ -41,6 +41,7 @@ export const runTitleFacts = (result: EstimateResult, board: Board, title: Repor
 export const projectFacts = (title: ReportTitle): Fact[] => [
   { term: 'Project', value: said(title.project, 60) },
   { term: 'Author', value: said(title.author, 60) },
+  { term: 'Date', value: said(title.dateText, 40) },
   ...noteFact(title),
 ];
 

@@ -1,4 +1,5 @@
 import { type Column, name, note, paragraph, type Section, strong, type Text, table } from '../blocks.ts';
+import { countText } from '../format.ts';
 import type { ValidationSummary } from '../validation-summary.ts';
 
 const MOST_ROWS = 60;
@@ -41,7 +42,7 @@ export function validationSection(summary: ValidationSummary | null): Section {
     blocks: [
       paragraph(
         `quietboard ${programVersion}: `,
-        strong(`${total('pass')} checks pass, ${total('fail')} fail`),
+        strong(`${countText(total('pass'), 'check passes', 'checks pass')}, ${total('fail')} fail`),
         `, ${total('info')} are for information. Each compares a number from outside with what the program's own kernels compute.`,
       ),
       table(COLUMNS, rows),
