@@ -114,6 +114,8 @@ describe('validation', () => {
     const text = textOf(validationSection(summarizeChecks(rows, '9.9')));
     expect(text).toContain('quietboard 9.9: 1 check passes, 1 fail , 1 are for information');
     expect(text).toContain('novel derived, seen 1 1 1');
-    expect(textOf(validationSection(null))).toContain('Not run for this report');
+    for (const nothing of [null, summarizeChecks([], '9.9')]) {
+      expect(textOf(validationSection(nothing))).toContain('Not run for this report');
+    }
   });
 });

@@ -15,7 +15,7 @@ const COLUMNS: readonly Column[] = [
 /** How the program's own published checks came out; how to run them when that was not asked for. */
 export function validationSection(summary: ValidationSummary | null): Section {
   const title = 'Validation of the program';
-  if (summary === null) {
+  if (summary === null || summary.groups.length === 0) {
     return {
       title,
       blocks: [
