@@ -1,6 +1,7 @@
 import { type BrowserWindow, dialog } from 'electron';
 import type { Dialogs } from '../rpc/context.ts';
 import { PROJECT_ENDING } from '../rpc/new-project-file.ts';
+import { fileNameOf } from './file-name.ts';
 
 const PROJECTS = { name: 'Quietboard project', extensions: [PROJECT_ENDING.slice(1)] };
 
@@ -22,6 +23,3 @@ export function systemDialogs(window: () => BrowserWindow | null): Dialogs {
     saveFile: (name) => save({ defaultPath: fileNameOf(name) }),
   };
 }
-
-/** A name as the start of a file dialog: no folders, none of the signs that some system forbids. */
-export const fileNameOf = (name: string): string => name.replace(/[/\\:*?"<>|\p{Cc}]/gu, '-');
