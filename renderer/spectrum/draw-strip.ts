@@ -127,7 +127,7 @@ function drawZoom(
   context.fillStyle = palette.color('accent');
   context.fillRect(Math.min(from, to), 0, Math.abs(to - from), size.heightPx - FOOT_PX);
   context.globalAlpha = 1;
-  for (const edge of [from, to]) line(context, palette.color('accent'), 1, edge, 0, size.heightPx - FOOT_PX);
+  for (const edge of [from, to]) vertical(context, palette.color('accent'), 1, edge, 0, size.heightPx - FOOT_PX);
 }
 
 function drawShown(
