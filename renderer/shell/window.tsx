@@ -1,5 +1,6 @@
 import { type ReactElement, useEffect } from 'react';
 import { I18nProvider } from 'react-aria-components';
+import { EmptyState } from '../components/notes.tsx';
 import { Toasts } from '../components/toasts.tsx';
 import { LOCALE } from '../i18n/format.ts';
 import { useApp } from '../state/app-store.ts';
@@ -21,7 +22,6 @@ export function Window(): ReactElement {
   const theme = useThemeChoice();
   useEffect(() => applyTheme(theme), [theme]);
   const project = useApp((state) => state.project);
-  const hasDocument = useApp(({ history }) => history !== null);
   useEffect(() => {
     document.title = project === null ? 'Quietboard' : `${project.name} – Quietboard`;
   }, [project]);
@@ -30,7 +30,9 @@ export function Window(): ReactElement {
       <DropTarget>
         <div className={css.window}>
           <Header />
-          <main className={css.main}>{hasDocument ? <Workplace /> : <StartPage />}</main>
+          <main className={css.main}>
+            <Middle />
+          </main>
           <StatusBar />
         </div>
       </DropTarget>
@@ -38,4 +40,11 @@ export function Window(): ReactElement {
       <Toasts queue={notices} />
     </I18nProvider>
   );
+}
+
+function Middle(): ReactElement {
+  const hasDocument = useApp(({ history }) => history !== null);
+  const isOpening = useApp((state) => state.isOpening);
+  if (hasDocument) return <Workplace />;
+  return isOpening ? <EmptyState title="Opening the project" /> : <StartPage />;
 }

@@ -88,6 +88,8 @@ export interface AppState {
   readonly info: AppInfo | null;
   readonly recent: readonly RecentProject[];
   readonly project: Project | null;
+  /** Its draft and its runs are being read. */
+  readonly isOpening: boolean;
   /** Newest first, without those about to be deleted. */
   readonly runs: readonly RunSummary[];
   /** Deleted for the eye; really gone when the time to undo is over. */
@@ -152,6 +154,7 @@ export const useApp = create<AppState>()(() => ({
   info: null,
   recent: [],
   project: null,
+  isOpening: false,
   jobs: [],
   remembered: new Map<string, unknown>(),
   ...EMPTY_PROJECT,

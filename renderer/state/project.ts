@@ -6,7 +6,7 @@ import { needBase, showWork } from './document.ts';
 import { forgetDraft, saveDraft, takeSaved } from './draft.ts';
 import { runJob } from './jobs.ts';
 import { leaveRemembered, loadRemembered } from './remembered.ts';
-import { loadRun } from './result.ts';
+import { loadRun, showResult } from './result.ts';
 import { refreshMeasurements, refreshRuns } from './runs.ts';
 import { clearSelection } from './selection.ts';
 import { documentRefOf, sameWork } from './work.ts';
@@ -79,9 +79,13 @@ async function leaveProject(): Promise<void> {
 
 export async function showProject(project: Project): Promise<void> {
   if (getState().project?.projectId !== project.projectId) await leaveProject();
-  setState({ ...EMPTY_PROJECT, project });
-  await Promise.all([loadRemembered('project'), refreshRuns(), refreshMeasurements(), showDraft(project)]);
-  await showNewestRun();
+  setState({ ...EMPTY_PROJECT, project, isOpening: true });
+  try {
+    await Promise.all([loadRemembered('project'), refreshRuns(), refreshMeasurements(), showDraft(project)]);
+    await showNewestRun();
+  } finally {
+    setState({ isOpening: false });
+  }
 }
 
 async function showDraft({ projectId }: Project): Promise<void> {
@@ -106,7 +110,7 @@ async function showNewestRun(): Promise<void> {
   await needBase(project.projectId, document.baseId);
   const stored = { ...document, settings };
   const work = sameWork(stored, history.present) ? history.present : stored;
-  setState({ result: { result, work, run: newest.run } });
+  showResult({ result, work, run: newest.run });
 }
 
 /** Board files, layouts, sources files and waveform tables, chosen or dropped. Without a project a new one is begun. */

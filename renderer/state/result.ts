@@ -2,7 +2,7 @@ import type { Caveat } from '../../app/errors.ts';
 import { AppError } from '../../app/errors.ts';
 import type { EstimateResult, ResultPoint } from '../../app/estimate/result.ts';
 import { call } from '../api/api.ts';
-import { type AppState, getState, setState, type Trial } from './app-store.ts';
+import { type AppState, getState, type ShownResult, setState, type Trial } from './app-store.ts';
 import { editLayout, needBase, showWork } from './document.ts';
 import { jobOf, runJob, stopJob } from './jobs.ts';
 import { failureText } from './notices.ts';
@@ -65,8 +65,7 @@ export async function estimate(note = ''): Promise<void> {
       }),
     );
     if (getState().project?.projectId !== projectId) return;
-    setState({ result: { result, work, run }, trial: null, detail: { kind: 'none' } });
-    keepSelectionWith(result);
+    showResult({ result, work, run });
     await refreshRuns();
   } catch (error) {
     if (!(error instanceof AppError && error.code === 'cancelled')) setState({ failure: failureText(error) });
@@ -76,11 +75,13 @@ export async function estimate(note = ''): Promise<void> {
 }
 
 /** The chosen line stays when the new result has it too, else the worst one is chosen. */
-function keepSelectionWith(result: EstimateResult): void {
+export function showResult(result: ShownResult): void {
+  setState({ result, trial: null, detail: { kind: 'none' } });
+  const { points, worst } = result.result;
   const { lineHz, detector } = getState().selection;
-  const isThere = result.points.some((point) => point.frequencyHz === lineHz);
+  const isThere = points.some((point) => point.frequencyHz === lineHz);
   if (isThere) selectLine(lineHz, detector);
-  else selectLine(result.worst?.frequencyHz ?? null);
+  else selectLine(worst?.frequencyHz ?? null);
 }
 
 /** Stops what runs longest: the estimate, or else any other job. */
@@ -102,8 +103,7 @@ export async function loadRun(run: number): Promise<void> {
   await needBase(projectId, document.baseId);
   const work = { ...document, settings };
   showWork(`Open run ${run}`, work);
-  setState({ result: { result, work, run }, trial: null, detail: { kind: 'none' } });
-  keepSelectionWith(result);
+  showResult({ result, work, run });
 }
 
 /** Changes from now on are compared against what is shown now. */
@@ -119,8 +119,8 @@ export function discardChanges(): void {
   const { kept } = getState();
   if (kept === null) return;
   showWork('Let the change go', kept.work);
-  setState({ result: kept, kept: null, trial: null, detail: { kind: 'none' } });
-  keepSelectionWith(kept.result);
+  setState({ kept: null });
+  showResult(kept);
 }
 
 /** The present state under a revision's name, estimated in full and kept in the ledger. */

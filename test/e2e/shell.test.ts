@@ -115,7 +115,7 @@ describeInBrowser('the window', () => {
     await page.getByText('is opened in a new project').waitFor();
     await page.screenshot({ path: picture('drop') });
     await main.dispatchEvent('drop', { dataTransfer: carried });
-    await page.getByRole('heading', { name: 'Greenhouse lamp' }).waitFor();
+    await page.getByRole('heading', { name: 'Greenhouse lamp', exact: true }).waitFor();
     expect(await page.getByText('is opened in a new project').count()).toBe(0);
   });
 

@@ -30,7 +30,7 @@ describeInBrowser('two windows on one project', () => {
     const { page: one } = await served.open();
     await chooseFiles(one, [smallBoard()]);
     await saved(one).waitFor();
-    await one.getByRole('heading', { name: 'Greenhouse lamp' }).waitFor();
+    await one.getByRole('heading', { name: 'Greenhouse lamp', exact: true }).waitFor();
     const { page: two } = await served.open();
     await two.getByRole('button', { name: 'Greenhouse lamp', exact: true }).click();
     await saved(two).waitFor();
@@ -66,7 +66,7 @@ describeInBrowser('two windows on one project', () => {
     const { page: again } = await served.open();
     const project = again.getByRole('button', { name: 'Greenhouse lamp', exact: true });
     await project.first().click();
-    await again.getByRole('heading', { name: 'Greenhouse lamp' }).waitFor();
+    await again.getByRole('heading', { name: 'Greenhouse lamp', exact: true }).waitFor();
     await saved(again).waitFor();
   });
 });
