@@ -52,10 +52,7 @@ export function buildScene(board: Board, site: SiteRequest, maxHz: number, mode:
     ...[...loops.values()].map(({ name, elements }) => [`loop ${name}`, elements] as const),
   ];
   for (const [path, elements] of named) requireOnSite(path, elements, site, antennaM);
-  const boardElements = [
-    ...named.map(([, elements]) => elements),
-    ...(structure ? [structure.parts[0]!.elements] : []),
-  ];
+  const boardElements = [...named.map(([, elements]) => elements), ...(structure ? [structure.boardElements] : [])];
   return {
     board,
     site,

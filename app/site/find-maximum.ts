@@ -1,5 +1,6 @@
 import type { PowerMap } from './power-map.ts';
-import { chebyshevWeights, trigonometricWeights } from './sampling.ts';
+import { angleTable } from './resample.ts';
+import { chebyshevWeights } from './sampling.ts';
 import { ANTENNA_HIGHEST_M, ANTENNA_LOWEST_M } from './site.ts';
 
 export interface ScanMaximum {
@@ -29,7 +30,7 @@ export function findMaximum(map: PowerMap): ScanMaximum {
   const heightCount = Math.ceil((ANTENNA_HIGHEST_M - ANTENNA_LOWEST_M) / stepM) + 1;
   const stepHeightM = (ANTENNA_HIGHEST_M - ANTENNA_LOWEST_M) / (heightCount - 1);
   const stepAngleRad = (2 * Math.PI) / angleCount;
-  const angleWeights = angleTable(order, angleCount);
+  const angleWeights = angleTable(nodeCount, angleCount);
 
   const grid = new Float64Array(heightCount * angleCount);
   const heightWeights = new Float64Array(map.heightsM.length);
@@ -139,21 +140,4 @@ function highest(value: (at: number) => number, low: number, high: number): { at
     if (here > best.value) best = { at, value: here };
   }
   return best;
-}
-
-const angleTables = new Map<string, Float64Array>();
-
-/** Interpolation weights from 2·order + 1 angles to `angleCount` angles. */
-function angleTable(order: number, angleCount: number): Float64Array {
-  const key = `${order} ${angleCount}`;
-  let table = angleTables.get(key);
-  if (!table) {
-    const nodeCount = 2 * order + 1;
-    table = new Float64Array(angleCount * nodeCount);
-    for (let a = 0; a < angleCount; a++) {
-      trigonometricWeights(order, (2 * Math.PI * a) / angleCount, table, a * nodeCount);
-    }
-    angleTables.set(key, table);
-  }
-  return table;
 }

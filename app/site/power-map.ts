@@ -1,4 +1,6 @@
-import { type CylinderPlan, centreDistanceM, SAMPLE_STRIDE } from './cylinder-field.ts';
+import { SAMPLE_STRIDE } from './antenna-sample.ts';
+import { type CylinderPlan, centreDistanceM, samplingOf } from './cylinder-field.ts';
+import { resample, type Sampling } from './resample.ts';
 import { chebyshevNodes, chebyshevWeights, trigonometricWeights } from './sampling.ts';
 import { ANTENNA_HIGHEST_M, ANTENNA_LOWEST_M } from './site.ts';
 
@@ -20,69 +22,32 @@ export class PowerMap {
   readonly heightsM: Float64Array;
   /** [angle][height][direct power, mirrored power, cross re, cross im]. */
   readonly #sums: Float64Array;
-  readonly #toFine: FineWeights;
 
   constructor(plan: CylinderPlan, component: Component) {
     this.plan = plan;
     this.component = component;
     this.order = 2 * plan.order;
-    this.heightsM = chebyshevNodes(2 * plan.heightsM.length - 1, ANTENNA_LOWEST_M, ANTENNA_HIGHEST_M);
-    this.#sums = new Float64Array((2 * this.order + 1) * this.heightsM.length * 4);
-    this.#toFine = fineWeights(plan);
+    const { angleCount, heightCount } = powerSampling(plan);
+    this.heightsM = chebyshevNodes(heightCount, ANTENNA_LOWEST_M, ANTENNA_HIGHEST_M);
+    this.#sums = new Float64Array(angleCount * heightCount * 4);
   }
 
-  /** Adds one domain's field (as `fieldOnCylinder` returns it). */
-  addDomain(samples: Float64Array): void {
-    const direct = this.#refine(samples, 0);
-    const mirrored = this.plan.partCount === 2 ? this.#refine(samples, 1) : null;
+  /** Adds one domain's field (as `onPowerGrid` returns it). */
+  addDomain([direct, mirrored]: readonly Float64Array[]): void {
     const sums = this.#sums;
-    for (let i = 0; i < direct.length / 2; i++) {
-      const dRe = direct[2 * i]!;
-      const dIm = direct[2 * i + 1]!;
+    const offset = this.component === 'horizontal' ? 0 : 2;
+    for (let i = 0; i < sums.length / 4; i++) {
+      const at = i * SAMPLE_STRIDE + offset;
+      const dRe = direct![at]!;
+      const dIm = direct![at + 1]!;
       sums[4 * i]! += dRe * dRe + dIm * dIm;
       if (!mirrored) continue;
-      const mRe = mirrored[2 * i]!;
-      const mIm = mirrored[2 * i + 1]!;
+      const mRe = mirrored[at]!;
+      const mIm = mirrored[at + 1]!;
       sums[4 * i + 1]! += mRe * mRe + mIm * mIm;
       sums[4 * i + 2]! += dRe * mRe + dIm * mIm;
       sums[4 * i + 3]! += dIm * mRe - dRe * mIm;
     }
-  }
-
-  /** One part of the field on the fine angles and heights: [angle][height][re, im]. */
-  #refine(samples: Float64Array, part: number): Float64Array {
-    const { plan } = this;
-    const coarseAngles = 2 * plan.order + 1;
-    const coarseHeights = plan.heightsM.length;
-    const fineAngles = 2 * this.order + 1;
-    const fineHeights = this.heightsM.length;
-    const { angleWeights, heightWeights } = this.#toFine;
-    const offset = this.component === 'horizontal' ? 0 : 2;
-    const half = new Float64Array(2 * coarseAngles * fineHeights);
-    for (let a = 0; a < coarseAngles; a++) {
-      for (let f = 0; f < fineHeights; f++) {
-        let re = 0;
-        let im = 0;
-        for (let h = 0; h < coarseHeights; h++) {
-          const weight = heightWeights[f * coarseHeights + h]!;
-          const at = ((part * coarseAngles + a) * coarseHeights + h) * SAMPLE_STRIDE + offset;
-          re += weight * samples[at]!;
-          im += weight * samples[at + 1]!;
-        }
-        half[2 * (a * fineHeights + f)] = re;
-        half[2 * (a * fineHeights + f) + 1] = im;
-      }
-    }
-    const out = new Float64Array(2 * fineAngles * fineHeights);
-    for (let fa = 0; fa < fineAngles; fa++) {
-      for (let a = 0; a < coarseAngles; a++) {
-        const weight = angleWeights[fa * coarseAngles + a]!;
-        const from = 2 * a * fineHeights;
-        const to = 2 * fa * fineHeights;
-        for (let i = 0; i < 2 * fineHeights; i++) out[to + i]! += weight * half[from + i]!;
-      }
-    }
-    return out;
   }
 
   /** Power (peak phasor squared, V²/m²) at one height on the fine angles, given the height's weights. */
@@ -158,31 +123,17 @@ export class PowerMap {
   }
 }
 
-interface FineWeights {
-  readonly angleWeights: Float64Array;
-  readonly heightWeights: Float64Array;
-}
+/** Angles and heights that hold the square of what a plan's samples hold. */
+const powerSampling = ({ order, heightsM }: CylinderPlan): Sampling => ({
+  angleCount: 4 * order + 1,
+  heightCount: 2 * heightsM.length - 1,
+});
 
-const knownFineWeights = new Map<string, FineWeights>();
-
-/** Interpolation from a plan's samples to its power map's samples; depends on the two counts alone. */
-function fineWeights(plan: CylinderPlan): FineWeights {
-  const coarseAngles = 2 * plan.order + 1;
-  const coarseHeights = plan.heightsM.length;
-  const key = `${coarseAngles} ${coarseHeights}`;
-  const known = knownFineWeights.get(key);
-  if (known) return known;
-  const fineAngles = 4 * plan.order + 1;
-  const angleWeights = new Float64Array(fineAngles * coarseAngles);
-  for (let a = 0; a < fineAngles; a++) {
-    trigonometricWeights(plan.order, (2 * Math.PI * a) / fineAngles, angleWeights, a * coarseAngles);
-  }
-  const fineHeightsM = chebyshevNodes(2 * coarseHeights - 1, ANTENNA_LOWEST_M, ANTENNA_HIGHEST_M);
-  const heightWeights = new Float64Array(fineHeightsM.length * coarseHeights);
-  for (const [i, heightM] of fineHeightsM.entries()) {
-    chebyshevWeights(plan.heightsM, heightM, heightWeights, i * coarseHeights);
-  }
-  const weights = { angleWeights, heightWeights };
-  knownFineWeights.set(key, weights);
-  return weights;
+/** A field as `fieldOnCylinder` returns it, interpolated to the places of a power map: one array for each part. */
+export function onPowerGrid(plan: CylinderPlan, samples: Float64Array): Float64Array[] {
+  const from = samplingOf(plan);
+  const perPart = from.angleCount * from.heightCount * SAMPLE_STRIDE;
+  return Array.from({ length: plan.partCount }, (_, part) =>
+    resample(samples, part * perPart, SAMPLE_STRIDE, from, powerSampling(plan)),
+  );
 }

@@ -1,3 +1,6 @@
+import type { Extent } from './extent.ts';
+import { ANTENNA_HIGHEST_M, ANTENNA_LOWEST_M } from './site.ts';
+
 /**
  * How finely a field on the antenna's cylinder must be sampled. With e^(−jkR0)/R0 taken out, the field of sources within
  * radius a is band-limited in angle and smooth in height.
@@ -10,10 +13,43 @@ export function angularOrder(kPerM: number, radiusM: number, distanceM: number):
   return Math.ceil(kPerM * radiusM + 1.2 * Math.cbrt(kPerM * radiusM) + Math.max(5, 9 / Math.log(distanceM / radiusM)));
 }
 
-/** Chebyshev heights over the travel (1–4 m), sources within radius a of their middle; found by comparison with the direct scan (see its property test). */
-export function heightCount(kPerM: number, radiusM: number, distanceM: number): number {
-  return Math.ceil(7 + 0.9 * kPerM * radiusM + (12 * radiusM) / distanceM);
+/** Error of the interpolation over height that is allowed, relative. */
+const ALLOWED_ERROR = 1e-5;
+/** Heights at which the phase's slope is looked at. */
+const SLOPE_PLACES = 9;
+
+/**
+ * Chebyshev heights over the antenna's travel (1–4 m) and its mirror image for sources within an extent, R0 counted from
+ * `centreZM` on the axis.
+ *
+ * The phase k(R − R0) changes by at most κ to either side of the middle, κ = k · half the travel · the largest slope of R − R0, taken
+ * at the extent's corners (the slope is monotonic in the source's place): κ + 3∛κ + 4 points, as in `gridCount`. Where that is
+ * more, 1/R of the nearest source asks for ρ^(−n) beyond κ, ρ = y + √(1 + y²), y = its distance over half the travel.
+ * Source: L. N. Trefethen, Approximation Theory and Approximation Practice, chapter 3 and theorem 8.2.
+ */
+export function heightCount(kPerM: number, extent: Extent, centreZM: number, antennaM: number): number {
+  const { axisRadiusM, lowZM, highZM } = extent;
+  const half = (ANTENNA_HIGHEST_M - ANTENNA_LOWEST_M) / 2;
+  let steepest = 0;
+  for (let i = 0; i < SLOPE_PLACES; i++) {
+    const heightM = ANTENNA_LOWEST_M + (2 * half * i) / (SLOPE_PLACES - 1);
+    for (const zM of [heightM, -heightM]) {
+      const own = slope(antennaM, zM - centreZM);
+      for (const sourceZM of [lowZM, highZM]) {
+        for (const awayM of [antennaM - axisRadiusM, antennaM + axisRadiusM]) {
+          steepest = Math.max(steepest, Math.abs(slope(awayM, zM - sourceZM) - own));
+        }
+      }
+    }
+  }
+  const kappa = kPerM * half * steepest;
+  const y = Math.max(antennaM - axisRadiusM, 1e-3 * antennaM) / half;
+  const forDistance = -Math.log(ALLOWED_ERROR) / Math.log(y + Math.sqrt(1 + y * y));
+  return Math.ceil(kappa + Math.max(3 * Math.cbrt(kappa) + 4, forDistance));
 }
+
+/** dR/dz at the height `upM` above a source `awayM` away. */
+const slope = (awayM: number, upM: number): number => upM / Math.hypot(awayM, upM);
 
 /** Chebyshev points of the first kind on [low, high]. */
 export function chebyshevNodes(count: number, low: number, high: number): Float64Array {

@@ -1,23 +1,18 @@
 import type { FieldTerms } from '../fields/element-field.ts';
 import type { ElementSet, Radiator } from '../fields/element-set.ts';
-import {
-  addSample,
-  antennaAt,
-  cylinderPlan,
-  fieldOnCylinder,
-  groupByElements,
-  SAMPLE_STRIDE,
-} from './cylinder-field.ts';
+import { addSample, antennaAt, SAMPLE_STRIDE } from './antenna-sample.ts';
+import { cylinderPlan, fieldOnCylinder } from './cylinder-field.ts';
 import { findMaximum, type ScanMaximum } from './find-maximum.ts';
 import type { Box } from './moment-grid.ts';
-import { type Component, PowerMap } from './power-map.ts';
+import { type Component, onPowerGrid, PowerMap } from './power-map.ts';
 import type { SiteKind } from './site.ts';
+import { groupByElements } from './source-groups.ts';
 
 export interface ScanRequest {
   readonly kPerM: number;
   readonly scanRadiusM: number;
   readonly site: SiteKind;
-  /** Box of the board's own elements (gathered on a grid); elements outside are taken one by one. */
+  /** Box of the board's own elements (gathered on a grid); elements outside on lines, or one by one. */
   readonly box: Box | null;
   readonly terms?: FieldTerms;
 }
@@ -31,8 +26,9 @@ export function scanDomains(
   const horizontal = new PowerMap(plan, 'horizontal');
   const vertical = new PowerMap(plan, 'vertical');
   for (const samples of fieldOnCylinder(domains, plan, request.box, request.terms)) {
-    horizontal.addDomain(samples);
-    vertical.addDomain(samples);
+    const parts = onPowerGrid(plan, samples);
+    horizontal.addDomain(parts);
+    vertical.addDomain(parts);
   }
   return { horizontal, vertical };
 }

@@ -1,4 +1,4 @@
-import type { Board, Cable } from '../board/board.ts';
+import type { Board, Cable, Point3M } from '../board/board.ts';
 import { inputError } from '../errors.ts';
 import { ElementCollector, type ElementSet, type Radiator } from '../fields/element-set.ts';
 import { ringAreaM2 } from '../geometry/polygon.ts';
@@ -8,16 +8,20 @@ import { buildMesh, type Mesh } from './mesh.ts';
 import { rasterizePlanes } from './sheet.ts';
 import { SheetLookup } from './sheet-lookup.ts';
 import { type EdgeCurrents, type SeriesImpedance, StructureSolver } from './structure-solver.ts';
-import { type GroundPlane, wireFromCable } from './wires.ts';
+import { type GroundPlane, type Wire, wireFromCable } from './wires.ts';
 
 /** Longest wire piece, m (physics 11: 10–40 mm make no matter), and per wavelength. */
 const LONGEST_PIECE_M = 0.02;
 
-/** Edges of one part of the structure ("plane", or a cable's name) as radiating elements in site axes. */
-export interface StructurePart {
-  readonly via: string;
+/** Edges as radiating elements in site axes. */
+interface EdgeSet {
   readonly edges: readonly number[];
   readonly elements: ElementSet;
+}
+
+/** Edges of one part of the structure: "plane", or a cable's name. */
+export interface StructurePart extends EdgeSet {
+  readonly via: string;
 }
 
 /** The board's planes and solved cables on their site, ready to be solved at any frequency. */
@@ -25,6 +29,8 @@ export class StructureModel {
   readonly mesh: Mesh;
   readonly lookup: SheetLookup;
   readonly parts: readonly StructurePart[];
+  /** All edges, cut for the scan: on and beside the board, then every straight stretch of the cables. */
+  readonly #radiating: readonly EdgeSet[];
   readonly #cables: readonly Cable[];
   #solver: StructureSolver | null = null;
   #solvedHz: number | null = null;
@@ -42,6 +48,7 @@ export class StructureModel {
     this.mesh = buildMesh(sheet, wires, ground);
     this.lookup = new SheetLookup(this.mesh);
     this.parts = partsOf(this.mesh, frame);
+    this.#radiating = radiatingSets(this.mesh, frame);
     this.#cables = cables;
   }
 
@@ -68,9 +75,14 @@ export class StructureModel {
     return series;
   }
 
-  /** Currents of all edges (re, im pairs) as radiators, one for each part. */
+  /** Elements on and beside the board: planes and what joins the cables to them. */
+  get boardElements(): ElementSet {
+    return this.#radiating[0]!.elements;
+  }
+
+  /** Currents of all edges (re, im pairs) as radiators: the board's elements, then straight stretches of the cables. */
   radiators(currentsA: Float64Array): Radiator[] {
-    return this.parts.map(({ edges, elements }) => {
+    return this.#radiating.map(({ edges, elements }) => {
       const own = new Float64Array(2 * edges.length);
       for (const [i, edge] of edges.entries()) {
         own[2 * i] = currentsA[2 * edge]!;
@@ -130,20 +142,43 @@ function groundOf({ orientation, lowestYM }: SiteFrame, site: SiteKind): GroundP
     : { axis: 1, positionM: lowestYM - TABLE_HEIGHT_M };
 }
 
+const range = (from: number, count: number) => Array.from({ length: count }, (_, i) => from + i);
+
 function partsOf(mesh: Mesh, frame: SiteFrame): StructurePart[] {
   const { xEdgeCount, yEdgeCount, wires, wireEdgeStart } = mesh;
-  const range = (from: number, count: number) => Array.from({ length: count }, (_, i) => from + i);
   let link = xEdgeCount + yEdgeCount;
   const cables = wires.map(({ name, jointCells, pieces }, i) => {
     const edges = [...range(link, jointCells.length), ...range(wireEdgeStart[i]!, pieces.length)];
     link += jointCells.length;
-    return { via: name, edges, elements: elementsOf(mesh, frame, edges) };
+    return { via: name, ...edgeSet(mesh, frame, edges) };
   });
-  const plane = range(0, xEdgeCount + yEdgeCount);
-  return [{ via: 'plane', edges: plane, elements: elementsOf(mesh, frame, plane) }, ...cables];
+  return [{ via: 'plane', ...edgeSet(mesh, frame, range(0, xEdgeCount + yEdgeCount)) }, ...cables];
 }
 
-function elementsOf({ edgeCentreM, edgeVectorM }: Mesh, frame: SiteFrame, edges: readonly number[]): ElementSet {
+function radiatingSets(mesh: Mesh, frame: SiteFrame): EdgeSet[] {
+  const { firstWireEdge, wires, wireEdgeStart } = mesh;
+  const stretches = wires.flatMap((wire, i) =>
+    straightStretches(wire).map(([from, count]) => edgeSet(mesh, frame, range(wireEdgeStart[i]! + from, count))),
+  );
+  return [edgeSet(mesh, frame, range(0, firstWireEdge)), ...stretches];
+}
+
+/** Pieces in line with each other, one after the other: first piece and number of each stretch. */
+function straightStretches({ pieces }: Wire): [from: number, count: number][] {
+  const out: [from: number, count: number][] = [];
+  let before: Point3M | null = null;
+  for (const [i, { filament }] of pieces.entries()) {
+    const lengthM = Math.hypot(...[0, 1, 2].map((axis) => filament.to[axis]! - filament.from[axis]!));
+    const along = (axis: 0 | 1 | 2) => (filament.to[axis] - filament.from[axis]) / lengthM;
+    const direction: Point3M = [along(0), along(1), along(2)];
+    if (before && direction.every((value, axis) => Math.abs(value - before![axis]!) < 1e-9)) out.at(-1)![1]++;
+    else out.push([i, 1]);
+    before = direction;
+  }
+  return out;
+}
+
+function edgeSet({ edgeCentreM, edgeVectorM }: Mesh, frame: SiteFrame, edges: readonly number[]): EdgeSet {
   const collector = new ElementCollector();
   for (const e of edges) {
     collector.add(
@@ -151,5 +186,5 @@ function elementsOf({ edgeCentreM, edgeVectorM }: Mesh, frame: SiteFrame, edges:
       toSiteVector(frame.orientation, [edgeVectorM[3 * e]!, edgeVectorM[3 * e + 1]!, edgeVectorM[3 * e + 2]!]),
     );
   }
-  return collector.finish();
+  return { edges, elements: collector.finish() };
 }
