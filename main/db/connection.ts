@@ -2,6 +2,7 @@ import Database from 'better-sqlite3';
 import { fileError } from '../../app/errors.ts';
 import type { ReadableDb, WritableDb } from './database.ts';
 import type { MigrationReport } from './migrate.ts';
+import { newDatabase } from './new-database.ts';
 import { type ConnectionOptions, openDatabase } from './open-database.ts';
 import { damaged, isDamage, storeFailure } from './store-failure.ts';
 
@@ -77,7 +78,7 @@ export class ProjectConnection {
 }
 
 function isSound(file: string): boolean {
-  const db = new Database(file, { readonly: true, fileMustExist: true });
+  const db = newDatabase(file, { readonly: true, fileMustExist: true });
   try {
     return db.pragma('integrity_check(1)', { simple: true }) === 'ok';
   } finally {

@@ -1,8 +1,8 @@
-import Database from 'better-sqlite3';
 import { fileFailure } from '../files/file-failure.ts';
 import type { WritableDb } from './database.ts';
 import { migrate } from './migrate.ts';
 import { migrations } from './migrations/migrations.ts';
+import { newDatabase } from './new-database.ts';
 import { placeNew, removeTemporary, targetOf, temporaryBeside } from './place-file.ts';
 import { APPLICATION_ID } from './project-header.ts';
 import { storeFailure } from './store-failure.ts';
@@ -15,7 +15,7 @@ export function createProjectFile(file: string, fill: (db: WritableDb) => void):
   const target = targetOf(file);
   const temporary = temporaryBeside(target);
   try {
-    const db = new Database(temporary);
+    const db = newDatabase(temporary);
     try {
       db.pragma(`application_id = ${APPLICATION_ID}`);
       db.pragma('journal_mode = WAL');

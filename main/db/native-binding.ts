@@ -8,7 +8,3 @@ export function electronBinding(modulesVersion: string): string {
   const name = `better_sqlite3-${process.platform}-${process.arch}-${modulesVersion}.node`;
   return fileURLToPath(new URL(`../../../native/${name}`, import.meta.url));
 }
-
-/** What to hand to the database: nothing under Node. */
-export const nativeBinding = (): { readonly nativeBinding?: string } =>
-  process.versions.electron === undefined ? {} : { nativeBinding: electronBinding(process.versions.modules) };

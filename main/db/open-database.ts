@@ -5,6 +5,7 @@ import { AppError, fileError } from '../../app/errors.ts';
 import { fileFailure } from '../files/file-failure.ts';
 import type { ReadableDb } from './database.ts';
 import { type Migration, type MigrationReport, migrate, refuseNewer, schemaVersionOf } from './migrate.ts';
+import { newDatabase } from './new-database.ts';
 import { writeNumbered } from './place-file.ts';
 import { readProjectHeader, sizeOf } from './project-header.ts';
 import { madeBy, schemaStatements } from './schema-text.ts';
@@ -93,7 +94,7 @@ function keepCopy(file: string, content: Buffer, version: number): string {
 }
 
 function connect(real: string, busyTimeoutMs: number): Database.Database {
-  const db = new Database(real, { fileMustExist: true, timeout: busyTimeoutMs });
+  const db = newDatabase(real, { fileMustExist: true, timeout: busyTimeoutMs });
   db.pragma('foreign_keys = ON');
   db.pragma('trusted_schema = OFF');
   db.pragma('cell_size_check = ON');
@@ -125,7 +126,7 @@ function openInMemory(file: string, real: string, { busyTimeoutMs, migrations }:
   // Bytes 18 and 19 ask for a log beside the file (file format, section 1.3); in memory there is none.
   content[18] = 1;
   content[19] = 1;
-  const db = new Database(content);
+  const db = newDatabase(content);
   try {
     migrate(db, file, migrations, () => '');
     refuseOtherTables(file, db, migrations);
@@ -159,7 +160,7 @@ const loggedVersion = (file: string, real: string, { busyTimeoutMs }: Connection
 function withReader<T>(file: string, real: string, timeout: number, run: (db: Database.Database) => T): T {
   let db: Database.Database | undefined;
   try {
-    db = new Database(real, { readonly: true, fileMustExist: true, timeout });
+    db = newDatabase(real, { readonly: true, fileMustExist: true, timeout });
     return run(db);
   } catch (error) {
     if (!(error instanceof Database.SqliteError) || !NO_PLACE.test(error.code)) throw error;

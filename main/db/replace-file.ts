@@ -1,7 +1,7 @@
 import { existsSync, readFileSync, statSync } from 'node:fs';
-import Database from 'better-sqlite3';
 import { AppError, fileError } from '../../app/errors.ts';
 import { fileFailure } from '../files/file-failure.ts';
+import { newDatabase } from './new-database.ts';
 import {
   placeNew,
   placeOver,
@@ -69,7 +69,7 @@ function isSameFile(one: string, other: string): boolean {
  */
 function release(file: string, target: string): void {
   try {
-    const db = new Database(target, { fileMustExist: true, timeout: RELEASE_TIMEOUT_MS });
+    const db = newDatabase(target, { fileMustExist: true, timeout: RELEASE_TIMEOUT_MS });
     try {
       // Leaving the log mode takes the file for this program alone.
       db.pragma('journal_mode = DELETE');

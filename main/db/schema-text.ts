@@ -1,6 +1,6 @@
-import Database from 'better-sqlite3';
 import type { ReadableDb } from './database.ts';
 import { type Migration, migrate } from './migrate.ts';
+import { newDatabase } from './new-database.ts';
 
 /** Every table and index as SQL: tables first, by name. */
 export const schemaStatements = (db: ReadableDb): string[] =>
@@ -8,7 +8,7 @@ export const schemaStatements = (db: ReadableDb): string[] =>
 
 /** The tables that the steps make of nothing. */
 export function madeBy(steps: readonly Migration[]): string[] {
-  const db = new Database(':memory:');
+  const db = newDatabase(':memory:');
   try {
     migrate(db, 'new project', steps, () => '');
     return schemaStatements(db as ReadableDb);
