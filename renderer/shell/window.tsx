@@ -13,12 +13,14 @@ import { Overlays } from './overlays.tsx';
 import { StartPage } from './start-page.tsx';
 import { StatusBar } from './status-bar.tsx';
 import { useCommands } from './use-commands.ts';
+import { useSystemMenu } from './use-system-menu.ts';
 import css from './window.module.css';
 import { Workplace } from './workplace.tsx';
 
 /** The whole window: it composes, and holds no logic. */
 export function Window(): ReactElement {
   useCommands();
+  useSystemMenu();
   const theme = useThemeChoice();
   useEffect(() => applyTheme(theme), [theme]);
   const project = useApp((state) => state.project);
