@@ -225,6 +225,27 @@ describe('what is no change', () => {
     );
   });
 
+  it('noise about half a nanometre, where rounding falls apart', () => {
+    const at = (xMm: number) =>
+      withClock({
+        traces: [
+          {
+            layer: 'TOP',
+            widthMm: 0.2,
+            pointsMm: [
+              [10, 10],
+              [xMm, 10],
+            ],
+          },
+        ],
+        vias: [],
+        pins: [],
+      });
+    expect(said(at(40.0000005 + 1e-7), at(40.0000005 - 1e-7))).toEqual([]);
+    // Two nanometres are another place, if not one to talk about by length.
+    expect(said(at(40.000002), at(40))).toEqual(['CLK_25M: trace on TOP another way, still 30 mm']);
+  });
+
   it('a run against itself, and order of nets, planes, drives and keys', () => {
     expect(compareRuns(RUN, RUN).changes).toEqual([]);
     const turned = Object.fromEntries(Object.entries({ ...BOARD, nets: BOARD.nets.toReversed() }).reverse());
