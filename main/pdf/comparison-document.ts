@@ -17,7 +17,7 @@ import { type DocumentFrame, FOOT_TEXT, framedDocument, headText } from './page-
 import { sectionContent, titledContent } from './section-content.ts';
 
 /** On paper a table must end some time; what is left out is counted under it. */
-const LENGTH = { changes: 60, lines: 60 };
+const LENGTH = { changes: 60, lines: 50 };
 
 /** The printed comparison of two runs, as pages to be laid out. */
 export function comparisonDocument(comparison: Comparison, title: ReportTitle, paper: Paper): TDocumentDefinitions {

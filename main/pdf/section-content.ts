@@ -16,7 +16,7 @@ const BEFORE_SECTION_PT = 9;
 const FIGURE_SPARE_PT = 90;
 const KEY_PT = 7;
 const KEPT_ITEMS = 2;
-const SHORT_TABLE_ROWS = 8;
+const SHORT_TABLE_ROWS = 12;
 const SHORT_TABLE_CHARACTERS = 1200;
 
 /** A heading that waits for what it belongs to. */
@@ -54,7 +54,7 @@ class Flow {
         this.#out.push(together([this.#tableOf(block), paragraphContent(next.text, next.style)]));
         i++;
       } else if (isShort) this.#out.push(together([this.#tableOf(block)]));
-      else if (block.kind === 'paragraph' && next?.kind === 'figure') {
+      else if (block.kind === 'paragraph' && next && staysWhole(next)) {
         this.#pending.push(() => paragraphContent(block.text, block.style));
       } else this.#addBlock(block);
     }
@@ -148,6 +148,10 @@ class Flow {
     return title;
   }
 }
+
+/** A text before it stays with it: no page breaks within. */
+const staysWhole = (block: Block): boolean =>
+  block.kind === 'figure' || (block.kind === 'table' && isShortTable(block));
 
 /** Short enough to stay on one page, whatever its names are. */
 const isShortTable = ({ rows }: Block & { kind: 'table' }): boolean =>

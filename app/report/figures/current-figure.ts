@@ -15,11 +15,11 @@ const WIDTH = 760;
 const LEFT = 40;
 const TOP = 8;
 const MAX_WIDTH = 590;
-const MAX_HEIGHT = 250;
+const MAX_HEIGHT = 212;
 const LABEL_PX = 10;
 const NAME_LENGTH = 22;
 const BAR_WIDTH = 12;
-const MOST_BAR_HEIGHT = 240;
+const MOST_BAR_HEIGHT = 204;
 const BAR_TITLE = 20;
 /** The colour bar ends at a multiple of this. */
 const ROUND_DB = 5;
