@@ -16,6 +16,8 @@ const SAVE_AFTER_MS = 700;
 let timer: ReturnType<typeof setTimeout> | undefined;
 /** What the host has under `draft.version`. */
 let savedWork: Work | null = null;
+/** The save that is on its way: the next one waits for its version. */
+let sending: Promise<void> | null = null;
 
 const setDraft = (draft: DraftState): void => setState({ draft });
 const workOf = ({ document, settings }: Draft): Work => ({ ...document, settings });
@@ -40,63 +42,66 @@ export function forgetDraft(): void {
 
 function schedule(): void {
   const { draft, history } = getState();
-  if (draft.kind === 'conflict' || history === null || history.present === savedWork) return;
+  if (draft.kind === 'conflict' || history === null) return;
   clearTimeout(timer);
+  if (history.present === savedWork && sending === null) {
+    setDraft({ kind: 'saved', version: draft.version });
+    return;
+  }
   setDraft({ kind: 'waiting', version: draft.version });
   timer = setTimeout(() => void saveDraft(), SAVE_AFTER_MS);
 }
 
-/** Saves now. */
+/** Saves now what is not saved yet. */
 export async function saveDraft(): Promise<void> {
   clearTimeout(timer);
+  while (sending !== null) await sending;
   const { project, history, draft } = getState();
   if (project === null || history === null || project.isReadOnly) return;
-  if (draft.kind === 'conflict' || draft.kind === 'saving' || history.present === savedWork) return;
+  if (draft.kind === 'conflict' || history.present === savedWork) return;
   const work = history.present;
   if (!sourcesPartSchema.safeParse(work.sources).success) {
     setDraft({ kind: 'incomplete', version: draft.version });
     return;
   }
   setDraft({ kind: 'saving', version: draft.version });
-  await send(project.projectId, work, draft.version);
+  sending = send(project.projectId, work, draft.version);
+  await sending;
 }
 
 async function send(projectId: string, work: Work, basedOn: number): Promise<void> {
   const { settings } = work;
+  const isStillOpen = () => getState().project?.projectId === projectId;
   try {
     const document = documentRefOf(work);
     const { version } = await call('draft.save', { projectId, document, settings, basedOn, clientId: CLIENT_ID });
-    if (getState().project?.projectId !== projectId) return;
-    savedWork = work;
-    setDraft({ kind: 'saved', version });
+    sending = null;
+    if (!isStillOpen()) return;
+    takeSaved(work, version);
     schedule();
   } catch (error) {
-    if (getState().project?.projectId !== projectId) return;
-    if (error instanceof AppError && error.code === 'busy') await meetTheirs(projectId, work, basedOn);
+    sending = null;
+    if (!isStillOpen()) return;
+    if (error instanceof AppError && error.code === 'busy') await lookAtTheirs(projectId);
     else setDraft({ kind: 'failed', version: basedOn, message: failureText(error) ?? 'stopped' });
   }
-}
-
-/** Another window saved first: the same content is no conflict. */
-async function meetTheirs(projectId: string, mine: Work, version: number): Promise<void> {
-  const { draft: theirs } = await call('draft.load', { projectId });
-  if (theirs === null) {
-    await send(projectId, mine, 0);
-    return;
-  }
-  await needBase(projectId, theirs.document.baseId);
-  if (sameWork(workOf(theirs), mine)) takeSaved(mine, theirs.version);
-  else setDraft({ kind: 'conflict', version, theirs });
 }
 
 /** Another window changed the draft. With nothing unsaved here it is simply shown; a step back leads to mine. */
 export async function takeForeignDraft(): Promise<void> {
   const { project, history, draft } = getState();
-  if (project === null || history === null || draft.kind === 'conflict' || draft.kind === 'saving') return;
-  const { draft: theirs } = await call('draft.load', { projectId: project.projectId });
+  if (project === null || history === null || draft.kind === 'conflict' || sending !== null) return;
+  await lookAtTheirs(project.projectId);
+}
+
+async function lookAtTheirs(projectId: string): Promise<void> {
+  const { draft: theirs } = await call('draft.load', { projectId });
   if (theirs === null || theirs.version === getState().draft.version) return;
-  await needBase(project.projectId, theirs.document.baseId);
-  if (getState().history?.present === savedWork) adopt(theirs);
+  await needBase(projectId, theirs.document.baseId);
+  const { history, project, draft } = getState();
+  if (history === null || project?.projectId !== projectId) return;
+  if (sameWork(workOf(theirs), history.present)) takeSaved(history.present, theirs.version);
+  else if (history.present === savedWork) adopt(theirs);
   else setDraft({ kind: 'conflict', version: draft.version, theirs });
 }
 

@@ -3,7 +3,7 @@ import { AppError } from '../../app/errors.ts';
 import { type Draft, getState } from '../../renderer/state/app-store.ts';
 import { editSettings, editSources, undo } from '../../renderer/state/document.ts';
 import { keepMine, startAutosave, takeForeignDraft, takeTheirs } from '../../renderer/state/draft.ts';
-import { FakeHost } from './fake-host.ts';
+import { FakeHost, later } from './fake-host.ts';
 import { openDocument, present, WORK } from './open-document.ts';
 
 /** Oracle: the host's rule (a save based on another version than the newest is refused) and what a user must not lose. */
@@ -50,6 +50,33 @@ describe('the draft', () => {
     expect(host.inputs('draft.save')).toHaveLength(1);
     expect(stored.settings.distanceM).toBe(10);
     expect(getState().draft).toEqual({ kind: 'saved', version: 2 });
+  });
+
+  it('waits for a slow save before the next one, and takes neither for a foreign change', async () => {
+    const slow = later<{ version: number }>();
+    host.answer({ 'draft.save': () => slow.promise });
+    editSettings('Distance', { distanceM: 5 });
+    await vi.advanceTimersByTimeAsync(WAIT_MS);
+    host.answer({ 'draft.save': ({ basedOn }) => ({ version: basedOn + 1 }) });
+    editSettings('Distance', { distanceM: 10 });
+    await vi.advanceTimersByTimeAsync(WAIT_MS);
+    expect(host.inputs('draft.save')).toHaveLength(1);
+    slow.resolve({ version: 2 });
+    await vi.advanceTimersByTimeAsync(WAIT_MS);
+    expect(host.inputs('draft.save').map(({ basedOn, settings }) => [basedOn, settings?.distanceM])).toEqual([
+      [1, 5],
+      [2, 10],
+    ]);
+    expect(getState().draft).toEqual({ kind: 'saved', version: 3 });
+  });
+
+  it('is saved already when the change is undone before its save', async () => {
+    editSettings('Distance', { distanceM: 5 });
+    undo();
+    expect(getState().draft.kind).toBe('saved');
+    await vi.advanceTimersByTimeAsync(WAIT_MS);
+    expect(host.inputs('draft.save')).toHaveLength(0);
+    expect(getState().draft.kind).toBe('saved');
   });
 
   it('is not saved while a source is half typed', async () => {
