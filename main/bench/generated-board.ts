@@ -1,21 +1,11 @@
 import type { BoardFileInput } from '../../app/board/board-file.ts';
+import { seeded } from './seeded.ts';
 
 export interface GeneratedSize {
   readonly widthMm: number;
   readonly heightMm: number;
   readonly nets: number;
   readonly segmentsPerNet: number;
-}
-
-/** Small seeded generator (xorshift32): the same board every time. */
-function seeded(seed: number): () => number {
-  let state = seed;
-  return () => {
-    state ^= state << 13;
-    state ^= state >>> 17;
-    state ^= state << 5;
-    return (state >>> 0) / 2 ** 32;
-  };
 }
 
 /**

@@ -11,15 +11,15 @@ import { replaceNumbers } from './number-columns.ts';
  *   4   1  version, 1
  *   5   1  layout, 1: shape and numbers
  *   6  16  first bytes of the SHA-256 of all that follows
- *  22   …  brotli of: lengths of the four parts (uint32, little-endian), shape (JSON text, every number 0), codes,
- *          offsets, planes (see number-codec.ts)
+ *  22   …  brotli of: lengths of the six parts (uint32, little-endian), shape (JSON text, every number 0), codes,
+ *          offsets, bases, factors, planes (see number-codec.ts; doubles little-endian)
  */
 const MAGIC = Buffer.from('QBPJ');
 const VERSION = 1;
 const LAYOUT = 1;
 const CHECK_AT = 6;
 const BODY_AT = 22;
-const PARTS = 4;
+const PARTS = 6;
 
 /** Higher levels take five times as long for 1 %. */
 const QUALITY = 5;
@@ -35,8 +35,10 @@ export function packJson(value: unknown): Buffer {
     packer.add(number, column);
     return 0;
   });
-  const { codes, offsets, planes } = packer.finish();
-  const parts = [Buffer.from(exactJson(shape)), codes, new Uint8Array(offsets.buffer), planes];
+  const { codes, offsets, bases, factors, planes } = packer.finish();
+  const baseBytes = Buffer.alloc(8 * bases.length);
+  for (const [i, base] of bases.entries()) baseBytes.writeDoubleLE(base, 8 * i);
+  const parts = [Buffer.from(exactJson(shape)), codes, new Uint8Array(offsets.buffer), baseBytes, factors, planes];
   const lengths = Buffer.alloc(4 * PARTS);
   for (const [i, part] of parts.entries()) lengths.writeUInt32LE(part.length, 4 * i);
   const plain = Buffer.concat([lengths, ...parts]);
@@ -63,17 +65,21 @@ export function unpackJson(block: Uint8Array): unknown {
   const body = bytes.subarray(BODY_AT);
   if (!bytes.subarray(CHECK_AT, BODY_AT).equals(checkOf(body))) throw new RangeError('has changed bytes');
   const parts = partsOf(brotliDecompressSync(body, { maxOutputLength: MOST_BYTES }));
-  const [shapeText, codes, offsets, planes] = parts as [Buffer, Buffer, Buffer, Buffer];
+  const [shapeText, codes, offsets, bases, factors, planes] = parts as [Buffer, Buffer, Buffer, Buffer, Buffer, Buffer];
   const shape: unknown = JSON.parse(shapeText.toString());
   const counts: number[] = [];
   replaceNumbers(shape, (number, column) => {
     counts[column] = (counts[column] ?? 0) + 1;
     return number;
   });
-  const numbers = new NumberUnpacker(
-    { codes, offsets: Int8Array.from(offsets, (byte) => (byte << 24) >> 24), planes },
-    counts,
-  );
+  const packed = {
+    codes,
+    offsets: Int8Array.from(offsets, (byte) => (byte << 24) >> 24),
+    bases: Float64Array.from({ length: bases.length / 8 }, (_, i) => bases.readDoubleLE(8 * i)),
+    factors,
+    planes,
+  };
+  const numbers = new NumberUnpacker(packed, counts);
   return replaceNumbers(shape, (_, column) => numbers.next(column));
 }
 

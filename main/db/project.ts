@@ -260,11 +260,14 @@ export class Project {
   }
 }
 
+/** What a new project is called until somebody names it. */
+export const projectNameOf = (file: string): string =>
+  basename(file)
+    .replace(/\.quietboard$/i, '')
+    .slice(0, MOST_NAME) || 'Project';
+
 const newProject = (file: string) => ({
-  name:
-    basename(file)
-      .replace(/\.quietboard$/i, '')
-      .slice(0, MOST_NAME) || 'Project',
+  name: projectNameOf(file),
   createdAt: new Date().toISOString(),
   createdBy: programVersion(),
   writtenBy: programVersion(),
