@@ -1,4 +1,4 @@
-import { Component, type ReactElement, type ReactNode } from 'react';
+import { Component, type ReactElement, type ReactNode, Suspense } from 'react';
 import { Button } from '../components/button.tsx';
 import { ErrorNotice } from '../components/notes.tsx';
 import type { Panel } from './panel.ts';
@@ -8,7 +8,9 @@ import css from './panel-frame.module.css';
 export const PanelFrame = ({ panel }: { readonly panel: Panel }): ReactElement => (
   <section className={css.frame} aria-label={panel.label}>
     <PanelGuard label={panel.label}>
-      <panel.Content />
+      <Suspense fallback={null}>
+        <panel.Content />
+      </Suspense>
     </PanelGuard>
   </section>
 );

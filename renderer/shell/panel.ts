@@ -10,7 +10,7 @@ export interface Panel {
   readonly name: string;
   readonly label: string;
   readonly place: PanelPlace;
-  /** Fills its place; mounted only while a document is open. */
+  /** Fills its place; mounted only while a document is open. May be `lazy`, where it brings much code. */
   readonly Content: ComponentType;
   readonly commands?: readonly Command[];
 }
