@@ -14,7 +14,7 @@ export interface ServeOptions {
   /** Told once the address is known. */
   readonly onAddress: (address: string) => void;
   /** Told when no window could be opened. */
-  readonly onNoBrowser: () => void;
+  readonly onNoWindow: () => void;
   /** Ends it. */
   readonly signal: AbortSignal;
 }
@@ -36,7 +36,7 @@ export async function serve(options: ServeOptions): Promise<void> {
     });
     const address = `${server.origin}/#${server.token}`;
     options.onAddress(address);
-    if (options.opensWindow && !(await openWindow(address))) options.onNoBrowser();
+    if (options.opensWindow && !(await openWindow(address))) options.onNoWindow();
     await (options.endsWithWindows ? Promise.race([ended, unused.ended]) : ended);
     await server.close();
   } finally {

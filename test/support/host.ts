@@ -8,6 +8,8 @@ import type { Reply } from '../../app/contract/transport.ts';
 import { PROGRAM } from './run-cli.ts';
 
 const START_MS = 30_000;
+/** `QUIETBOARD_PROGRAM` names another build to be tested, for example an installed one. */
+const TESTED = process.env.QUIETBOARD_PROGRAM ?? PROGRAM;
 
 export interface HostOptions {
   /** Project to open first. */
@@ -38,7 +40,7 @@ export class TestHost {
 
   static async start({ project, home }: HostOptions = {}): Promise<TestHost> {
     const folder = home ?? mkdtempSync(join(tmpdir(), 'quietboard-home-'));
-    const args = [PROGRAM, 'serve', '--no-open', ...(project === undefined ? [] : ['--project', project])];
+    const args = [TESTED, 'serve', '--no-open', ...(project === undefined ? [] : ['--project', project])];
     const child = spawn(process.execPath, args, { env: { ...process.env, QUIETBOARD_HOME: folder } });
     return new TestHost(child, await addressOf(child), folder, home === undefined);
   }

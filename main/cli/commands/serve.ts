@@ -42,8 +42,10 @@ async function runServe(options: ServeCommandOptions): Promise<void> {
     opensWindow: options.open,
     endsWithWindows: false,
     onAddress: (address) => process.stdout.write(`Serving ${address}\n`),
-    onNoBrowser: () =>
-      process.stderr.write('No browser of the Chromium family was found: open the address yourself.\n'),
+    onNoWindow: () =>
+      process.stderr.write(
+        'No browser window could be opened (looked for one of the Chromium family): open the address yourself.\n',
+      ),
     signal: stop.signal,
   });
   process.exitCode = EXIT_DONE;

@@ -1,4 +1,6 @@
+import { existsSync } from 'node:fs';
 import type { Handlers, Output } from '../../../app/contract/procedures.ts';
+import { projectNameOf } from '../../db/project.ts';
 import type { HostContext } from '../context.ts';
 import { newProjectFile, PROJECT_ENDING, projectFile } from '../new-project-file.ts';
 import { projectBytes } from '../project-bytes.ts';
@@ -26,8 +28,9 @@ export function projectHandlers(context: HostContext): ProjectHandlers {
     return { project };
   };
   return {
-    'project.recent': async () => ({ projects: await state.recent() }),
-    'project.open': ({ file, create }) =>
+    // One that was moved or deleted leads nowhere.
+    'project.recent': async () => ({ projects: (await state.recent()).filter(({ file }) => existsSync(file)) }),
+    'project.open': async ({ file, create }) =>
       file === undefined
         ? open(newProjectFile(projectsFolder, 'Untitled'), true)
         : open(projectFile(projectsFolder, file), create),
@@ -40,10 +43,16 @@ export function projectHandlers(context: HostContext): ProjectHandlers {
       return {};
     },
     'project.save-as': async ({ projectId, file }) => {
+      const original = projects.get(projectId);
       const target = projectFile(projectsFolder, file);
       // The system's dialog has asked about a file that is there; without one nobody has.
-      await projects.get(projectId).backupTo(target, context.dialogs === null ? 'refuse' : 'replace');
-      return open(target, false);
+      await original.backupTo(target, context.dialogs === null ? 'refuse' : 'replace');
+      const isNamedAfterFile = original.info().name === projectNameOf(original.file);
+      const copy = projects.open(target, false);
+      if (isNamedAfterFile && !copy.isReadOnly) projects.get(copy.projectId).setName(projectNameOf(target));
+      const project = projects.answer(copy.projectId);
+      await listRecent(project);
+      return { project };
     },
     'project.export': async ({ projectId }) => {
       const project = projects.get(projectId);
