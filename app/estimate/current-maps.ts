@@ -7,7 +7,10 @@ import { StructureResponder } from './structure-responder.ts';
 const MOST_MAPS = 3;
 
 /** Currents of planes and cables at the worst lines (points in order of margin); empty when they are not solved. */
-export function currentMaps({ scene, table }: EstimatePlan, points: readonly Pick<ResultPoint, 'frequencyHz'>[]): StructureCurrentMap[] {
+export function currentMaps(
+  { scene, table }: EstimatePlan,
+  points: readonly Pick<ResultPoint, 'frequencyHz'>[],
+): StructureCurrentMap[] {
   const model = scene.structure;
   if (!model) return [];
   const worst = [...new Set(points.map(({ frequencyHz }) => frequencyHz))].filter((hz) => hz <= SOLVED_TO_HZ);

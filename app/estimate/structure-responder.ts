@@ -1,7 +1,7 @@
 import { solveNetwork } from '../network/solve-network.ts';
-import { emptyIncident, type Incident } from '../structure/incident.ts';
+import { clearIncident, emptyIncident, type Incident } from '../structure/incident.ts';
 import { interleaved, type StructureModel } from '../structure/structure-model.ts';
-import type { StructureSolver } from '../structure/structure-solver.ts';
+import { type EdgeCurrents, newCurrents, type StructureSolver } from '../structure/structure-solver.ts';
 import { addScaled } from '../sweep/aaa.ts';
 import { adaptiveSweep, type Solved, type Sweep } from '../sweep/adaptive-sweep.ts';
 import { type Scene, SOLVED_TO_HZ } from './scene.ts';
@@ -49,12 +49,17 @@ export class StructureResponder {
   readonly #unitOf = new Map<string, number>();
   readonly #sweep: Sweep<UnitCurrents> | null;
   readonly #onSolve: (() => void) | undefined;
+  /** Used again for every excitation. */
+  readonly #incident: Incident;
+  readonly #currents: EdgeCurrents;
 
   /** `frequenciesHz`: the lines to be served, ascending. `onSolve` is called before each solution (stop). */
   constructor(scene: Scene, model: StructureModel, frequenciesHz: readonly number[], onSolve?: () => void) {
     this.#scene = scene;
     this.#model = model;
     this.#onSolve = onSolve;
+    this.#incident = emptyIncident(model.mesh);
+    this.#currents = newCurrents(model.mesh.edgeCount);
     for (const { name, drives } of scene.nets.values()) {
       for (const driveIndex of drives.keys()) this.#unitOf.set(unitKey('net', name, driveIndex), this.#unitOf.size);
     }
@@ -85,9 +90,8 @@ export class StructureResponder {
     this.#onSolve?.();
     const solver = this.#model.solverAt(frequencyHz);
     const shares = groupShares(lines).map(({ kind, name, domain, own }): StructureShare => {
-      const incident = emptyIncident(this.#model.mesh);
-      this.#drive(incident, frequencyHz, kind, name, own);
-      return { kind, name, domain, vector: interleaved(solver.rightHandSide(incident)) };
+      const rhs = solver.rightHandSide(this.#incidentOf(frequencyHz, kind, name, own), this.#currents);
+      return { kind, name, domain, vector: interleaved(rhs) };
     });
     return {
       shares,
@@ -114,23 +118,25 @@ export class StructureResponder {
     return { shares, currentsByDomain: sumByDomain(shares), weigh: (observer) => observer };
   }
 
-  /** Adds what the lines of one net or loop do to the structure. */
-  #drive(
-    incident: Incident,
+  /** What the lines of one net or loop do to the structure; the next call overwrites it. */
+  #incidentOf(
     frequencyHz: number,
     kind: SourceLine['kind'],
     name: string,
     own: readonly Pick<SourceLine, 'driveIndex' | 're' | 'im'>[],
-  ): void {
+  ): Incident {
+    const incident = this.#incident;
+    clearIncident(incident);
     if (kind === 'loop') {
       const { coupling } = this.#scene.loops.get(name)!;
       for (const { re, im } of own) coupling?.addTo(incident, frequencyHz, re, im);
-      return;
+      return incident;
     }
     const { network, coupling } = this.#scene.nets.get(name)!;
-    if (!coupling) return;
+    if (!coupling) return incident;
     const responses = solveNetwork(network, frequencyHz);
     for (const { driveIndex, re, im } of own) coupling.addTo(incident, frequencyHz, responses[driveIndex]!, re, im);
+    return incident;
   }
 
   #solveUnits(frequencyHz: number): UnitCurrents {
@@ -138,8 +144,7 @@ export class StructureResponder {
     const solver = this.#model.solverAt(frequencyHz);
     return [...this.#unitOf.keys()].map((key) => {
       const { kind, name, driveIndex } = unitOfKey(key);
-      const incident = emptyIncident(this.#model.mesh);
-      this.#drive(incident, frequencyHz, kind, name, [{ driveIndex, re: 1, im: 0 }]);
+      const incident = this.#incidentOf(frequencyHz, kind, name, [{ driveIndex, re: 1, im: 0 }]);
       return interleaved(solver.solve(incident));
     });
   }
@@ -198,8 +203,11 @@ function sumByDomain(shares: readonly StructureShare[]): Map<string, Float64Arra
 }
 
 function solved(solver: StructureSolver, vector: Float64Array): Float64Array {
-  const re = vector.filter((_, i) => i % 2 === 0);
-  const im = vector.filter((_, i) => i % 2 === 1);
+  const { re, im } = newCurrents(vector.length / 2);
+  for (let i = 0; i < re.length; i++) {
+    re[i] = vector[2 * i]!;
+    im[i] = vector[2 * i + 1]!;
+  }
   solver.solveInPlace(re, im);
   return interleaved({ re, im });
 }

@@ -13,6 +13,7 @@ const PAGE_BYTES = 65_536;
 interface KernelFunctions {
   factor(re: number, im: number, size: number, w: number, l: number, corner: number): number;
   solve(re: number, im: number, size: number, bRe: number, bIm: number): void;
+  combineRows(weights: number, rowCount: number, inner: number, rows: number, length: number, out: number): void;
   addSources(
     kPerM: number,
     sourceCount: number,

@@ -1,3 +1,4 @@
+import { scratchKernel } from '../kernel/kernel.ts';
 import { chebyshevNodes, chebyshevWeights, trigonometricWeights } from './sampling.ts';
 
 /** Samples on 2·order + 1 equally spaced angles and `heightCount` Chebyshev heights. */
@@ -35,8 +36,8 @@ function heightTable(from: number, to: number): Float64Array {
 }
 
 /**
- * Samples ([angle][height][`stride`], from index `start` on) interpolated to another sampling: exact for what both samplings can
- * hold.
+ * Samples ([angle][height][`stride`], from index `start` on; `stride` even) interpolated to another sampling: exact for what
+ * both samplings can hold.
  */
 export function resample(
   samples: Float64Array,
@@ -47,34 +48,22 @@ export function resample(
 ): Float64Array {
   const heights = heightTable(from.heightCount, to.heightCount);
   const angles = angleTable(from.angleCount, to.angleCount);
+  const sourceLength = from.heightCount * stride;
   const rowLength = to.heightCount * stride;
-  const between = new Float64Array(from.angleCount * rowLength);
+  // The kernel's memory: tables, samples, samples on the new heights, result.
+  const anglesAt = heights.length;
+  const samplesAt = anglesAt + angles.length;
+  const betweenAt = samplesAt + from.angleCount * sourceLength;
+  const outAt = betweenAt + from.angleCount * rowLength;
+  const end = outAt + to.angleCount * rowLength;
+  const { floats, functions } = scratchKernel(end);
+  floats.set(heights);
+  floats.set(angles, anglesAt);
+  floats.set(samples.subarray(start, start + from.angleCount * sourceLength), samplesAt);
   for (let a = 0; a < from.angleCount; a++) {
-    const input = start + a * from.heightCount * stride;
-    addProduct(heights, to.heightCount, from.heightCount, samples, input, stride, between, a * rowLength);
+    const rows = 8 * (samplesAt + a * sourceLength);
+    functions.combineRows(0, to.heightCount, from.heightCount, rows, stride, 8 * (betweenAt + a * rowLength));
   }
-  const out = new Float64Array(to.angleCount * rowLength);
-  addProduct(angles, to.angleCount, from.angleCount, between, 0, rowLength, out, 0);
-  return out;
-}
-
-/** out[row] += Σ weights[row][i] · rows[i], rows of `length` numbers from an index on. */
-function addProduct(
-  weights: Float64Array,
-  rowCount: number,
-  inner: number,
-  rows: Float64Array,
-  from: number,
-  length: number,
-  out: Float64Array,
-  to: number,
-): void {
-  for (let row = 0; row < rowCount; row++) {
-    const target = to + row * length;
-    for (let i = 0; i < inner; i++) {
-      const weight = weights[row * inner + i]!;
-      const source = from + i * length;
-      for (let j = 0; j < length; j++) out[target + j]! += weight * rows[source + j]!;
-    }
-  }
+  functions.combineRows(8 * anglesAt, to.angleCount, from.angleCount, 8 * betweenAt, rowLength, 8 * outAt);
+  return floats.slice(outAt, end);
 }

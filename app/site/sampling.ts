@@ -59,12 +59,28 @@ export function chebyshevNodes(count: number, low: number, high: number): Float6
   );
 }
 
+const barycentric = new Map<number, Float64Array>();
+
+/** (−1)^i sin(π(i + ½)/count): what the weights share at every place. */
+function barycentricFactors(count: number): Float64Array {
+  let factors = barycentric.get(count);
+  if (!factors) {
+    factors = Float64Array.from(
+      { length: count },
+      (_, i) => (1 - 2 * (i % 2)) * Math.sin((Math.PI * (i + 0.5)) / count),
+    );
+    barycentric.set(count, factors);
+  }
+  return factors;
+}
+
 /**
  * Barycentric Lagrange weights at `x` for Chebyshev points of the first kind: value(x) = Σ out[i]·value(node i).
  * Source: J.-P. Berrut, L. N. Trefethen, Barycentric Lagrange interpolation, SIAM Review 46(3), 2004, eq. 5.3.
  */
 export function chebyshevWeights(nodes: Float64Array, x: number, out: Float64Array, offset = 0): void {
   const count = nodes.length;
+  const factors = barycentricFactors(count);
   let sum = 0;
   for (let i = 0; i < count; i++) {
     const difference = x - nodes[i]!;
@@ -73,7 +89,7 @@ export function chebyshevWeights(nodes: Float64Array, x: number, out: Float64Arr
       out[offset + i] = 1;
       return;
     }
-    const weight = ((i % 2 === 0 ? 1 : -1) * Math.sin((Math.PI * (i + 0.5)) / count)) / difference;
+    const weight = factors[i]! / difference;
     out[offset + i] = weight;
     sum += weight;
   }

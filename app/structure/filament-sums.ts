@@ -31,8 +31,10 @@ export class FilamentSums {
   readonly #sources: Float64Array;
   readonly #targets: Float64Array;
   readonly #statics: Float64Array;
+  /** 0 for sources across all targets: they add nothing. */
+  readonly #acts: Uint8Array;
 
-  /** `staticOf`: static part between a source and a target, image included. */
+  /** `staticOf`: static part between a source and a target, image included; 0 where the vectors are across each other. */
   constructor(sources: SumSources, targets: SumTargets, staticOf: (source: number, target: number) => number) {
     this.#sourceCount = sources.placesM.length / 3;
     this.#targetCount = targets.placesM.length / 3;
@@ -41,6 +43,7 @@ export class FilamentSums {
     this.#sources = new Float64Array(SOURCE * this.#sourceCount);
     this.#targets = new Float64Array(6 * this.#paddedCount);
     this.#statics = new Float64Array(this.#sourceCount * this.#paddedCount);
+    this.#acts = Uint8Array.from({ length: this.#sourceCount }, (_, s) => (actsOn(sources, s, targets) ? 1 : 0));
     for (let t = 0; t < this.#targetCount; t++) {
       for (let axis = 0; axis < 3; axis++) {
         this.#targets[axis * this.#paddedCount + t] = targets.placesM[3 * t + axis]!;
@@ -52,6 +55,7 @@ export class FilamentSums {
       for (const [b, block] of blocks.entries()) {
         if (block) this.#sources.set(block.subarray(3 * s, 3 * s + 3), SOURCE * s + 3 * b);
       }
+      if (this.#acts[s] === 0) continue;
       for (let t = 0; t < this.#targetCount; t++) this.#statics[s * this.#paddedCount + t] = staticOf(s, t);
     }
   }
@@ -59,8 +63,8 @@ export class FilamentSums {
   /** The sums for complex amplitudes (re, im of each source), re and im apart. The next call of anyone overwrites them. */
   at(kPerM: number, amplitudes: Float64Array): { readonly re: Float64Array; readonly im: Float64Array } {
     for (let s = 0; s < this.#sourceCount; s++) {
-      this.#sources[SOURCE * s + AMPLITUDE] = amplitudes[2 * s]!;
-      this.#sources[SOURCE * s + AMPLITUDE + 1] = amplitudes[2 * s + 1]!;
+      this.#sources[SOURCE * s + AMPLITUDE] = this.#acts[s]! * amplitudes[2 * s]!;
+      this.#sources[SOURCE * s + AMPLITUDE + 1] = this.#acts[s]! * amplitudes[2 * s + 1]!;
     }
     const count = this.#paddedCount;
     const targets = this.#sources.length;
@@ -87,4 +91,20 @@ export class FilamentSums {
     );
     return { re: floats.subarray(re, re + this.#targetCount), im: floats.subarray(im, im + this.#targetCount) };
   }
+}
+
+function actsOn({ vectors, images }: SumSources, s: number, targets: SumTargets): boolean {
+  for (const own of images ? [vectors, images.vectors] : [vectors]) {
+    for (let t = 0; t < targets.vectors.length; t += 3) {
+      if (
+        own[3 * s]! * targets.vectors[t]! +
+          own[3 * s + 1]! * targets.vectors[t + 1]! +
+          own[3 * s + 2]! * targets.vectors[t + 2]! !==
+        0
+      ) {
+        return true;
+      }
+    }
+  }
+  return false;
 }

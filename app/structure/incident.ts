@@ -21,3 +21,8 @@ export const emptyIncident = ({ edgeCount, nodeCount }: Mesh): Incident => ({
   injectedRe: new Float64Array(nodeCount),
   injectedIm: new Float64Array(nodeCount),
 });
+
+/** Takes everything out, for the next excitation. */
+export function clearIncident(incident: Incident): void {
+  for (const values of Object.values(incident)) values.fill(0);
+}

@@ -10,6 +10,11 @@ export interface EdgeCurrents {
   readonly im: Float64Array;
 }
 
+export const newCurrents = (count: number): EdgeCurrents => ({
+  re: new Float64Array(count),
+  im: new Float64Array(count),
+});
+
 /** Impedance in series with an edge, Ω. */
 export interface SeriesImpedance {
   readonly edge: number;
@@ -23,6 +28,8 @@ export class StructureSolver {
   readonly #partials: PartialElements;
   readonly #nodes: SymmetricMatrix;
   readonly #edges: SymmetricSystem;
+  /** Potential of what is injected, 1/m · A. */
+  readonly #injected: EdgeCurrents;
   #kPerM = 0;
 
   constructor(mesh: Mesh) {
@@ -31,6 +38,7 @@ export class StructureSolver {
     const size = mesh.nodeCount;
     this.#nodes = { size, re: new Float64Array(size * size), im: new Float64Array(size * size) };
     this.#edges = new SymmetricSystem(mesh.edgeCount);
+    this.#injected = newCurrents(size);
   }
 
   setFrequency(frequencyHz: number, series: readonly SeriesImpedance[]): void {
@@ -62,17 +70,15 @@ export class StructureSolver {
     this.#edges.solve(re, im);
   }
 
-  /** Right-hand side of the edges' equations for one excitation at the frequency set last. */
-  rightHandSide(incident: Incident): EdgeCurrents {
-    const { edgeCount, nodeCount, edgeFrom, edgeTo } = this.mesh;
+  /** Right-hand side of the edges' equations for one excitation at the frequency set last, in `out`. */
+  rightHandSide(incident: Incident, out = newCurrents(this.mesh.edgeCount)): EdgeCurrents {
+    const { edgeCount, edgeFrom, edgeTo } = this.mesh;
     const omegaMu = this.#kPerM * SPEED_OF_LIGHT_M_PER_S * MU0_H_PER_M;
     const scale = (4 * Math.PI) / omegaMu;
     const chargeScale = 1 / (this.#kPerM * this.#kPerM);
-    const gRe = new Float64Array(nodeCount);
-    const gIm = new Float64Array(nodeCount);
+    const { re: gRe, im: gIm } = this.#injected;
     this.#injectedPotential(incident, gRe, gIm);
-    const re = new Float64Array(edgeCount);
-    const im = new Float64Array(edgeCount);
+    const { re, im } = out;
     for (let e = 0; e < edgeCount; e++) {
       const from = edgeFrom[e]!;
       const to = edgeTo[e]!;
@@ -82,12 +88,14 @@ export class StructureSolver {
       re[e] = scale * vIm + chargeScale * ((to < 0 ? 0 : gRe[to]!) - gRe[from]!);
       im[e] = -scale * vRe + chargeScale * ((to < 0 ? 0 : gIm[to]!) - gIm[from]!);
     }
-    return { re, im };
+    return out;
   }
 
   /** Σ G · injected current at every node (1/m · A); zero without injection. */
   #injectedPotential({ injectedRe, injectedIm }: Incident, outRe: Float64Array, outIm: Float64Array): void {
     const { size, re, im } = this.#nodes;
+    outRe.fill(0);
+    outIm.fill(0);
     for (let n = 0; n < size; n++) {
       const iRe = injectedRe[n]!;
       const iIm = injectedIm[n]!;
