@@ -9,7 +9,7 @@ import { PROGRAM } from './run-cli.ts';
 
 const START_MS = 30_000;
 /** `QUIETBOARD_PROGRAM` names another build to be tested, for example an installed one. */
-const TESTED = process.env.QUIETBOARD_PROGRAM ?? PROGRAM;
+export const TESTED = process.env.QUIETBOARD_PROGRAM ?? PROGRAM;
 
 export interface HostOptions {
   /** Project to open first. */

@@ -297,6 +297,10 @@ describe('reports', () => {
     expect(comparison.comparison.worstMarginChangeDb).toBe(0);
     const { trend } = await host.call('runs.trend', { projectId: project.projectId });
     expect(trend.groups.map(({ points }) => points.length)).toEqual([1]);
+    for (const subject of [{ kind: 'comparison' as const, before: 1, after: 2 }, { kind: 'trend' as const }]) {
+      const pdf = await render(subject, 'pdf');
+      expect(new TextDecoder('latin1').decode(pdf.bytes.subarray(0, 5))).toBe('%PDF-');
+    }
     const html = await render({ kind: 'comparison', before: 1, after: 2 }, 'html');
     expect(new TextDecoder().decode(html.bytes)).toContain('Comparison');
     const csv = await render({ kind: 'trend' }, 'csv');
