@@ -31,6 +31,3 @@ export interface Transport {
   /** Calls back for every event of the name; the returned function ends it. */
   on(name: EventName, listener: (payload: unknown) => void): () => void;
 }
-
-/** Name of the transport on the page's global object, where the host puts one there. */
-export const TRANSPORT_KEY = 'quietboard';

@@ -17,7 +17,7 @@ ipcRenderer.on(EVENT, (_event, name: string, payload: unknown) => {
   for (const listener of listeners.get(name) ?? []) listener(payload);
 });
 
-contextBridge.exposeInMainWorld(KEY, {
+contextBridge.exposeInMainWorld('quietboard', {
   call: (name: string, input: unknown) => ipcRenderer.invoke(CALL, name, input),
   on: (name: string, listener: Listener) => {
     const own = listeners.get(name) ?? new Set();

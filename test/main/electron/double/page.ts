@@ -1,17 +1,22 @@
 import { readFileSync } from 'node:fs';
 import type { BrowserWindowConstructorOptions } from 'electron';
 import type { Browser, Page } from 'playwright-core';
-import type { ElectronDouble } from './double.ts';
 
 /** Chromium knows no schemes of ours: the page stands under an origin that nothing but the double answers for. */
 const ORIGIN = 'https://quietboard-app.test';
 
 const toReal = (url: string): string => url.replace(ORIGIN, 'quietboard://app');
 
+/** What the program has set up for its pages. */
+export interface PageServices {
+  readonly handlers: ReadonlyMap<string, (...args: never[]) => unknown>;
+  readonly protocols: ReadonlyMap<string, (request: Request) => Promise<Response>>;
+}
+
 /** A window's page: its files come from the program's protocol handler, its preload script runs before it. */
 export async function openPage(
   browser: Browser,
-  double: ElectronDouble,
+  double: PageServices,
   options: BrowserWindowConstructorOptions,
   url: string,
 ): Promise<Page> {
