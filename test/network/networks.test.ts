@@ -354,3 +354,17 @@ describe('special nets', () => {
     expect(violation(network, response!, 10e6, 0)).toBeLessThan(1e-8 * sizeOf(network, response!));
   });
 });
+
+it('what comes out at a frequency does not depend on what was solved before, to the last bit', () => {
+  fc.assert(
+    fc.property(anyNet({ loops: 2, isLossless: false }), (network) => {
+      const frequenciesHz = [30e6, 77e6, 410e6, 999e6, 5.1e9];
+      const upward = frequenciesHz.map((hz) => solveNetwork(network, hz));
+      // A copy is another network: nothing is known about it.
+      const copy = { ...network };
+      const downward = [...frequenciesHz].reverse().map((hz) => solveNetwork(copy, hz));
+      expect(downward.reverse()).toEqual(upward);
+    }),
+    { numRuns: 60, seed: SEED },
+  );
+});
