@@ -7,8 +7,6 @@ const { contextBridge, ipcRenderer } = require('electron') as typeof import('ele
 const CALL: typeof import('./channels.ts', { with: { 'resolution-mode': 'import' }}).CALL_CHANNEL = 'quietboard:call';
 const EVENT: typeof import('./channels.ts', { with: { 'resolution-mode': 'import' }}).EVENT_CHANNEL =
   'quietboard:event';
-const KEY: typeof import('../../app/contract/transport.ts', { with: { 'resolution-mode': 'import' }}).TRANSPORT_KEY =
-  'quietboard';
 
 type Listener = (payload: unknown) => void;
 const listeners = new Map<string, Set<Listener>>();
