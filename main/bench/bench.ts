@@ -6,12 +6,13 @@ import { killBench } from './kill-bench.ts';
 import { leversBench } from './levers-bench.ts';
 import { projectBench } from './project-bench.ts';
 import { scanBench } from './scan-bench.ts';
-import { largeStructureBench, smallStructureBench } from './structure-bench.ts';
+import { largeStructureBench, manyLinesBench, smallStructureBench } from './structure-bench.ts';
 
 const BENCHES: readonly (() => BenchResult | Promise<BenchResult>)[] = [
   factorBench,
   scanBench,
   smallStructureBench,
+  manyLinesBench,
   largeStructureBench,
   leversBench,
   projectBench,

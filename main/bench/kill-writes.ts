@@ -17,8 +17,9 @@ export interface KillReport {
   readonly faults: readonly string[];
 }
 
-/** Longest time that a writer lives after its first run, ms. */
-const MOST_LIFE_MS = 60;
+/** A writer lives until it has kept up to so many runs, and then up to so long, ms: about the time of a write. */
+const MOST_RUNS = 4;
+const MOST_LIFE_MS = 30;
 
 /**
  * Kills a process that writes to a project, again and again, each at a moment of its own (SIGKILL: nothing can be tidied up),
@@ -35,7 +36,7 @@ export async function killWrites(folder: string, writer: string, run: NewRun, ki
   const looked = new Set<number>();
   let caughtOpen = 0;
   for (let kill = 1; kill <= kills; kill++) {
-    for (const number of await killOne(writer, [file, runFile], MOST_LIFE_MS * random())) promised.add(number);
+    for (const number of await killOne(writer, [file, runFile], random)) promised.add(number);
     if (readdirSync(dirname(file)).includes(`${basename(file)}-wal`)) caughtOpen++;
     faults.push(...look(file, promised, looked).map((fault) => `kill ${kill}: ${fault}`));
   }
@@ -47,19 +48,25 @@ export async function killWrites(folder: string, writer: string, run: NewRun, ki
 }
 
 /** The numbers that the process had said when it was killed. */
-async function killOne(writer: string, args: readonly string[], lifeMs: number): Promise<number[]> {
+async function killOne(writer: string, args: readonly string[], random: () => number): Promise<number[]> {
   const child = spawn(process.execPath, [writer, ...args], { stdio: ['ignore', 'pipe', 'inherit'] });
+  // One line is "ready".
+  const linesBefore = 1 + Math.floor((MOST_RUNS + 1) * random());
+  const lifeMs = MOST_LIFE_MS * random();
   let said = '';
   child.stdout.setEncoding('utf8');
   child.stdout.on('data', (text: string) => {
-    if (said === '') setTimeout(() => child.kill('SIGKILL'), lifeMs);
+    const isWaiting = linesOf(said).length < linesBefore;
     said += text;
+    if (isWaiting && linesOf(said).length >= linesBefore) setTimeout(() => child.kill('SIGKILL'), lifeMs);
   });
   const [code] = (await once(child, 'close')) as [number | null];
   if (code !== null) throw new Error(`the writer ended by itself (code ${code})`);
-  // A number cut short was not promised.
-  return said.split('\n').slice(0, -1).map(Number);
+  return linesOf(said).slice(1).map(Number);
 }
+
+/** A line cut short was not said. */
+const linesOf = (text: string): string[] => text.split('\n').slice(0, -1);
 
 function look(file: string, promised: ReadonlySet<number>, looked: Set<number>): string[] {
   const faults: string[] = [];

@@ -28,37 +28,53 @@ export const largeStructureBench = (): Promise<BenchResult> =>
     ],
   });
 
+const SMALL: StructureCase = {
+  size: { widthMm: 60, heightMm: 40, nets: 10, segmentsPerNet: 10 },
+  cables: [
+    {
+      name: 'cable',
+      pointsMm: [
+        [60, 20, 0],
+        [1060, 20, 0],
+      ],
+    },
+  ],
+};
+
 /** A 60 × 40 mm board with one cable and 10 nets. */
 export const smallStructureBench = (): Promise<BenchResult> =>
-  structureBench('planes and cables: 60 × 40 mm, 10 nets, one 1 m cable', {
-    size: { widthMm: 60, heightMm: 40, nets: 10, segmentsPerNet: 10 },
-    cables: [
-      {
-        name: 'cable',
-        pointsMm: [
-          [60, 20, 0],
-          [1060, 20, 0],
-        ],
-      },
-    ],
-  });
+  structureBench('planes and cables: 60 × 40 mm, 10 nets, one 1 m cable', SMALL);
+
+/** The same with so many lines that planes and cables are interpolated between solved frequencies. */
+export const manyLinesBench = (): Promise<BenchResult> =>
+  structureBench('planes and cables: the same with lines every 4 MHz', { ...SMALL, clockMhz: 4 });
 
 interface StructureCase {
   readonly size: GeneratedSize;
   readonly cables: { name: string; pointsMm: [number, number, number][] }[];
+  /** Instead of the generated board's own. */
+  readonly clockMhz?: number;
 }
 
-async function structureBench(name: string, { size, cables }: StructureCase): Promise<BenchResult> {
-  const { board } = toBoard(boardFileSchema.parse({ ...generatedBoard(size), cables }));
+async function structureBench(name: string, { size, cables, clockMhz }: StructureCase): Promise<BenchResult> {
+  const file = generatedBoard(size);
+  const waveforms = file.waveforms!.map((waveform) => ({
+    ...waveform,
+    ...(clockMhz !== undefined && waveform.kind === 'trapezoid' && { frequencyMhz: clockMhz }),
+  }));
+  const { board } = toBoard(boardFileSchema.parse({ ...file, waveforms, cables }));
   const limits = { standard: 'CISPR 32', class: 'B', distanceM: 3, convertDistance: false };
   const started = performance.now();
+  const before = process.cpuUsage();
   const result = await runEstimate({ board, limits, request: requestFor(board) });
   const seconds = (performance.now() - started) / 1000;
+  const { user, system } = process.cpuUsage(before);
   return {
     name,
     seconds,
     peakMb: process.resourceUsage().maxRSS / 1024,
     detail: {
+      'processor time of all threads, seconds': (user + system) / 1e6,
       lines: new Set(result.points.map(({ frequencyHz }) => frequencyHz)).size,
       nets: board.nets.length,
       'limit standard': chooseLimits(limits).standard,
