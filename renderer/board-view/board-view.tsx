@@ -12,12 +12,12 @@ import { copperLayers } from './layer-sight.ts';
 import { Legend } from './legend.tsx';
 import { NetList } from './net-list.tsx';
 import { cycled, searchNets } from './net-search.ts';
+import { PlaceUnderPointer } from './place-under-pointer.ts';
 import { drawerSchema } from './remembered-view.ts';
 import { Stage } from './stage.tsx';
 import { Toolbar } from './toolbar.tsx';
 import { useCamera, useFollowing, useIsFromBottom } from './use-camera.ts';
 import { useScenes } from './use-scene.ts';
-import type { ScreenPoint } from './view.ts';
 
 /** The board: copper in greys, and in colour what the chosen line is made of. */
 export function BoardView(): ReactElement | null {
@@ -33,7 +33,7 @@ function View({ board }: { readonly board: Board }): ReactElement {
   const field = useRef<HTMLInputElement>(null);
   const [drawer, setDrawer] = useRemembered('board-view.drawer', drawerSchema, 'closed');
   const [query, setQuery] = useState('');
-  const [place, setPlace] = useState<ScreenPoint | null>(null);
+  const [place] = useState(() => new PlaceUnderPointer());
   const asked = useDeferredValue(query);
   const nets = useMemo(() => searchNets(board.nets, asked), [board.nets, asked]);
   const { net } = useSelection();
@@ -69,7 +69,7 @@ function View({ board }: { readonly board: Board }): ReactElement {
             camera={camera}
             scenes={scenes}
             label={label}
-            onPlace={setPlace}
+            onPlace={place.set}
             onSearch={() => field.current?.select()}
           />
           <Legend />

@@ -2,7 +2,7 @@ import type { Board, Net, PointM } from '../../app/board/board.ts';
 import { boxOf, joined } from './boxes.ts';
 import { PIN_RADIUS_M } from './copper-index.ts';
 import { TOLERANCES_M, thinned, tilesAcross } from './detail-levels.ts';
-import { addDot, addLine, addRing } from './paths.ts';
+import { addLine, addRing, addSpot } from './paths.ts';
 import type { BoxM } from './view.ts';
 
 /** Copper gathered into few paths: one a layer, width and tile of the board, so that one call draws hundreds of pieces. */
@@ -22,9 +22,11 @@ export interface DotBatch {
   readonly lastLayer: number;
   readonly box: BoxM;
   readonly pieces: number;
-  readonly leastRadiusM: number;
-  /** Whole dots, and what is drilled out of them. */
-  readonly path: () => { readonly dots: Path2D; readonly holes: Path2D };
+  readonly radiusM: number;
+  /** What is drilled out; 0 for pins. */
+  readonly holeRadiusM: number;
+  /** Spots: stroked, they become dots of any size. */
+  readonly path: () => Path2D;
 }
 
 export interface PlaneShape {
@@ -138,7 +140,7 @@ interface Dot {
   readonly kind: DotBatch['kind'];
   readonly atM: PointM;
   readonly radiusM: number;
-  readonly holeM: number;
+  readonly holeRadiusM: number;
   readonly firstLayer: number;
   readonly lastLayer: number;
   readonly box: BoxM;
@@ -148,33 +150,29 @@ function dotBatches(nets: readonly Net[]): DotBatch[] {
   const groups = new Map<string, Dot[]>();
   const add = (dot: Omit<Dot, 'box'>) => {
     const [xM, yM] = dot.atM;
-    const key = `${dot.kind} ${dot.firstLayer} ${dot.lastLayer}`;
+    const key = `${dot.kind} ${dot.firstLayer} ${dot.lastLayer} ${dot.radiusM}`;
     const group = groups.get(key) ?? [];
     group.push({ ...dot, box: { lowXM: xM, lowYM: yM, highXM: xM, highYM: yM } });
     groups.set(key, group);
   };
   for (const { vias, pins } of nets) {
     for (const { atM, drillM, fromLayerIndex: firstLayer, toLayerIndex: lastLayer } of vias) {
-      add({ kind: 'via', atM, radiusM: drillM / 2 + VIA_RIM_M, holeM: drillM / 2, firstLayer, lastLayer });
+      add({ kind: 'via', atM, radiusM: drillM / 2 + VIA_RIM_M, holeRadiusM: drillM / 2, firstLayer, lastLayer });
     }
     for (const { atM, layerIndex } of pins) {
-      add({ kind: 'pin', atM, radiusM: PIN_RADIUS_M, holeM: 0, firstLayer: layerIndex, lastLayer: layerIndex });
+      add({ kind: 'pin', atM, radiusM: PIN_RADIUS_M, holeRadiusM: 0, firstLayer: layerIndex, lastLayer: layerIndex });
     }
   }
   return [...groups.values()].flatMap((dots) =>
     tiled(dots, () => 1).map(({ items, box, pieces }): DotBatch => {
-      const { kind, firstLayer, lastLayer } = items[0]!;
-      const leastRadiusM = Math.min(...items.map(({ radiusM }) => radiusM));
-      return { kind, firstLayer, lastLayer, box, pieces, leastRadiusM, path: once(() => dotsPath(items)) };
+      const { kind, firstLayer, lastLayer, radiusM, holeRadiusM } = items[0]!;
+      return { kind, firstLayer, lastLayer, radiusM, holeRadiusM, box, pieces, path: once(() => spotsPath(items)) };
     }),
   );
 }
 
-function dotsPath(dots: readonly Dot[]): { dots: Path2D; holes: Path2D } {
-  const paths = { dots: new Path2D(), holes: new Path2D() };
-  for (const { atM, radiusM, holeM } of dots) {
-    addDot(paths.dots, atM, radiusM);
-    if (holeM > 0) addDot(paths.holes, atM, holeM);
-  }
-  return paths;
+function spotsPath(dots: readonly Dot[]): Path2D {
+  const path = new Path2D();
+  for (const { atM } of dots) addSpot(path, atM);
+  return path;
 }

@@ -31,8 +31,11 @@ const ROUND_FROM_PX = 2;
 export const strokeWidthM = (widthM: number, pxPerM: number): number => Math.max(widthM, LEAST_STROKE_PX / pxPerM);
 export const isRound = (widthM: number, pxPerM: number): boolean => widthM * pxPerM >= ROUND_FROM_PX;
 
-/** Things smaller than this are left out. */
-const LEAST_DOT_PX = 0.8;
+/** Dots smaller than this are left out, and those that are drawn are at least so wide that they are seen. */
+const LEAST_DOT_PX = 0.5;
+const LEAST_DOT_WIDTH_PX = 2.4;
+export const dotWidthM = (radiusM: number, pxPerM: number): number =>
+  Math.max(2 * radiusM, LEAST_DOT_WIDTH_PX / pxPerM);
 export const isSeen = (radiusM: number, pxPerM: number): boolean => radiusM * pxPerM >= LEAST_DOT_PX;
 
 /** How many columns and rows of tiles keep about this many pieces in each. */

@@ -1,3 +1,4 @@
+import { shortName } from '../../app/report/markup.ts';
 import { mToMm } from '../../app/units/convert.ts';
 import { isUpright } from './draw-overlays.ts';
 import { styleStroke } from './draw-still.ts';
@@ -24,6 +25,7 @@ export function drawLive(
   outlineCable(context, scene, scene.selectedCable, palette.color('ink'), px);
   if (scene.piece !== null) outlinePiece(context, scene, px);
   toScreenAxes(context, density);
+  nameCables(context, scene, view, size);
   drawFlags(context, scene, view, size);
 }
 
@@ -98,6 +100,28 @@ function outlinePiece(context: CanvasRenderingContext2D, { piece, palette }: Liv
   if (isUpright(piece!)) addDot(path, piece!.fromM, (4 * px) / mToMm(1));
   else addLine(path, [piece!.fromM, piece!.toM]);
   rim(context, path, palette.color('accent'), 8, px);
+}
+
+const NAME_APART_PX = 8;
+
+/** Every cable's name over its first stretch, beside the joint. */
+function nameCables(context: CanvasRenderingContext2D, { cables, palette }: LiveScene, view: View, size: Size): void {
+  context.font = `11px ${palette.font}`;
+  context.textBaseline = 'bottom';
+  context.lineWidth = 3;
+  context.lineJoin = 'round';
+  context.strokeStyle = palette.color('paper');
+  context.fillStyle = palette.color('ink');
+  for (const { name, pointsM } of cables) {
+    if (pointsM.length < 2) continue;
+    const joint = toScreen(view, size, [pointsM[0]![0], pointsM[0]![1]]);
+    const next = toScreen(view, size, [pointsM[1]![0], pointsM[1]![1]]);
+    const side = next.x < joint.x ? -1 : 1;
+    context.textAlign = side < 0 ? 'right' : 'left';
+    const text = shortName(name);
+    context.strokeText(text, joint.x + side * NAME_APART_PX, joint.y - NAME_APART_PX / 2);
+    context.fillText(text, joint.x + side * NAME_APART_PX, joint.y - NAME_APART_PX / 2);
+  }
 }
 
 /** Middle of a flag's field above its tip. */

@@ -2,7 +2,7 @@ import { mToMm } from '../../app/units/convert.ts';
 import type { Palette } from '../theme/palette.ts';
 import { overlap } from './boxes.ts';
 import type { DotBatch, TraceBatch } from './copper-batches.ts';
-import { isRound, isSeen, levelOfDetail, strokeWidthM } from './detail-levels.ts';
+import { dotWidthM, isRound, isSeen, levelOfDetail, strokeWidthM } from './detail-levels.ts';
 import { drawCables, drawCells, drawPieces } from './draw-overlays.ts';
 import { toBoardAxes } from './paths.ts';
 import type { StillScene } from './scene.ts';
@@ -122,17 +122,19 @@ function drawDots(
   { pxPerM }: View,
   seen: ReturnType<typeof seenBox>,
 ): number {
-  const { kind, firstLayer, lastLayer, leastRadiusM, box, pieces, path } = batch;
-  if (!overlap(box, seen) || !isSeen(leastRadiusM, pxPerM)) return 0;
+  const { kind, firstLayer, lastLayer, radiusM, holeRadiusM, box, pieces, path } = batch;
+  if (!overlap(box, seen) || !isSeen(radiusM, pxPerM)) return 0;
   let isShown = false;
   for (let layer = firstLayer; layer <= lastLayer; layer++) isShown ||= sight.isShown(layer);
   if (!isShown) return 0;
-  const { dots, holes } = path();
-  context.fillStyle = palette.color(kind === 'via' ? 'bar-path' : 'edge');
-  context.fill(dots);
-  if (kind === 'via') {
-    context.fillStyle = palette.color('paper');
-    context.fill(holes);
+  context.lineCap = 'round';
+  context.strokeStyle = palette.color(kind === 'via' ? 'bar-path' : 'edge');
+  context.lineWidth = mToMm(dotWidthM(radiusM, pxPerM));
+  context.stroke(path());
+  if (isSeen(holeRadiusM, pxPerM)) {
+    context.strokeStyle = palette.color('paper');
+    context.lineWidth = mToMm(2 * holeRadiusM);
+    context.stroke(path());
   }
   return pieces;
 }

@@ -7,6 +7,7 @@ import { useSelectedPoint, useSelection } from '../state/hooks.ts';
 import type { BoardCamera } from './board-camera.ts';
 import css from './board-view.module.css';
 import { netFacts } from './net-facts.ts';
+import type { PlaceUnderPointer } from './place-under-pointer.ts';
 import { type ScreenPoint, toWorld } from './view.ts';
 
 const MOST_BAR_PX = 110;
@@ -14,17 +15,22 @@ const MOST_BAR_PX = 110;
 export interface FooterProps {
   readonly board: Board;
   readonly camera: BoardCamera;
-  readonly place: ScreenPoint | null;
+  readonly place: PlaceUnderPointer;
 }
 
 /** Scale, place of the pointer, and facts of the chosen net. */
 export const Footer = ({ board, camera, place }: FooterProps): ReactElement => (
   <div className={css.footer}>
     <ScaleBar camera={camera} />
-    <span className={css.place}>{place === null ? '' : placeText(camera, place)}</span>
+    <Place camera={camera} place={place} />
     <ChosenFacts board={board} />
   </div>
 );
+
+function Place({ camera, place }: Omit<FooterProps, 'board'>): ReactElement {
+  const at = useSyncExternalStore(place.listen, place.at);
+  return <span className={css.place}>{at === null ? '' : placeText(camera, at)}</span>;
+}
 
 function placeText(camera: BoardCamera, place: ScreenPoint): string {
   const { view, size } = camera.state();

@@ -1,10 +1,10 @@
-import type { ReactElement } from 'react';
+import type { ReactElement, ReactNode } from 'react';
 import { frequencyText, levelText, quantityText } from '../i18n/format.ts';
 import { useDetail } from '../state/hooks.ts';
 import { usePalette } from '../theme/palette.ts';
 import css from './board-view.module.css';
 import { largestOf, SPAN_DB } from './levels.ts';
-import { useReadyDetail, useShownThings } from './use-scene.ts';
+import { useIsOfThisCopper, useReadyDetail, useShownThings } from './use-scene.ts';
 
 /** What the colours say, for the chosen line. */
 export function Legend(): ReactElement | null {
@@ -12,7 +12,8 @@ export function Legend(): ReactElement | null {
   const state = useDetail();
   const detail = useReadyDetail();
   const { levels } = usePalette();
-  if (colouring === 'none' || state.kind === 'none') return null;
+  const isOfThisCopper = useIsOfThisCopper();
+  if (colouring === 'none' || state.kind === 'none' || !isOfThisCopper) return null;
   if (state.kind === 'failed') return <Box>The line cannot be shown on the board: {state.message}</Box>;
   if (detail === null) return <Box>{frequencyText(state.lineHz)}: looking closer …</Box>;
   const { currentMap, pieces } = detail;
@@ -25,7 +26,7 @@ export function Legend(): ReactElement | null {
   return (
     <Box>
       <span>
-        {frequencyText(detail.frequencyHz)}: {colouring === 'shares' ? 'share of each piece' : 'current on the planes'}
+        {frequencyText(detail.frequencyHz)}: {colouring === 'shares' ? 'each piece by itself' : 'current on the planes'}
       </span>
       {top ? (
         <>
@@ -49,7 +50,7 @@ export function Legend(): ReactElement | null {
   );
 }
 
-const Box = ({ children }: { readonly children: React.ReactNode }): ReactElement => (
+const Box = ({ children }: { readonly children: ReactNode }): ReactElement => (
   <div className={css.legend} role="status">
     {children}
   </div>

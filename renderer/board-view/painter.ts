@@ -137,6 +137,7 @@ export class Painter {
       // A batch that drew next to nothing is a call all the same.
       this.#spent += step.value + 4;
     }
+    this.#still.settle();
   }
 
   #drawLive(scene: LiveScene, view: View, isAtRest: boolean): void {

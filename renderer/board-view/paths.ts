@@ -25,6 +25,15 @@ export function addDot(path: Path2D, [xM, yM]: readonly number[], radiusM: numbe
   path.arc(mToMm(xM!), mToMm(yM!), radius, 0, 2 * Math.PI);
 }
 
+/** A spot: stroked with a round cap it is a dot as wide as the stroke. */
+export function addSpot(path: Path2D, [xM, yM]: readonly number[]): void {
+  path.moveTo(mToMm(xM!), mToMm(yM!));
+  // A line without length would not be drawn.
+  path.lineTo(mToMm(xM!) + SPOT_MM, mToMm(yM!));
+}
+
+const SPOT_MM = 1e-3;
+
 /** From now on the context draws in millimetres of the board. */
 export function toBoardAxes(context: CanvasRenderingContext2D, view: View, size: Size, density: number): void {
   const scale = (view.pxPerM / mToMm(1)) * density;

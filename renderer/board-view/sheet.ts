@@ -47,9 +47,18 @@ export class Sheet {
 
   /** An empty picture to draw on. */
   begin(): CanvasRenderingContext2D {
-    const context = this.#back.getContext('2d')!;
+    const context = this.#context();
     context.reset();
     return context;
+  }
+
+  /** What was drawn so far becomes pixels now: otherwise all of it would wait for `finish`, and hold up that one frame. */
+  settle(): void {
+    this.#context().getImageData(0, 0, 1, 1);
+  }
+
+  #context(): CanvasRenderingContext2D {
+    return this.#back.getContext('2d', { willReadFrequently: true })!;
   }
 
   /** Shows what was drawn since `begin`, for this view. */

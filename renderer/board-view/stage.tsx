@@ -11,7 +11,7 @@ import { Painter } from './painter.ts';
 import { type Pick, pickAt } from './pick.ts';
 import { useCanvasSize } from './use-canvas-size.ts';
 import { placeOf, usePointer } from './use-pointer.ts';
-import type { Scenes } from './use-scene.ts';
+import { type Scenes, useLiveScene } from './use-scene.ts';
 import type { ScreenPoint } from './view.ts';
 
 const STEP_PX = 40;
@@ -42,6 +42,7 @@ export function Stage({ board, camera, scenes, label, onPlace, onSearch }: Stage
   const { widthPx, heightPx, density } = useCanvasSize(frame);
   const [pointed, setPointed] = useState<Pointed | null>(null);
   const [menu, setMenu] = useState<{ x: number; y: number; pick: Pick | null } | null>(null);
+  const live = useLiveScene(scenes.pick);
   search.current = onSearch;
 
   useEffect(() => {
@@ -63,7 +64,7 @@ export function Stage({ board, camera, scenes, label, onPlace, onSearch }: Stage
     camera.setSize({ widthPx, heightPx });
   }, [camera, widthPx, heightPx, density]);
   useEffect(() => painter.current!.setStill(scenes.still), [scenes.still]);
-  useEffect(() => painter.current!.setLive(scenes.live), [scenes.live]);
+  useEffect(() => painter.current!.setLive(live), [live]);
 
   const pick = (at: ScreenPoint): Pick | null => {
     const { view, size } = camera.state();
@@ -82,7 +83,7 @@ export function Stage({ board, camera, scenes, label, onPlace, onSearch }: Stage
   });
   const onContextMenu = (event: MouseEvent<HTMLElement>) => {
     event.preventDefault();
-    const { net } = scenes.live.selected === null ? { net: null } : { net: scenes.live.selected.name };
+    const net = live.selected?.name ?? null;
     // From the menu key: about what is chosen, in the middle of the picture.
     const isKey = event.button !== 2;
     const box = event.currentTarget.getBoundingClientRect();

@@ -20,23 +20,28 @@ const NO_FINDINGS: readonly Finding[] = [];
 export const useLayers = () => useRemembered('board-view.layers', layersSchema, ALL_LAYERS);
 export const useShownThings = () => useRemembered('board-view.shown', shownSchema, EVERYTHING);
 
-/** The result's findings, as long as they are about this copper. */
-export function useFindings(): readonly Finding[] {
-  const result = useApp((state) => state.result);
+/** Is the result about the copper that is shown? Another layout may have been opened since. */
+export function useIsOfThisCopper(): boolean {
+  const resultBase = useApp((state) => state.result?.work.baseId);
   const baseId = useWork()?.baseId;
-  return result !== null && result.work.baseId === baseId ? result.result.findings : NO_FINDINGS;
+  return resultBase !== undefined && resultBase === baseId;
 }
 
-/** The chosen line's detail, when it is there. */
+export function useFindings(): readonly Finding[] {
+  const findings = useApp((state) => state.result?.result.findings ?? NO_FINDINGS);
+  return useIsOfThisCopper() ? findings : NO_FINDINGS;
+}
+
+/** The chosen line's detail, when it is there and about this copper. */
 export function useReadyDetail() {
   const detail = useDetail();
   const { lineHz } = useSelection();
-  return detail.kind === 'ready' && detail.lineHz === lineHz ? detail.detail : null;
+  const isOfThisCopper = useIsOfThisCopper();
+  return isOfThisCopper && detail.kind === 'ready' && detail.lineHz === lineHz ? detail.detail : null;
 }
 
 export interface Scenes {
   readonly still: StillScene;
-  readonly live: LiveScene;
   readonly pick: PickScene;
 }
 
@@ -47,12 +52,9 @@ export function useScenes(board: Board, isFromBottom: boolean): Scenes {
   const [layers] = useLayers();
   const [shown] = useShownThings();
   const detail = useReadyDetail();
-  const selection = useSelection();
-  const hovered = useApp((state) => state.hover);
   const allFindings = useFindings();
   const copper = useMemo(() => batchCopper({ nets, planes, outlineM }), [nets, planes, outlineM]);
   const index = useMemo(() => indexCopper(nets), [nets]);
-  const byName = useMemo(() => new Map(nets.map((net) => [net.name, net])), [nets]);
   const copperNames = useMemo(() => copperLayers(stackup), [stackup]);
   const sight = useMemo(() => sightOf(copperNames, layers, isFromBottom), [copperNames, layers, isFromBottom]);
   const cables = useMemo(() => (shown.cables ? board.cables : []), [shown.cables, board.cables]);
@@ -77,7 +79,32 @@ export function useScenes(board: Board, isFromBottom: boolean): Scenes {
     };
   }, [drives, detail, stackup, copper, nets, planes, sight, copperNames, pieces, colouring, cables, palette]);
 
-  const live = useMemo((): LiveScene => {
+  const pieceIndex = useMemo(() => {
+    if (colouring !== 'shares' || pieces.length === 0) return null;
+    const topDb = pieces[0]!.levelDbuvPerM;
+    const layerOf = new Map(stackup.map(({ name }, i) => [name, i]));
+    return indexPieces(
+      pieces,
+      ({ layer, levelDbuvPerM }) =>
+        levelStep(levelDbuvPerM, topDb, 1) !== null && (layer === '' || sight.isShown(layerOf.get(layer) ?? -1)),
+    );
+  }, [colouring, pieces, stackup, sight]);
+  const pick = useMemo(
+    (): PickScene => ({ board, index, sight, findings, cables, pieces: pieceIndex }),
+    [board, index, sight, findings, cables, pieceIndex],
+  );
+  return { still, pick };
+}
+
+/** What follows pointer and choice. */
+export function useLiveScene({ board, sight, cables, findings }: PickScene): LiveScene {
+  const { nets, planes } = board;
+  const palette = usePalette();
+  const selection = useSelection();
+  const hovered = useApp((state) => state.hover);
+  const pieces = useReadyDetail()?.pieces ?? NO_PIECES;
+  const byName = useMemo(() => new Map(nets.map((net) => [net.name, net])), [nets]);
+  return useMemo(() => {
     const shapeOf = (name: string | null) => {
       const net = name === null ? undefined : byName.get(name);
       return net === undefined ? null : netShapeOf(net, planes);
@@ -95,20 +122,4 @@ export function useScenes(board: Board, isFromBottom: boolean): Scenes {
       palette,
     };
   }, [byName, planes, sight, selection, hovered.net, hovered.cable, cables, pieces, findings, palette]);
-
-  const pieceIndex = useMemo(() => {
-    if (colouring !== 'shares' || pieces.length === 0) return null;
-    const topDb = pieces[0]!.levelDbuvPerM;
-    const layerOf = new Map(stackup.map(({ name }, i) => [name, i]));
-    return indexPieces(
-      pieces,
-      ({ layer, levelDbuvPerM }) =>
-        levelStep(levelDbuvPerM, topDb, 1) !== null && (layer === '' || sight.isShown(layerOf.get(layer) ?? -1)),
-    );
-  }, [colouring, pieces, stackup, sight]);
-  const pick = useMemo(
-    (): PickScene => ({ board, index, sight, findings, cables, pieces: pieceIndex }),
-    [board, index, sight, findings, cables, pieceIndex],
-  );
-  return { still, live, pick };
 }
