@@ -22,7 +22,8 @@ export interface HelpTipProps {
 export function HelpTip({ question, children }: HelpTipProps): ReactElement {
   return (
     <DialogTrigger>
-      <Button className={css.help!} aria-label={question}>
+      {/* Its own button wherever it stands: inside a select it would else open the list. */}
+      <Button slot={null} className={css.help!} aria-label={question}>
         ?
       </Button>
       <Popover className={classes(css.popover)} offset={4}>

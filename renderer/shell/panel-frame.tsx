@@ -1,19 +1,25 @@
-import { Component, type ReactElement, type ReactNode, Suspense } from 'react';
+import { Component, type ReactElement, type ReactNode, Suspense, useId } from 'react';
 import { Button } from '../components/button.tsx';
 import { ErrorNotice } from '../components/notes.tsx';
 import type { Panel } from './panel.ts';
 import css from './panel-frame.module.css';
 
 /** A part in its place. A part that fails says so there; the others go on. */
-export const PanelFrame = ({ panel }: { readonly panel: Panel }): ReactElement => (
-  <section className={css.frame} aria-label={panel.label}>
-    <PanelGuard label={panel.label}>
-      <Suspense fallback={null}>
-        <panel.Content />
-      </Suspense>
-    </PanelGuard>
-  </section>
-);
+export function PanelFrame({ panel }: { readonly panel: Panel }): ReactElement {
+  const id = useId();
+  return (
+    <section className={css.frame} aria-labelledby={id}>
+      <h2 id={id} className={css.name}>
+        {panel.label}
+      </h2>
+      <PanelGuard label={panel.label}>
+        <Suspense fallback={null}>
+          <panel.Content />
+        </Suspense>
+      </PanelGuard>
+    </section>
+  );
+}
 
 interface GuardProps {
   readonly label: string;

@@ -1,7 +1,8 @@
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, it } from 'vitest';
 import { violations } from './axe.ts';
-import { describeInBrowser, picture, ServedWindow } from './served-window.ts';
+import { chooseFiles, describeInBrowser, picture, ServedWindow } from './served-window.ts';
+import { smallBoard } from './small-board.ts';
 
 /** Oracle: WCAG 2.2 A and AA as axe-core checks them (contrast among them), and reflow at 200 %. */
 
@@ -44,6 +45,25 @@ describeInBrowser('accessibility of the window', () => {
       }
     },
   );
+
+  it.each(['light', 'dark'] as const)('has no violation in any part, with a result: %s', async (colorScheme) => {
+    const { page, complaints } = await served.open({ colorScheme });
+    await chooseFiles(page, [smallBoard()]);
+    await page.getByRole('button', { name: /^Estimate/ }).click();
+    const status = page.getByRole('contentinfo');
+    await status.getByText('CISPR 32 class B at 3 m').waitFor({ timeout: 60_000 });
+    const tabs = page.getByRole('tablist', { name: 'Parts' }).getByRole('tab');
+    for (const tab of await tabs.all()) {
+      const name = (await tab.textContent())!;
+      await tab.click();
+      await page.getByRole('tabpanel').first().waitFor();
+      // Pictures and plots follow the panel.
+      await page.waitForTimeout(1500);
+      expect(await violations(page), name).toEqual([]);
+      await page.screenshot({ path: picture(`${name.toLowerCase()}-${colorScheme}`) });
+    }
+    expect(complaints).toEqual([]);
+  });
 
   it('needs no sideways scrolling at 200 % on a screen of 1280 × 720', async () => {
     // What the browser's zoom does: half as many CSS pixels, twice the density.
