@@ -46,7 +46,7 @@ function ScaleBar({ camera }: { readonly camera: BoardCamera }): ReactElement {
   const pxPerMm = pxPerM / mToMm(1);
   const lengthMm = roundStep(MOST_BAR_PX / pxPerMm, 1.999);
   return (
-    <span className={css.scaleBar}>
+    <span className={css.scaleBar} role="img" aria-label={`Scale: ${numberText(lengthMm)} mm`}>
       <span className={css.bar} style={{ width: lengthMm * pxPerMm }} />
       {numberText(lengthMm)} mm
     </span>

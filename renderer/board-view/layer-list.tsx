@@ -27,7 +27,7 @@ export function LayerList({ board, isFromBottom }: LayerListProps): ReactElement
     setLayers({ hidden: layers.hidden.filter((one) => one !== name), active: layers.active === name ? null : name });
   return (
     <div className={css.layers}>
-      <h3>Copper, from the top</h3>
+      <h2>Copper, from the top</h2>
       <ul>
         {copper.map(({ index, name }) => (
           <li key={index} data-active={index === activeLayer || undefined}>
@@ -46,7 +46,7 @@ export function LayerList({ board, isFromBottom }: LayerListProps): ReactElement
       <Button look="quiet" onPress={() => setLayers({ hidden: [], active: layers.active })}>
         Show all layers
       </Button>
-      <h3>Besides copper</h3>
+      <h2>Besides copper</h2>
       <Checkbox isSelected={shown.cables} onChange={(cables) => setShown({ ...shown, cables })}>
         Cables ({board.cables.length})
       </Checkbox>
