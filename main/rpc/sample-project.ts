@@ -1,4 +1,3 @@
-import { copyFileSync, existsSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { runSettingsSchema } from '../../app/project/run-settings.ts';
@@ -14,19 +13,13 @@ const REVISION = 'rev-b';
 const samplesFolder = (): string => fileURLToPath(new URL('../../../samples/valve-controller', import.meta.url));
 
 /**
- * A fresh copy of the sample project in the folder; returns its file. Where the samples hold it ready made, with the runs of
- * all revisions, that is copied; else it is made from the sample's files and has no runs yet.
+ * A new project in the folder with the sample's board and sources as its draft; returns its file. It holds no runs: results
+ * kept ready would be those of the program as it once was.
  */
 export async function makeSampleProject(folder: string): Promise<string> {
   const file = newProjectFile(folder, NAME);
-  const samples = samplesFolder();
-  const readyMade = join(samples, 'valve-controller.quietboard');
-  if (existsSync(readyMade)) {
-    copyFileSync(readyMade, file);
-    return file;
-  }
-  const board = join(samples, `${REVISION}.board.json`);
-  const { document } = await loadBoard(board, join(samples, `${REVISION}.sources.json`));
+  const beside = (kind: string) => join(samplesFolder(), `${REVISION}.${kind}.json`);
+  const { document } = await loadBoard(beside('board'), beside('sources'));
   const project = Project.open(file, { create: true });
   try {
     project.saveDraft({ document, settings: runSettingsSchema.parse({}) }, 0);
