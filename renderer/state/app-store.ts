@@ -107,6 +107,8 @@ export interface AppState {
   /** What changes are compared against: drawn as a ghost. */
   readonly kept: ShownResult | null;
   readonly trial: Trial | null;
+  /** The quick answer to the present document is under way: what is shown is of a moment ago. */
+  readonly isTrying: boolean;
   /** Lines finished so far of the running estimate. */
   readonly partial: readonly ResultPoint[];
   readonly jobs: readonly Job[];
@@ -143,6 +145,7 @@ export const EMPTY_PROJECT = {
   result: null,
   kept: null,
   trial: null,
+  isTrying: false,
   partial: [],
   failure: null,
   selection: NO_SELECTION,

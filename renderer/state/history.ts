@@ -19,6 +19,8 @@ export interface History<T> {
 const MOST_STEPS = 200;
 /** A pause longer than this between two keystrokes or moves makes two steps. */
 const MERGE_WITHIN_MS = 1500;
+/** Begins the merge keys of gestures, which say themselves where they end (a pointer let go): there a pause makes no step. */
+export const GESTURE = 'gesture ';
 
 export const startHistory = <T>(present: T): History<T> => ({ past: [], present, future: [], merge: null });
 
@@ -33,7 +35,9 @@ export function edited<T>(
   if (value === history.present) return history;
   const merge = mergeKey === null ? null : { key: mergeKey, atMs };
   const isSameGesture =
-    history.merge !== null && history.merge.key === mergeKey && atMs - history.merge.atMs <= MERGE_WITHIN_MS;
+    history.merge !== null &&
+    history.merge.key === mergeKey &&
+    (mergeKey.startsWith(GESTURE) || atMs - history.merge.atMs <= MERGE_WITHIN_MS);
   if (isSameGesture && history.past.length > 0) return { ...history, present: value, future: [], merge };
   const past = [...history.past, { label, value: history.present }].slice(-MOST_STEPS);
   return { past, present: value, future: [], merge };

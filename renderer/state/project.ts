@@ -7,7 +7,7 @@ import { forgetDraft, saveDraft, takeSaved } from './draft.ts';
 import { runJob } from './jobs.ts';
 import { leaveRemembered, loadRemembered } from './remembered.ts';
 import { loadRun, showResult } from './result.ts';
-import { refreshMeasurements, refreshRuns } from './runs.ts';
+import { finishDeletes, refreshMeasurements, refreshRuns } from './runs.ts';
 import { clearSelection } from './selection.ts';
 import { documentRefOf, sameWork } from './work.ts';
 
@@ -73,7 +73,7 @@ async function leaveProject(): Promise<void> {
   const { project } = getState();
   clearSelection();
   forgetDraft();
-  await leaveRemembered();
+  await Promise.all([leaveRemembered(), finishDeletes()]);
   if (project !== null) await call('project.close', { projectId: project.projectId });
 }
 
@@ -83,6 +83,11 @@ export async function showProject(project: Project): Promise<void> {
   try {
     await Promise.all([loadRemembered('project'), refreshRuns(), refreshMeasurements(), showDraft(project)]);
     await showNewestRun();
+  } catch (error) {
+    // One that cannot be read is not left half open.
+    await leaveProject();
+    setState({ project: null, ...EMPTY_PROJECT });
+    throw error;
   } finally {
     setState({ isOpening: false });
   }

@@ -25,25 +25,22 @@ export interface Shown {
 /** The last `Shown` keeps its identity while nothing in it changed. */
 let last: { readonly state: readonly unknown[]; readonly shown: Shown | null } | null = null;
 
-export function shownOf({ partial, trial, result, history }: AppState): Shown | null {
-  const state = [partial, trial, result, history?.present];
+export function shownOf(app: AppState): Shown | null {
+  const state = [app.partial, app.trial, app.result, app.history?.present, app.isTrying];
   if (last?.state.every((value, i) => value === state[i])) return last.shown;
-  last = { state, shown: deriveShown(partial, trial, result, history) };
+  last = { state, shown: deriveShown(app) };
   return last.shown;
 }
 
-function deriveShown(
-  partial: AppState['partial'],
-  trial: AppState['trial'],
-  result: AppState['result'],
-  history: AppState['history'],
-): Shown | null {
+function deriveShown({ partial, trial, result, history, isTrying }: AppState): Shown | null {
   if (partial.length > 0) return { source: 'partial', points: partial, worst: null, verdict: null, isOutdated: false };
   const isOf = (work: Trial['work']) => history !== null && sameWork(work, history.present);
+  // Between a change and its quick answer the last one stays: else every move of a lever would flash the old result.
+  if (isTrying && trial !== null) return { source: 'trial', ...trial, isOutdated: false };
   if (trial !== null && isOf(trial.work)) return { source: 'trial', ...trial, isOutdated: false };
   if (result === null) return null;
   const { points, worst, verdict } = result.result;
-  return { source: 'result', points, worst, verdict, isOutdated: !isOf(result.work) };
+  return { source: 'result', points, worst, verdict, isOutdated: !isTrying && !isOf(result.work) };
 }
 
 /** Estimates the present document and keeps the run. */
@@ -127,7 +124,10 @@ export function discardChanges(): void {
 export async function keepAsRevision(revision: string, note = ''): Promise<void> {
   await editLayout(`Revision ${revision}`, (layout) => ({ ...layout, revision }));
   await estimate(note);
-  setState({ kept: null, trial: null });
+  const { result, history } = getState();
+  // Stopped or failed: the kept state stays, to go back to.
+  if (result !== null && history !== null && sameWork(result.work, history.present))
+    setState({ kept: null, trial: null });
 }
 
 /** Caveats that concern the chosen line, or all of them when none is chosen. */

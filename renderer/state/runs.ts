@@ -28,6 +28,8 @@ export async function setNote(run: number, note: string): Promise<void> {
   setState(({ runs }) => ({ runs: runs.map((row) => (row.run === run ? { ...row, note } : row)) }));
 }
 
+const vanishing = new Set<() => Promise<void>>();
+
 /** Takes the run out of the list at once and deletes it when the notice with its way back has gone. */
 export function deleteRun(run: number): void {
   const { project } = getState();
@@ -38,22 +40,32 @@ export function deleteRun(run: number): void {
     runs: runs.filter((row) => row.run !== run),
     vanishingRuns: new Set(vanishingRuns).add(run),
   }));
-  const release = () =>
-    setState(({ vanishingRuns }) => ({ vanishingRuns: new Set([...vanishingRuns].filter((other) => other !== run)) }));
+  const listAgain = () => {
+    setState(({ vanishingRuns }) => ({
+      vanishingRuns: new Set([...vanishingRuns].filter((other) => other !== run)),
+    }));
+    return attempt('Runs', refreshRuns);
+  };
   const keep = () => {
     isWanted = true;
-    release();
-    void attempt('Runs', refreshRuns);
+    void listAgain();
   };
-  notify({ tone: 'plain', text: `Run ${run} deleted`, action: { label: 'Undo', run: keep } }, () => {
+  let removed = Promise.resolve();
+  const onClose = () => {
+    vanishing.delete(finish);
     if (isWanted) return;
-    void attempt(`Run ${run}`, async () => {
-      try {
-        await call('runs.delete', { projectId, run });
-      } finally {
-        release();
-      }
-      await refreshRuns();
-    });
-  });
+    const remove = async () => void (await call('runs.delete', { projectId, run }));
+    removed = attempt(`Run ${run}`, remove).then(listAgain);
+  };
+  const dismiss = notify({ tone: 'plain', text: `Run ${run} deleted`, action: { label: 'Undo', run: keep } }, onClose);
+  const finish = () => {
+    dismiss();
+    return removed;
+  };
+  vanishing.add(finish);
+}
+
+/** Ends the time to undo of every deleted run: the project is about to be closed. */
+export async function finishDeletes(): Promise<void> {
+  await Promise.all([...vanishing].map((finish) => finish()));
 }
