@@ -62,6 +62,27 @@ const LAMP: BoardFileInput = {
 /** One clock over one plane, no cable: estimated in a second or two. */
 export const smallBoard = (): NamedFile => jsonFile('lamp.board.json', LAMP);
 
+/** The small board under other names. */
+export function boardWith(names: {
+  readonly name: string;
+  readonly revision: string;
+  readonly net: string;
+  readonly pin: string;
+  readonly waveform: string;
+}): NamedFile {
+  const { name, revision, net, pin, waveform } = names;
+  const [clk] = LAMP.nets!;
+  return jsonFile('named.board.json', {
+    ...LAMP,
+    name,
+    revision,
+    nets: [{ ...clk, name: net, pins: clk!.pins!.map((old, i) => ({ ...old, name: i === 0 ? pin : old.name })) }],
+    waveforms: LAMP.waveforms!.map((old) => ({ ...old, name: waveform })),
+    drives: LAMP.drives!.map((old) => ({ ...old, net, waveform })),
+    loads: LAMP.loads!.map((old) => ({ ...old, net })),
+  });
+}
+
 /** Sources that load its net anew. */
 export const otherSources = (): NamedFile =>
   jsonFile('slower.sources.json', {
