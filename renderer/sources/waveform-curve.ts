@@ -15,6 +15,8 @@ const SHOWN_PERIODS = 2;
 const SHOWN_BITS = 16;
 const HIGHEST_HZ = 1e9;
 const MOST_LINES = 4000;
+/** Lines further below the strongest do not matter: rounding leaves such ones at the zeros of a spectrum. */
+const DEEPEST_DB = 120;
 
 /** The waveform over two periods (sixteen bits), s and V or A. */
 export function timeCurve(waveform: Waveform): Curve[] {
@@ -38,5 +40,6 @@ export function lineCurve(waveform: Waveform): Curve[] {
     const peak = Math.hypot(phasors[2 * i]!, phasors[2 * i + 1]!);
     if (peak > 0) lines.push({ x: frequenciesHz[i]!, y: amplitudeToDb(peak / Math.SQRT2 / 1e-6) });
   }
-  return lines;
+  const strongest = lines.reduce((level, { y }) => Math.max(level, y), -Infinity);
+  return lines.filter(({ y }) => y >= strongest - DEEPEST_DB);
 }

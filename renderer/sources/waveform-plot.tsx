@@ -10,6 +10,7 @@ import {
 import { type ReactElement, useMemo } from 'react';
 import { Scatter } from 'react-chartjs-2';
 import type { Waveform } from '../../app/board/board.ts';
+import { frequencyTicks } from '../../app/report/figures/axis.ts';
 import { frequencyText, quantityText } from '../i18n/format.ts';
 import { type Palette, usePalette } from '../theme/palette.ts';
 import css from './sources.module.css';
@@ -74,6 +75,16 @@ function Plot({ label, curve, palette, isLog, xText, yTitle }: PlotProps): React
   );
 }
 
+const MOST_LABELS = 6;
+
+function labelledTicks(fromHz: number, toHz: number): number[] {
+  const labelled = frequencyTicks(fromHz, toHz).filter(({ label }) => label !== undefined);
+  const isCrowded = labelled.length > MOST_LABELS;
+  return labelled
+    .map(({ frequencyHz }) => frequencyHz)
+    .filter((frequencyHz) => !isCrowded || Number.isInteger(Math.round(Math.log10(frequencyHz) * 1e9) / 1e9));
+}
+
 function optionsOf(
   palette: Palette,
   isLog: boolean,
@@ -91,7 +102,18 @@ function optionsOf(
       x: {
         type: isLog ? 'logarithmic' : 'linear',
         grid,
-        ticks: { ...text, maxRotation: 0, maxTicksLimit: 5, callback: (value) => xText(Number(value)) },
+        // Frequencies as everywhere: 1, 2, 3, 5 of a decade, or its beginning alone where there are many.
+        ...(isLog && {
+          afterBuildTicks: (axis: { min: number; max: number; ticks: { value: number }[] }) => {
+            axis.ticks = labelledTicks(axis.min, axis.max).map((value) => ({ value }));
+          },
+        }),
+        ticks: {
+          ...text,
+          maxRotation: 0,
+          ...(isLog ? { autoSkipPadding: 12 } : { maxTicksLimit: 5 }),
+          callback: (value) => xText(Number(value)),
+        },
       },
       y: { grid, ticks: { ...text, maxTicksLimit: 6 }, title: { display: true, text: yTitle, ...text } },
     },

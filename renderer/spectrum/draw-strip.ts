@@ -87,7 +87,7 @@ export function drawStrip(
     if (standing !== 'fine') drawMark(context, standing, { x: xPx, y: yAt(point.marginDb) }, palette, 0.7);
   }
   context.fillStyle = palette.color('ink-quiet');
-  context.fillText('limit', 0, yAt(0) - 2);
+  context.fillText('limit', SIDE_PX + 2, yAt(0) - 2);
 
   const shown = scene.ticks.find(({ point }) => point.frequencyHz === scene.hoveredHz)?.point ?? scene.chosen;
   if (shown !== null && shown.frequencyHz >= scene.range[0] && shown.frequencyHz <= scene.range[1]) {

@@ -4,6 +4,8 @@ import { clipLine, type ReportLimitLine } from '../../app/report/figures/limit-l
 const STEP_DB = 10;
 /** Lines further below the limits are not worth the room. */
 const BELOW_DB = 50;
+/** Room below the limits while there is no line yet. */
+const EMPTY_BELOW_DB = 30;
 const EMPTY = [0, 70] as const;
 
 /** Lowest and highest level of the axis: the limits, everything above them, and what matters below. */
@@ -29,6 +31,8 @@ export function levelRange(
     }
   }
   if (!Number.isFinite(highest)) return EMPTY;
+  // Before the first estimate the limits stand where they will stand.
+  if (!Number.isFinite(lowest)) lowest = lowestLimit - EMPTY_BELOW_DB;
   const bottom = Number.isFinite(lowestLimit)
     ? Math.max(lowestLimit - BELOW_DB, Math.min(lowest, lowestLimit))
     : lowest;
