@@ -6,6 +6,7 @@ import { useRemembered } from '../state/remembered.ts';
 import { selectNet } from '../state/selection.ts';
 import { showNet } from './board-menu.ts';
 import css from './board-view.module.css';
+import { FindingList } from './finding-list.tsx';
 import { Footer } from './footer.tsx';
 import { LayerList } from './layer-list.tsx';
 import { copperLayers } from './layer-sight.ts';
@@ -76,11 +77,9 @@ function View({ board }: { readonly board: Board }): ReactElement {
         </div>
         {drawer !== 'closed' && (
           <div className={css.drawer}>
-            {drawer === 'layers' ? (
-              <LayerList board={board} isFromBottom={isFromBottom} />
-            ) : (
-              <NetList nets={nets} onShow={show} />
-            )}
+            {drawer === 'layers' && <LayerList board={board} isFromBottom={isFromBottom} />}
+            {drawer === 'nets' && <NetList nets={nets} onShow={show} />}
+            {drawer === 'findings' && <FindingList />}
           </div>
         )}
       </div>

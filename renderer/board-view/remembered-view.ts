@@ -34,5 +34,5 @@ export const shownSchema = z.object({
 export type RememberedShown = z.output<typeof shownSchema>;
 export const EVERYTHING: RememberedShown = { colouring: 'shares', cables: true, findings: true };
 
-export const drawerSchema = z.enum(['closed', 'layers', 'nets']);
+export const drawerSchema = z.enum(['closed', 'layers', 'nets', 'findings']);
 export type Drawer = z.output<typeof drawerSchema>;

@@ -80,6 +80,9 @@ export function Toolbar(props: ToolbarProps): ReactElement {
         <Button look="quiet" aria-pressed={drawer === 'nets'} onPress={() => toggle('nets')}>
           Nets
         </Button>
+        <Button look="quiet" aria-pressed={drawer === 'findings'} onPress={() => toggle('findings')}>
+          Findings
+        </Button>
         <MenuButton label="More on the board" groups={() => [{ label: 'Board', entries: viewEntries() }]}>
           <Icon name="more" />
         </MenuButton>

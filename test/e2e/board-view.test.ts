@@ -107,7 +107,7 @@ describeInBrowser('the board', () => {
   it.each(['light', 'dark'] as const)('has no violation with its lists open, and stands 320 px: %s', async (theme) => {
     const { page } = await served.open({ colorScheme: theme });
     await openLamp(page);
-    for (const list of ['Layers', 'Nets']) {
+    for (const list of ['Layers', 'Nets', 'Findings']) {
       await board(page).getByRole('button', { name: list, exact: true }).click();
       expect(await violations(page), list).toEqual([]);
     }
