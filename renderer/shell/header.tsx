@@ -36,12 +36,10 @@ function Title(): ReactElement {
   return (
     <div className={css.title}>
       <h1>{project.name}</h1>
-      {name !== '' && (
-        <span className={css.board}>
-          {name}
-          {revision !== '' && <span className={css.revision}>rev {revision}</span>}
-        </span>
-      )}
+      <span className={css.board}>
+        {name !== '' && name !== project.name && <span className={css.name}>{name}</span>}
+        {revision !== '' && <span className={css.revision}>rev {revision}</span>}
+      </span>
       {project.isReadOnly && <span className={css.revision}>read only</span>}
     </div>
   );

@@ -1,5 +1,6 @@
 import { boardPanel } from '../board-view/index.ts';
 import { ledgerPanel } from '../ledger/index.ts';
+import { leversPanel } from '../levers/index.ts';
 import { reportPanel } from '../report/index.ts';
 import { setupPanel } from '../setup/index.ts';
 import { sourcesPanel } from '../sources/index.ts';
@@ -12,6 +13,7 @@ export const PANELS: readonly Panel[] = [
   boardPanel,
   spectrumPanel,
   sharesPanel,
+  leversPanel,
   sourcesPanel,
   setupPanel,
   ledgerPanel,
