@@ -1,5 +1,6 @@
 import type { IncomingMessage, ServerResponse } from 'node:http';
 import { FRAMED_TYPE, JSON_TYPE, packFramed, parseJson, unpackFramed } from '../../app/contract/framing.ts';
+import { type ProcedureName, procedures } from '../../app/contract/procedures.ts';
 import type { Reply } from '../../app/contract/transport.ts';
 import { AppError } from '../../app/errors.ts';
 import { refusal } from '../rpc/dispatch.ts';
@@ -10,7 +11,7 @@ import { readBody, TooLarge } from './read-body.ts';
 const MAX_JSON_BYTES = 64e6;
 /** JSON part and bytes of a framed body: a little more than the largest upload. */
 const MAX_FRAMED_BYTES = 260e6;
-/** An answer that takes long is begun with white space, so that nobody on the way takes the connection for dead. */
+/** A JSON answer that takes long is begun with white space, so that nobody on the way takes the connection for dead. */
 const KEEP_ALIVE_MS = 15_000;
 /** How long the rest of a refused body is read and thrown away, so that the caller gets to see the answer; then it is cut off. */
 const LINGER_MS = 2_000;
@@ -52,6 +53,8 @@ async function answer(host: Host, name: string, input: unknown, response: Server
     if (!response.writableFinished && typeof jobId === 'string') host.stopJob(jobId);
   });
   const keepAlive = setInterval(() => {
+    // A framed answer has no place for it.
+    if (answersBytes(name)) return;
     if (!response.headersSent) response.writeHead(200, { 'Content-Type': JSON_TYPE });
     response.write(' ');
   }, KEEP_ALIVE_MS);
@@ -69,6 +72,12 @@ function inputOf(type: string, body: Uint8Array): unknown {
     throw new AppError('input', 'the JSON part of the body must be an object; received something else', 'body');
   }
   return { ...json, bytes };
+}
+
+function answersBytes(name: string): boolean {
+  if (!Object.hasOwn(procedures, name)) return false;
+  const { output } = procedures[name as ProcedureName];
+  return 'shape' in output && 'bytes' in output.shape;
 }
 
 /** undefined for a reply without bytes. */
