@@ -100,6 +100,22 @@ describe('a file of an earlier version', () => {
     project.close();
   });
 
+  it('waits for no reader, and says when another program is writing; the file stays as it is', () => {
+    const file = projectFile();
+    const other = new Database(file);
+    other.exec('BEGIN IMMEDIATE');
+    let copies = 0;
+    const db = new Database(file, { timeout: 50 });
+    const steps = [...migrations, addColour];
+    expect(() => migrate(db, file, steps, () => `copy ${++copies}`)).toThrow('database is locked');
+    // The lock comes first: a copy that another program could outdate is not made.
+    expect(copies).toBe(0);
+    other.exec('ROLLBACK');
+    other.close();
+    expect(migrate(db, file, steps, () => `copy ${++copies}`)?.copy).toBe('copy 1');
+    db.close();
+  });
+
   it('steps that another program has done meanwhile are not done again', () => {
     const file = projectFile();
     const first = new Database(file);
