@@ -3,6 +3,9 @@ import { hzToMhz, mToMm } from '../units/convert.ts';
 /** Numbers for people: rounded, with their unit. Nothing here is fit for reading back by a program. */
 
 /** Fixed decimals; a value that rounds to zero has no sign; not finite: "—". */
+/** A direction in whole degrees, 0 to 359. */
+export const degreesText = (angleDeg: number): string => String(((Math.round(angleDeg) % 360) + 360) % 360);
+
 export function fixed(value: number, decimals: number): string {
   if (!Number.isFinite(value)) return value === -Infinity ? '-∞' : '—';
   const text = value.toFixed(decimals);

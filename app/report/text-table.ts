@@ -1,6 +1,6 @@
 import type { Detector, EstimateResult, ResultPoint } from '../estimate/result.ts';
 import { isItself, mainContributor, pathText } from './contributor-text.ts';
-import { fixed, levelText, marginText, mhzText } from './format.ts';
+import { degreesText, fixed, levelText, marginText, mhzText } from './format.ts';
 import { safeTerminalText, terminalWidth } from './safe-text.ts';
 import { type Standing, standingOf } from './verdict.ts';
 import { padEnd, padStart } from './wrap.ts';
@@ -27,7 +27,7 @@ const COLUMNS: readonly Column[] = [
   { head: '', align: 'left', dropRank: 0, text: (_point, standing) => STANDING_WORD[standing] },
   { head: 'pol', align: 'left', dropRank: 1, text: (point) => (point.polarization === 'horizontal' ? 'H' : 'V') },
   { head: 'm', align: 'right', dropRank: 4, text: (point) => fixed(point.antennaHeightM, 2) },
-  { head: '°', align: 'right', dropRank: 5, text: (point) => fixed(point.turntableDeg, 0) },
+  { head: '°', align: 'right', dropRank: 5, text: (point) => degreesText(point.turntableDeg) },
 ];
 
 /** Said above the table, so that the columns need not be as wide as their units. */

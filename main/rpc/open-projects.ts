@@ -1,5 +1,5 @@
 import { randomUUID } from 'node:crypto';
-import { existsSync, realpathSync } from 'node:fs';
+import { existsSync, realpathSync, rmSync } from 'node:fs';
 import { resolve } from 'node:path';
 import type { Output } from '../../app/contract/procedures.ts';
 import { AppError } from '../../app/errors.ts';
@@ -15,6 +15,8 @@ interface OpenProject {
   readonly project: Project;
   /** Windows that have it open: the last one closes it. */
   users: number;
+  /** Begun here, without a name: when it is closed empty, its file goes. */
+  readonly isBegun: boolean;
   /** Of SQLite: another number after another connection has written. */
   dataVersion: number;
 }
@@ -33,14 +35,20 @@ export class OpenProjects {
   }
 
   /** Opens a project, for reading only where it cannot be written. Throws as `Project.open`. */
-  open(file: string, create: boolean): ProjectAnswer {
+  open(file: string, create: boolean, isBegun = false): ProjectAnswer {
     const known = this.#byFile.get(realOf(file));
     if (known !== undefined) {
       known.users += 1;
       return answerOf(known);
     }
     const project = openOrRead(file, create);
-    const opened: OpenProject = { id: randomUUID(), project, users: 1, dataVersion: project.dataVersion() };
+    const opened: OpenProject = {
+      id: randomUUID(),
+      project,
+      users: 1,
+      isBegun,
+      dataVersion: project.dataVersion(),
+    };
     this.#byFile.set(realOf(file), opened);
     this.#byId.set(opened.id, opened);
     return answerOf(opened);
@@ -75,7 +83,10 @@ export class OpenProjects {
   #end(entry: OpenProject): void {
     this.#byId.delete(entry.id);
     for (const [file, other] of this.#byFile) if (other === entry) this.#byFile.delete(file);
-    entry.project.close();
+    const { project } = entry;
+    const isEmpty = entry.isBegun && project.draft() === undefined && project.runs().length === 0;
+    project.close();
+    if (isEmpty) rmSync(project.file, { force: true });
   }
 
   /** What another program changed is not known: windows look at all of it. */

@@ -2,10 +2,10 @@ import { randomUUID } from 'node:crypto';
 import { mkdtemp, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { AppError, inputError } from '../../app/errors.ts';
+import { refuseUpload } from '../../app/contract/upload-size.ts';
+import { inputError } from '../../app/errors.ts';
 import { fileFailure } from '../files/file-failure.ts';
 
-const MAX_FILE_BYTES = 256e6;
 const MAX_ALL_BYTES = 600e6;
 const MAX_FILES = 100;
 
@@ -23,10 +23,7 @@ export class Uploads {
 
   /** Throws `file` when it is too large or cannot be kept. */
   async add(name: string, bytes: Uint8Array): Promise<string> {
-    if (bytes.length > MAX_FILE_BYTES) {
-      const megabytes = (bytes.length / 1e6).toFixed(0);
-      throw new AppError('file', `${name}: must be at most ${MAX_FILE_BYTES / 1e6} MB; received ${megabytes} MB`, name);
-    }
+    refuseUpload(name, bytes.length);
     await this.#makeRoom(bytes.length);
     this.#folder ??= mkdtemp(join(tmpdir(), 'quietboard-'));
     const id = randomUUID();

@@ -7,10 +7,10 @@ import { QuantityField } from '../components/quantity-field.tsx';
 import { Select } from '../components/select.tsx';
 import { TextField } from '../components/text-field.tsx';
 import { HelpTip } from '../components/tooltip.tsx';
+import { type CableFile, cableLengthMm, newCable, withLength } from '../state/cable-shape.ts';
 import { editSources } from '../state/document.ts';
 import { useBoard, useProblems, useSelection, useSources } from '../state/hooks.ts';
 import { selectCable } from '../state/selection.ts';
-import { type CableFile, cableLengthMm, newCable, withLength } from '../state/cable-shape.ts';
 import css from './setup.module.css';
 
 const LENGTH = { unit: 'm', barePrefix: 'm' } as const;

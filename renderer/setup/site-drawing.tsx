@@ -1,6 +1,7 @@
 import type { ReactElement } from 'react';
 import type { Board, Point3M } from '../../app/board/board.ts';
 import { type RunSettings, siteRequestOf } from '../../app/project/run-settings.ts';
+import { degreesText } from '../../app/report/format.ts';
 import {
   ANTENNA_HIGHEST_M,
   ANTENNA_LOWEST_M,
@@ -96,7 +97,7 @@ export function SiteDrawing({
       </svg>
       <figcaption>
         From the side, to scale
-        {point === null ? '.' : `, turned to ${Math.round(point.turntableDeg)}°: the worst angle of the chosen line.`}
+        {point === null ? '.' : `, turned to ${degreesText(point.turntableDeg)}°: the worst angle of the chosen line.`}
       </figcaption>
     </figure>
   );

@@ -101,6 +101,7 @@ function optionsOf(
     scales: {
       x: {
         type: isLog ? 'logarithmic' : 'linear',
+        bounds: 'data',
         grid,
         // Frequencies as everywhere: 1, 2, 3, 5 of a decade, or its beginning alone where there are many.
         ...(isLog && {

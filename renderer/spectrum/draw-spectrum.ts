@@ -43,7 +43,7 @@ export function drawSpectrum(chart: Chart, scene: SpectrumScene, palette: Palett
   ctx.font = `11px ${palette.font}`;
 
   drawCaveats(ctx, scene, x, area, palette);
-  drawLimits(ctx, scene, x, y, area, palette);
+  drawLimits(ctx, scene, x, y, palette);
   if (scene.chosen !== null)
     vertical(ctx, palette.color('focus'), 2, x(scene.chosen.frequencyHz), area.top, area.bottom);
   for (const ghost of scene.ghosts.filter(isSeen))
@@ -74,22 +74,15 @@ export function drawSpectrum(chart: Chart, scene: SpectrumScene, palette: Palett
     ctx.lineWidth = 1.5;
     for (const point of points.filter(isSeen)) cross(ctx, x(point.frequencyHz), y(point.levelDbuvPerM));
   }
+  drawLimitLabels(ctx, scene, x, y, area, palette);
   ctx.restore();
 }
 
 type Area = Chart['chartArea'];
 type To = (value: number) => number;
 
-function drawLimits(
-  ctx: CanvasRenderingContext2D,
-  scene: SpectrumScene,
-  x: To,
-  y: To,
-  area: Area,
-  palette: Palette,
-): void {
-  const labelled: number[] = [];
-  for (const { detector, points, label } of scene.limitLines) {
+function drawLimits(ctx: CanvasRenderingContext2D, scene: SpectrumScene, x: To, y: To, palette: Palette): void {
+  for (const { detector, points } of scene.limitLines) {
     const corners = clipLine(points, ...scene.range);
     if (corners.length === 0) continue;
     const trace = (dropDb: number) => {
@@ -115,13 +108,37 @@ function drawLimits(
     trace(0);
     ctx.stroke();
     ctx.setLineDash([]);
-    const [endHz, endLevel] = corners.at(-1)!;
-    let textY = y(endLevel) - 4;
-    while (labelled.some((taken) => Math.abs(taken - textY) < 12)) textY -= 12;
-    labelled.push(textY);
+  }
+}
+
+const TEXT_PX = 12;
+
+/** At the end of each limit line, above it, or below where there is no room; over the lines, on paper of their own. */
+function drawLimitLabels(
+  ctx: CanvasRenderingContext2D,
+  { limitLines, range }: SpectrumScene,
+  x: To,
+  y: To,
+  area: Area,
+  palette: Palette,
+): void {
+  const taken: number[] = [];
+  ctx.textAlign = 'right';
+  ctx.lineJoin = 'round';
+  for (const { points, label } of limitLines) {
+    const end = clipLine(points, ...range).at(-1);
+    if (end === undefined) continue;
+    const lineY = y(end[1]);
+    const isRoomAbove = lineY - TEXT_PX - 4 > area.top;
+    let textY = isRoomAbove ? lineY - 4 : lineY + TEXT_PX;
+    while (taken.some((other) => Math.abs(other - textY) < TEXT_PX)) textY += isRoomAbove ? -TEXT_PX : TEXT_PX;
+    taken.push(textY);
+    const textX = Math.min(x(end[0]), area.right) - 3;
+    ctx.strokeStyle = palette.color('paper');
+    ctx.lineWidth = 4;
+    ctx.strokeText(label, textX, textY);
     ctx.fillStyle = palette.color('ink');
-    ctx.textAlign = 'right';
-    ctx.fillText(label, Math.min(x(endHz), area.right) - 3, Math.max(area.top + 10, textY));
+    ctx.fillText(label, textX, textY);
   }
   ctx.textAlign = 'left';
 }

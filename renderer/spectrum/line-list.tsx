@@ -1,7 +1,7 @@
 import { useVirtualizer } from '@tanstack/react-virtual';
 import { type ReactElement, useMemo, useRef, useState } from 'react';
 import type { ResultPoint } from '../../app/estimate/result.ts';
-import { countText } from '../../app/report/format.ts';
+import { countText, degreesText } from '../../app/report/format.ts';
 import { standingOf } from '../../app/report/verdict.ts';
 import { Button } from '../components/button.tsx';
 import { StandingMark } from '../components/marks/standing-mark.tsx';
@@ -94,7 +94,7 @@ export function LineList({ points, onSaid }: LineListProps): ReactElement {
                 </Cell>
                 <Cell>{point.polarization === 'horizontal' ? 'H' : 'V'}</Cell>
                 <Cell isNumber>{point.antennaHeightM.toFixed(2)} m</Cell>
-                <Cell isNumber>{Math.round(point.turntableDeg)}°</Cell>
+                <Cell isNumber>{degreesText(point.turntableDeg)}°</Cell>
                 <Cell>{point.contributors[0]?.name ?? ''}</Cell>
               </Row>
             );

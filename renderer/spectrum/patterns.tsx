@@ -1,5 +1,6 @@
 import type { ReactElement } from 'react';
 import type { LineDetail } from '../../app/contract/line-detail.ts';
+import { degreesText } from '../../app/report/format.ts';
 import { ErrorNotice } from '../components/notes.tsx';
 import { HelpTip } from '../components/tooltip.tsx';
 import { levelText } from '../i18n/format.ts';
@@ -51,12 +52,12 @@ function Polar({ detail }: { readonly detail: LineDetail }): ReactElement {
       className={css.pattern}
       viewBox={`${-SIZE / 2} ${-SIZE / 2} ${SIZE} ${SIZE}`}
       role="img"
-      aria-label={`Turntable pattern: maximum ${levelText(detail.levelDbuvPerM)} dBµV/m at ${Math.round(detail.turntableDeg)}°, ${detail.polarization}`}
+      aria-label={`Turntable pattern: maximum ${levelText(detail.levelDbuvPerM)} dBµV/m at ${degreesText(detail.turntableDeg)}°, ${detail.polarization}`}
     >
       {ringLevels(scale).map(({ level, radius }) => (
         <g key={level}>
           <circle className={css.grid} r={radius} />
-          <text className={css.tick} x={2} y={-radius - 1}>
+          <text className={css.tick} x={2} y={-radius + 9}>
             {Math.round(level)}
           </text>
         </g>

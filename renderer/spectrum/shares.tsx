@@ -1,6 +1,7 @@
 import type { ReactElement } from 'react';
 import type { Contributor, ResultPoint } from '../../app/estimate/result.ts';
 import { isItself, KIND_REMARK, pathsOf, pathText } from '../../app/report/contributor-text.ts';
+import { degreesText } from '../../app/report/format.ts';
 import { standingOf } from '../../app/report/verdict.ts';
 import { IconButton } from '../components/button.tsx';
 import { Icon } from '../components/icons.tsx';
@@ -61,7 +62,7 @@ export function Shares(): ReactElement {
       </header>
       <p className={css.where}>
         {point.polarization}, antenna at {inLocale(point.antennaHeightM.toFixed(2))} m, turntable{' '}
-        {Math.round(point.turntableDeg)}°
+        {degreesText(point.turntableDeg)}°
       </p>
       <h4>
         Shares, dBµV/m

@@ -1,4 +1,5 @@
 import type { Output } from '../../app/contract/procedures.ts';
+import { refuseUpload } from '../../app/contract/upload-size.ts';
 import { runSettingsSchema } from '../../app/project/run-settings.ts';
 import { call } from '../api/api.ts';
 import { EMPTY_PROJECT, getState, type Project, setState } from './app-store.ts';
@@ -125,9 +126,15 @@ export async function openFiles(files: readonly File[]): Promise<void> {
   if (isBegun) await openProject();
   const { projectId } = getState().project!;
   const names = files.map((file) => file.name).join(', ');
-  const { baseId, base, sources, summary } = await runJob('open', `Reading ${names}`, (jobId) =>
-    readFiles(projectId, jobId, files),
-  );
+  let read: Output<'board.open'>;
+  try {
+    read = await runJob('open', `Reading ${names}`, (jobId) => readFiles(projectId, jobId, files));
+  } catch (error) {
+    // What was begun for files that cannot be used is not left behind.
+    if (isBegun && getState().project?.projectId === projectId) await closeProject();
+    throw error;
+  }
+  const { baseId, base, sources, summary } = read;
   if (getState().project?.projectId !== projectId) return;
   const before = getState().history?.present;
   const settings = before?.settings ?? runSettingsSchema.parse({});
@@ -147,6 +154,8 @@ function projectName(boardName: string, files: readonly File[], isLayout: boolea
 
 /** The document that the files make, upon the present one where there is one. */
 async function readFiles(projectId: string, jobId: string, files: readonly File[]): Promise<Output<'board.open'>> {
+  // Before reading: a file may be larger than the window's memory.
+  for (const file of files) refuseUpload(file.name, file.size);
   const uploadIds: string[] = [];
   for (const file of files) {
     const bytes = new Uint8Array(await file.arrayBuffer());

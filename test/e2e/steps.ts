@@ -22,7 +22,7 @@ export async function showView(page: Page, part: string, name: string): Promise<
 
 /** The button of a drop-down list; its name is the present choice, then the label. */
 export const select = (page: Page, label: string): Locator =>
-  page.getByRole('button', { name: new RegExp(`(^|\\s)${label}$`) });
+  page.getByRole('button', { name: new RegExp(`(^|\\s)${label}$`) }).and(page.locator('[aria-haspopup=listbox]'));
 
 export async function choose(page: Page, label: string, option: string): Promise<void> {
   await select(page, label).click();

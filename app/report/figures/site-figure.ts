@@ -2,7 +2,7 @@ import type { Board, Point3M } from '../../board/board.ts';
 import type { EstimateResult } from '../../estimate/result.ts';
 import { ANTENNA_HIGHEST_M, ANTENNA_LOWEST_M, scanRadiusM, siteFrame, toSitePoint } from '../../site/site.ts';
 import { degToRad } from '../../units/convert.ts';
-import { fixed, frequencyText, trimmed } from '../format.ts';
+import { degreesText, fixed, frequencyText, trimmed } from '../format.ts';
 import { type Markup, markup } from '../markup.ts';
 import { scaleBar } from './board-frame.ts';
 import { linePath, px, ringPath, type Xy } from './path.ts';
@@ -127,7 +127,7 @@ ${[0, 90, 180, 270].map((deg) => {
 <g clip-path="url(#plan-clip)">${scene.cables.map((cable) => markup`<path class="cable" d="${linePath(cable.map(at))}"/>`)}
 <path class="board-plan" d="${scene.outlines.map((ring) => ringPath(ring.map(at))).join('')}"/></g>
 ${worst && markup`<path class="arrow" d="${linePath([polar(worst.turntableDeg, PLAN_RADIUS - 2), polar(worst.turntableDeg, PLAN_RADIUS + 30)])}"/>${arrowHead(polar, worst.turntableDeg)}`}
-<text class="num middle" x="${px(centreX)}" y="${px(centreY + PLAN_RADIUS + 44)}">boundary radius ${fixed(site.boundaryRadiusM, 2)} m${worst ? `; worst line from ${fixed(worst.turntableDeg, 0)}°` : ''}</text>
+<text class="num middle" x="${px(centreX)}" y="${px(centreY + PLAN_RADIUS + 44)}">boundary radius ${fixed(site.boundaryRadiusM, 2)} m${worst ? `; worst line from ${degreesText(worst.turntableDeg)}°` : ''}</text>
 ${scaleBar(pxPerM, [centreX - PLAN_RADIUS, centreY + PLAN_RADIUS + 58], 90, 'm')}`;
 }
 

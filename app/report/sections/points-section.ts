@@ -1,6 +1,6 @@
 import type { EstimateResult, ResultPoint } from '../../estimate/result.ts';
 import { BREAK, type Column, mark, note, type Section, type Text, table } from '../blocks.ts';
-import { fixed, levelText, marginText, mhzText } from '../format.ts';
+import { degreesText, fixed, levelText, marginText, mhzText } from '../format.ts';
 import { printed } from '../number.ts';
 import { DETECTOR_SHORT } from '../text-table.ts';
 import { type Standing, standingOf } from '../verdict.ts';
@@ -71,7 +71,7 @@ function row(point: ResultPoint, requiredMarginDb: number): Text[] {
     level(point.upperBoundDbuvPerM),
     point.polarization === 'horizontal' ? 'H' : 'V',
     fixed(point.antennaHeightM, 2),
-    fixed(point.turntableDeg, 0),
+    degreesText(point.turntableDeg),
     mainText(point),
   ];
 }

@@ -2,7 +2,7 @@ import type { EstimateResult } from '../../estimate/result.ts';
 import { mark, name, strong, type Text } from '../blocks.ts';
 import { DEFERENCE } from '../cautions.ts';
 import { isItself, KIND_PHRASE, mainContributor, pathText } from '../contributor-text.ts';
-import { countText, fixed, frequencyText, levelText } from '../format.ts';
+import { countText, degreesText, fixed, frequencyText, levelText } from '../format.ts';
 import { printed } from '../number.ts';
 import { limitName, readingsText, standingsText, VERDICT_STANDING, verdictText, worstText } from '../verdict.ts';
 
@@ -37,7 +37,7 @@ function worstSentence(result: EstimateResult): Text {
   if (!worst) return `${sentence}.`;
   const main = mainContributor(worst);
   return [
-    `${sentence}: ${printed(levelText(worst.levelDbuvPerM))} dBµV/m against ${printed(levelText(worst.limitDbuvPerM))} dBµV/m, ${worst.polarization}, antenna at ${fixed(worst.antennaHeightM, 2)} m, turntable ${fixed(worst.turntableDeg, 0)}°.`,
+    `${sentence}: ${printed(levelText(worst.levelDbuvPerM))} dBµV/m against ${printed(levelText(worst.limitDbuvPerM))} dBµV/m, ${worst.polarization}, antenna at ${fixed(worst.antennaHeightM, 2)} m, turntable ${degreesText(worst.turntableDeg)}°.`,
     main && [
       ` Most of it comes from ${KIND_PHRASE[main.contributor.kind]}`,
       name(main.contributor.name),

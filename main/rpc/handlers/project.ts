@@ -22,8 +22,8 @@ export function projectHandlers(context: HostContext): ProjectHandlers {
   const { projects, projectsFolder, state, events } = context;
   const listRecent = ({ file, name }: Output<'project.info'>['project']) =>
     state.addRecent({ file, name, openedAt: new Date().toISOString() });
-  const open = async (file: string, create: boolean): Promise<Output<'project.open'>> => {
-    const project = projects.open(file, create);
+  const open = async (file: string, create: boolean, isBegun = false): Promise<Output<'project.open'>> => {
+    const project = projects.open(file, create, isBegun);
     await listRecent(project);
     return { project };
   };
@@ -32,7 +32,7 @@ export function projectHandlers(context: HostContext): ProjectHandlers {
     'project.recent': async () => ({ projects: (await state.recent()).filter(({ file }) => existsSync(file)) }),
     'project.open': async ({ file, create }) =>
       file === undefined
-        ? open(newProjectFile(projectsFolder, 'Untitled'), true)
+        ? open(newProjectFile(projectsFolder, 'Untitled'), true, true)
         : open(projectFile(projectsFolder, file), create),
     'project.open-sample': async () => open(await makeSampleProject(projectsFolder), false),
     'project.info': async ({ projectId }) => ({ project: projects.answer(projectId) }),

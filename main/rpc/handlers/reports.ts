@@ -2,7 +2,6 @@ import { compareRuns } from '../../../app/compare/compare-runs.ts';
 import { trendOf } from '../../../app/compare/trend.ts';
 import type { Handlers, Received } from '../../../app/contract/procedures.ts';
 import type { Project } from '../../db/project.ts';
-import { trendRuns } from '../../db/trend-runs.ts';
 import { runJob } from '../../jobs/run-job.ts';
 import type { ReportSubject } from '../../reports/report-request.ts';
 import { reportedRun } from '../../reports/reported-run.ts';
@@ -15,7 +14,7 @@ export function reportHandlers({ version, projects }: HostContext): ReportHandle
     'runs.compare': async ({ projectId, before, after }) => ({
       comparison: comparisonOf(projects.get(projectId), before, after),
     }),
-    'runs.trend': async ({ projectId }) => ({ trend: trendOf(trendRuns(projects.get(projectId))) }),
+    'runs.trend': async ({ projectId }) => ({ trend: trendOf(projects.get(projectId).trendRuns()) }),
     'report.render': async ({ projectId, subject, format, paper, author, dateText }) => {
       const project = projects.get(projectId);
       const stored = subject.kind === 'run' ? project.run(subject.run) : undefined;
@@ -41,6 +40,6 @@ function subjectOf(project: Project, subject: Received<'report.render'>['subject
     case 'comparison':
       return { kind: 'comparison', comparison: comparisonOf(project, subject.before, subject.after) };
     case 'trend':
-      return { kind: 'trend', trend: trendOf(trendRuns(project)) };
+      return { kind: 'trend', trend: trendOf(project.trendRuns()) };
   }
 }
