@@ -1,4 +1,4 @@
-/** Bytes of the compiled kernel, hexadecimal. Written by `npm run kernel` from assembly/: do not edit. */
+/** Bytes of the compiled kernel, hexadecimal. Written by `npm run kernel` from main/kernel/: do not edit. */
 export const KERNEL_HEX = [
   '0061736d0100000001490760067c7f7f7f7f7f0060057f7f7f7f7f0060067f7f7f7f7f7f00600a7c7f7f7f7f7f7f7f7f7f0060087f7f7f7f',
   '7f7f7f7f0060087f7f7f7f7f7f7f7f017f60067f7f7f7f7f7f017f020f0103656e76066d656d6f727902000003080700010203040506072d',

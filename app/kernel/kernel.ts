@@ -9,7 +9,7 @@ declare const WebAssembly: {
 
 const PAGE_BYTES = 65_536;
 
-/** What assembly/ exports; places are bytes from the memory's start. */
+/** What main/kernel/ exports; places are bytes from the memory's start. */
 interface KernelFunctions {
   factor(re: number, im: number, size: number, w: number, l: number, corner: number): number;
   solve(re: number, im: number, size: number, bRe: number, bIm: number): void;

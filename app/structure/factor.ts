@@ -11,7 +11,7 @@ export interface SymmetricMatrix {
   readonly im: Float64Array;
 }
 
-/** Numbers a panel takes for each row (see assembly/layout.ts), and its rows beyond the matrix. */
+/** Numbers a panel takes for each row (see main/kernel/layout.ts), and its rows beyond the matrix. */
 const PANEL_ROW = 64;
 const PANEL_ROWS_BEYOND = 2;
 const CORNER_ROWS = 32;

@@ -1,8 +1,8 @@
 // Compiles the kernel and writes its bytes as a module of the core; the same source gives the same bytes.
-//   node assembly/build.mjs
+//   node main/kernel/build.mjs
 import { writeFileSync } from 'node:fs';
 import { kernelModuleText } from './compile.mjs';
 
-const TARGET = new URL('../app/kernel/kernel-bytes.ts', import.meta.url);
+const TARGET = new URL('../../app/kernel/kernel-bytes.ts', import.meta.url);
 
 writeFileSync(TARGET, await kernelModuleText());

@@ -27,7 +27,7 @@ export async function kernelModuleText() {
   const hex = Buffer.from(bytes).toString('hex');
   const lines = hex.match(new RegExp(`.{1,${HEX_PER_LINE}}`, 'g'));
   return [
-    '/** Bytes of the compiled kernel, hexadecimal. Written by `npm run kernel` from assembly/: do not edit. */',
+    '/** Bytes of the compiled kernel, hexadecimal. Written by `npm run kernel` from main/kernel/: do not edit. */',
     'export const KERNEL_HEX = [',
     ...lines.map((line) => `  '${line}',`),
     "].join('');",
