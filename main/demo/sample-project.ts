@@ -15,7 +15,7 @@ import { runEstimate } from '../jobs/run-estimate.ts';
 
 const root = resolve(dirname(fileURLToPath(import.meta.url)), '../../..');
 const folder = join(root, 'samples', 'valve-controller');
-const file = join(folder, 'valve-controller.quietboard');
+const file = join(folder, 'three-revisions.quietboard');
 
 /** Revisions with the day their layout was ready, in the sample's story. */
 const RUNS = [
