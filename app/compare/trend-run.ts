@@ -1,4 +1,4 @@
-import type { StoredRun } from '../project/stored-run.ts';
+import type { RunSummary, StoredRun } from '../project/stored-run.ts';
 import { bandMargins, limitLinesOf } from './bands.ts';
 import type { BandMargin, TrendRun, TrendSetup } from './types.ts';
 
@@ -20,17 +20,10 @@ export function trendPartOf({ settings, result }: Pick<StoredRun, 'settings' | '
 }
 
 /** A run as a point of a trend. */
-export function trendRunOf(run: StoredRun): TrendRun {
-  const { run: number, startedAt, board, revision, requiredMarginDb, worst, verdict, programVersion } = run;
-  return {
-    run: number,
-    startedAt,
-    board,
-    revision,
-    requiredMarginDb,
-    worst,
-    verdict,
-    programVersion,
-    ...trendPartOf(run),
-  };
+export function trendRun(summary: RunSummary, part: TrendPart): TrendRun {
+  const { run, startedAt, board, revision, requiredMarginDb, worst, verdict, programVersion } = summary;
+  return { run, startedAt, board, revision, requiredMarginDb, worst, verdict, programVersion, ...part };
 }
+
+/** The same from the whole run. */
+export const trendRunOf = (run: StoredRun): TrendRun => trendRun(run, trendPartOf(run));

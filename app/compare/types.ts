@@ -206,7 +206,7 @@ export interface TrendSetup {
   readonly structure: 'solved' | 'pair-only';
 }
 
-/** What `trendOf` needs of a run. `trendRunOf(run)` takes it from a stored run; a database may keep `setup` and `bands` as JSON. */
+/** What `trendOf` needs of a run. `trendRunOf(run)` takes it from a stored run; a database keeps `setup` and `bands` with every run. */
 export interface TrendRun
   extends Pick<
     RunSummary,

@@ -14,7 +14,7 @@ import {
 import { getDraft } from './draft-repository.ts';
 import { getProject } from './info-repository.ts';
 import { listMeasurements } from './measurements-repository.ts';
-import { listStoredSummaries, type SummaryColumns, summaryColumns } from './runs-repository.ts';
+import { listStoredSummaries, listTrendRuns, type SummaryColumns, summaryColumns } from './runs-repository.ts';
 
 /** Things amiss that a finding names; the rest is counted. */
 const MOST_NAMED = 5;
@@ -30,6 +30,7 @@ export function examine(db: ReadableDb): DoctorFinding[] {
       DOCUMENT_TABLES.flatMap((table) => damagedDocuments(db, table, results)),
     ),
     finding('runs', 'the list of runs says what the results say', () => wrongSummaries(db, results)),
+    finding('trend', 'the part of every run in the trend unpacks', () => complaintsOf(() => listTrendRuns(db))),
     finding('numbers', 'no number can be given twice', () => wrongNumbers(db)),
     finding('measurements', 'every measurement unpacks', () => complaintsOf(() => listMeasurements(db))),
     finding('draft', 'the draft unpacks', () => complaintsOf(() => getDraft(db))),

@@ -1,3 +1,4 @@
+import { type TrendPart, trendPartOf } from '../../app/compare/trend-run.ts';
 import { AppError, inputError } from '../../app/errors.ts';
 import type { EstimateResult } from '../../app/estimate/result.ts';
 import {
@@ -8,10 +9,11 @@ import {
   exportOutlineSchema,
   type SourcesDocument,
 } from '../../app/project/project-export.ts';
+import type { RunSettings } from '../../app/project/run-settings.ts';
 import { parseWith } from '../../app/schema/parse-with.ts';
 import { readJsonLists } from '../files/json-lists.ts';
 import type { WritableDb } from './database.ts';
-import { DOCUMENT_TABLES, type DocumentTable, putDocument } from './documents-repository.ts';
+import { DOCUMENT_TABLES, type DocumentTable, getDocument, putDocument } from './documents-repository.ts';
 import { putDraftRow } from './draft-repository.ts';
 import { insertProject } from './info-repository.ts';
 import { insertMeasurement } from './measurements-repository.ts';
@@ -91,12 +93,20 @@ class ProjectImporter {
       this.#refuseMissing(run, `runs[${i}]`);
       const summary = this.#summaries.get(run.result);
       if (summary === undefined) throw missing(`runs[${i}].result`, run.result);
-      insertRunEntry(this.#db, run, summary);
+      insertRunEntry(this.#db, run, summary, this.#trendPart(run));
     }
     refuseBelow('lastRun', lastRun, this.#runs.keys());
     refuseBelow('lastMeasurement', lastMeasurement, this.#measurements);
     this.#finishDraft(draft);
     this.#refuseUnlinked();
+  }
+
+  /** Not in the export, as it follows from settings and result; these are both here by now. */
+  #trendPart({ settings, result }: ExportItem<'runs'>): TrendPart {
+    return trendPartOf({
+      settings: getDocument(this.#db, 'settings', settings) as RunSettings,
+      result: getDocument(this.#db, 'result', result) as EstimateResult,
+    });
   }
 
   #finishDraft(draft: ExportHead['draft']): void {

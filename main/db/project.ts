@@ -1,4 +1,5 @@
 import { basename } from 'node:path';
+import type { TrendRun } from '../../app/compare/types.ts';
 import { AppError, fileError, inputError } from '../../app/errors.ts';
 import type { Draft, StoredDraft } from '../../app/project/draft.ts';
 import { type Measurement, type MeasurementInput, measurementInputSchema } from '../../app/project/measurement.ts';
@@ -26,6 +27,7 @@ import {
   getRun,
   insertRun,
   listRuns,
+  listTrendRuns,
   type NewRun,
   type RunFilter,
   removeRun,
@@ -120,6 +122,11 @@ export class Project {
   /** Newest first. */
   runs(filter: RunFilter = {}): RunSummary[] {
     return this.#connection.read((db) => listRuns(db, filter));
+  }
+
+  /** What `trendOf` needs of every run; no result is unpacked. */
+  trendRuns(): TrendRun[] {
+    return this.#connection.read(listTrendRuns);
   }
 
   /** Throws `input` that names the runs there are. */

@@ -1,8 +1,11 @@
+import { type TrendPart, trendPartOf, trendRun } from '../../app/compare/trend-run.ts';
+import type { TrendRun } from '../../app/compare/types.ts';
 import type { EstimateResult, Verdict } from '../../app/estimate/result.ts';
 import type { Draft } from '../../app/project/draft.ts';
 import type { RunSummary, StoredRun } from '../../app/project/stored-run.ts';
 import type { ReadableDb, WritableDb } from './database.ts';
-import { getDocument, putDocument, removeUnused } from './documents-repository.ts';
+import { getDocument, putDocument, removeUnused, unpacked } from './documents-repository.ts';
+import { packJson } from './packed-json.ts';
 import { getParts, type PartHashes, putParts } from './parts-repository.ts';
 import { fromColumn, soundRow, toColumn } from './text-column.ts';
 
@@ -39,6 +42,8 @@ interface RunRow extends PartHashes {
   readonly verdict: Verdict;
   readonly program_version: string;
   readonly note: string;
+  /** `TrendPart`, packed: a trend must not need every result. */
+  readonly trend: Buffer;
 }
 
 const NULLABLE = ['worst_frequency_hz', 'worst_margin_db'] as const;
@@ -93,7 +98,8 @@ export type SummaryColumns = ReturnType<typeof summaryColumns>;
 /** Keeps a run under its number, with its documents. Throws `input` for what JSON cannot hold. */
 export function insertRun(db: WritableDb, run: number, { startedAt, durationS, result, note, ...draft }: NewRun): void {
   const hashes = { ...putParts(db, draft), result: putDocument(db, 'result', result) };
-  insertRunEntry(db, { run, startedAt, durationS, note: note ?? '', ...hashes }, summaryColumns(result));
+  const entry = { run, startedAt, durationS, note: note ?? '', ...hashes };
+  insertRunEntry(db, entry, summaryColumns(result), trendPartOf({ settings: draft.settings, result }));
 }
 
 /** A run whose documents are kept already. */
@@ -101,8 +107,10 @@ export function insertRunEntry(
   db: WritableDb,
   { startedAt, durationS, note, ...entry }: RunEntry,
   summary: SummaryColumns,
+  trend: TrendPart,
 ): void {
-  const row: RunRow = { ...entry, started_at: startedAt, duration_s: durationS, note: toColumn(note), ...summary };
+  const own = { started_at: startedAt, duration_s: durationS, note: toColumn(note), trend: packJson(trend) };
+  const row: RunRow = { ...entry, ...own, ...summary };
   const columns = Object.keys(row);
   const values = columns.map((column) => `@${column}`);
   db.prepare(`INSERT INTO run (${columns.join(', ')}) VALUES (${values.join(', ')})`).run(row);
@@ -131,6 +139,16 @@ export function listRuns(db: ReadableDb, { revision, limit }: RunFilter = {}): R
     .all({ revision: revision === undefined ? null : toColumn(revision), limit: limit ?? -1 })
     .map((row) => summaryOf(soundRow(row, NULLABLE)));
 }
+
+/** Every run as a point of a trend, by number. Throws `DamagedDocument`. */
+export const listTrendRuns = (db: ReadableDb): TrendRun[] =>
+  db
+    .prepare<[], RunRow>('SELECT * FROM run ORDER BY run')
+    .all()
+    .map((row) => {
+      const summary = summaryOf(soundRow(row, NULLABLE));
+      return trendRun(summary, unpacked(`trend of run ${row.run}`, row.trend) as TrendPart);
+    });
 
 const rowOf = (db: ReadableDb, run: number): RunRow | undefined =>
   db.prepare<[number], RunRow>('SELECT * FROM run WHERE run = ?').get(run);

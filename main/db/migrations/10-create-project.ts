@@ -46,6 +46,7 @@ CREATE TABLE run (
   verdict TEXT NOT NULL,
   program_version TEXT NOT NULL,
   note TEXT NOT NULL,
+  trend BLOB NOT NULL,
   CHECK ((worst_frequency_hz IS NULL) = (worst_margin_db IS NULL))
 ) STRICT;
 CREATE INDEX run_layout ON run (layout);

@@ -1,7 +1,6 @@
 import type { Command } from 'commander';
 import { trendOf } from '../../../../app/compare/trend.ts';
 import { trendText } from '../../../../app/report/trend/trend-text.ts';
-import { trendRuns } from '../../../db/trend-runs.ts';
 import { checkOutputs, outputWidth, STDOUT } from '../../outputs.ts';
 import { addProjectOption, type ProjectOption, withProject } from '../../project-file.ts';
 import {
@@ -39,7 +38,7 @@ async function showTrend(options: TrendOptions): Promise<void> {
   await checkOutputs(reportFiles(options), [options.project]);
   const { name, trend, lastAt } = await withProject(options.project, 'read', (project) => ({
     name: project.info().name,
-    trend: trendOf(trendRuns(project)),
+    trend: trendOf(project.trendRuns()),
     lastAt: project.runs({ limit: 1 })[0]?.startedAt,
   }));
   const title = lastAt === undefined ? undefined : { project: name, run: null, startedAt: lastAt, note: '' };
