@@ -51,12 +51,18 @@ export function KeepBar(): ReactElement {
         <Button isDisabled={!isChanged || isEstimating} onPress={discardChanges}>
           Discard
         </Button>
-        <Button look="quiet" isDisabled={steps.undo === null} onPress={undo}>
-          {steps.undo === null ? 'Undo' : `Take back: ${steps.undo}`}
-        </Button>
-        <Button look="quiet" isDisabled={steps.redo === null} onPress={redo}>
-          Redo
-        </Button>
+        <span className={css.steps}>
+          {steps.undo !== null && (
+            <Button look="quiet" onPress={undo}>
+              Undo: {steps.undo}
+            </Button>
+          )}
+          {steps.redo !== null && (
+            <Button look="quiet" onPress={redo}>
+              Redo: {steps.redo}
+            </Button>
+          )}
+        </span>
       </div>
     </section>
   );

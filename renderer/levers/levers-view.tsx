@@ -12,6 +12,7 @@ import { CopperLevers } from './copper-levers.tsx';
 import { prepare, startFollowing, useLevers } from './follow.ts';
 import { KeepBar } from './keep-bar.tsx';
 import css from './levers.module.css';
+import { LoopLevers } from './loop-levers.tsx';
 import { PreparedNotice } from './prepared-notice.tsx';
 import { QuickLevers } from './quick-levers.tsx';
 import { Readout } from './readout.tsx';
@@ -55,7 +56,7 @@ export function LeversView(): ReactElement {
 }
 
 function SlowLevers(): ReactElement {
-  const cables = useSources()?.cables ?? [];
+  const { cables = [], loops = [] } = useSources() ?? {};
   return (
     <section className={css.slow} aria-label="Changes that are solved again">
       <h3>Solved again</h3>
@@ -66,6 +67,11 @@ function SlowLevers(): ReactElement {
       <Disclosure title="Height to the plane, layer">
         <CopperLevers />
       </Disclosure>
+      {loops.length > 0 && (
+        <Disclosure title={`Current loops (${loops.length})`}>
+          <LoopLevers loops={loops} />
+        </Disclosure>
+      )}
     </section>
   );
 }

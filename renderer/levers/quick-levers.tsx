@@ -6,7 +6,8 @@ import { frequencyText, marginText, numberText } from '../i18n/format.ts';
 import { useApp } from '../state/app-store.ts';
 import { useSelection, useSources } from '../state/hooks.ts';
 import { selectNet } from '../state/selection.ts';
-import { useEffects } from './effects.ts';
+import { showTab } from '../state/tabs.ts';
+import { type Effects, useEffects } from './effects.ts';
 import { LeverRow } from './lever-row.tsx';
 import css from './levers.module.css';
 import { type QuickLever, quickLevers } from './quick-lever.ts';
@@ -31,7 +32,9 @@ export function QuickLevers(): ReactElement | null {
   const found = subjects.filter(({ name }) => name.toLowerCase().includes(wanted));
   const shown = found.slice(0, count);
   const groups = sources === null ? [] : shown.map((subject) => ({ subject, levers: quickLevers(sources, subject) }));
-  const effects = useEffects(groups.flatMap(({ levers }) => levers));
+  const effects = useEffects(
+    groups.flatMap(({ subject: { frequencyHz }, levers }) => levers.map((lever) => ({ lever, frequencyHz }))),
+  );
   if (sources === null) return null;
   return (
     <section aria-label="Changes answered at once">
@@ -64,7 +67,7 @@ export function QuickLevers(): ReactElement | null {
 interface GroupProps {
   readonly subject: RankedSubject;
   readonly levers: readonly QuickLever[];
-  readonly effects: ReturnType<typeof useEffects>;
+  readonly effects: Effects;
 }
 
 function Group({ subject, levers, effects }: GroupProps): ReactElement {
@@ -88,15 +91,20 @@ function Group({ subject, levers, effects }: GroupProps): ReactElement {
         )}
         <span className={css.own}>
           {frequencyHz === null
-            ? 'no line here'
+            ? 'makes no line'
             : `alone ${marginText(ownMarginDb)} dB at ${frequencyText(frequencyHz)}`}
         </span>
       </h4>
       {levers.map((lever) => (
-        <LeverRow key={lever.key} lever={lever} effectDb={effects.get(lever.key)} />
+        <LeverRow key={lever.key} lever={lever} effect={effects.get(lever.key)} ownHz={frequencyHz} />
       ))}
       {levers.length === 0 && (
-        <p className={css.quiet}>Its waveform is measured or drawn: it has no single edge time.</p>
+        <p className={css.quiet}>
+          Its waveform is measured or drawn and has no single edge time.{' '}
+          <Button look="quiet" onPress={() => showTab('sources')}>
+            Change it in Sources
+          </Button>
+        </p>
       )}
     </section>
   );

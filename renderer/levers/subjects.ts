@@ -9,36 +9,49 @@ export interface RankedSubject extends Subject {
 }
 
 /**
- * Nets and loops by how near the limit each would come by itself: at one line, or over all of them. Those that are driven
- * but make no line come last, by name.
+ * Driven nets and loops by how near the limit each would come by itself: first those with a share of the chosen line, there;
+ * then the others, at the line where they come nearest. Those that make no line come last, by name.
  */
 export function rankedSubjects(
   points: readonly ResultPoint[],
   lineHz: number | null,
   sources: SourcesPart,
 ): RankedSubject[] {
+  const atLine = nearest(points.filter(({ frequencyHz }) => frequencyHz === lineHz));
+  const anywhere = nearest(points);
+  const driven = new Map(drivenSubjects(sources).map((subject) => [keyOf(subject), subject]));
+  return [...driven]
+    .map(([key, subject]) => {
+      const silent = { ...subject, ownMarginDb: Infinity, frequencyHz: null };
+      return { isAtLine: atLine.has(key), ranked: atLine.get(key) ?? anywhere.get(key) ?? silent };
+    })
+    .sort(
+      (one, other) =>
+        Number(other.isAtLine) - Number(one.isAtLine) ||
+        order(one.ranked.ownMarginDb, other.ranked.ownMarginDb) ||
+        order(one.ranked.name, other.ranked.name),
+    )
+    .map(({ ranked }) => ranked);
+}
+
+const keyOf = ({ kind, name }: Subject): string => `${kind} ${name}`;
+const order = <T extends number | string>(one: T, other: T): number => (one < other ? -1 : one > other ? 1 : 0);
+
+const drivenSubjects = ({ drives = [], loops = [] }: SourcesPart): Subject[] => [
+  ...drives.map(({ net }): Subject => ({ kind: 'net', name: net })),
+  ...loops.map(({ name }): Subject => ({ kind: 'loop', name })),
+];
+
+/** Each contributor where its own level is nearest to the limit. */
+function nearest(points: readonly ResultPoint[]): Map<string, RankedSubject> {
   const found = new Map<string, RankedSubject>();
-  const keyOf = ({ kind, name }: Subject) => `${kind} ${name}`;
-  const isThere = points.some(({ frequencyHz }) => frequencyHz === lineHz);
   for (const { frequencyHz, limitDbuvPerM, contributors } of points) {
-    if (isThere && frequencyHz !== lineHz) continue;
     for (const { kind, name, levelDbuvPerM } of contributors) {
       if (kind === 'cable') continue;
-      const ownMarginDb = limitDbuvPerM - levelDbuvPerM;
-      const subject = { kind, name, ownMarginDb, frequencyHz };
-      if (ownMarginDb < (found.get(keyOf(subject))?.ownMarginDb ?? Infinity)) found.set(keyOf(subject), subject);
+      const subject = { kind, name, ownMarginDb: limitDbuvPerM - levelDbuvPerM, frequencyHz };
+      if (subject.ownMarginDb < (found.get(keyOf(subject))?.ownMarginDb ?? Infinity))
+        found.set(keyOf(subject), subject);
     }
   }
-  const driven: Subject[] = [
-    ...(sources.drives ?? []).map(({ net }): Subject => ({ kind: 'net', name: net })),
-    ...(sources.loops ?? []).map(({ name }): Subject => ({ kind: 'loop', name })),
-  ];
-  const all = new Map<string, RankedSubject>();
-  for (const subject of driven) {
-    const silent = { ...subject, ownMarginDb: Infinity, frequencyHz: null };
-    all.set(keyOf(subject), found.get(keyOf(subject)) ?? silent);
-  }
-  return [...all.values()].sort((one, other) =>
-    one.ownMarginDb === other.ownMarginDb ? (one.name < other.name ? -1 : 1) : one.ownMarginDb - other.ownMarginDb,
-  );
+  return found;
 }

@@ -20,10 +20,12 @@ export function causeText(worst: Worst, points: readonly ResultPoint[]): string 
   return `${at} by ${KIND_PHRASE[contributor.kind]}${contributor.name}${through}`;
 }
 
+export const NO_CHANGE = 'no change';
+
 /** "+3.2 dB", "−0.4 dB", "no change". */
 export function changeText(changeDb: number): string {
   const text = marginText(Math.abs(changeDb));
-  if (Number(text.replace(',', '.')) === 0) return 'no change';
+  if (Number(text.replace(',', '.')) === 0) return NO_CHANGE;
   return `${changeDb > 0 ? '+' : '−'}${text} dB`;
 }
 

@@ -32,8 +32,8 @@ export class FakeHost {
       return { ok: true, value: await answer(input) };
     } catch (error) {
       if (!(error instanceof AppError)) throw error;
-      const { code, message } = error;
-      return { ok: false, error: { code, message } };
+      const { code, message, path } = error;
+      return { ok: false, error: { code, message, ...(path !== undefined && { path }) } };
     }
   }
 }

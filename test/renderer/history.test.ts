@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { edited, type History, redone, startHistory, undone } from '../../renderer/state/history.ts';
+import { edited, GESTURE, type History, redone, startHistory, undone } from '../../renderer/state/history.ts';
 
 /** Oracle: the plain list of states that the edits made, walked by an index. */
 
@@ -40,6 +40,14 @@ describe('undo and redo', () => {
     history = edited(history, 'Note', 'abcd!', 2600, 'note');
     expect(history.past).toHaveLength(3);
     expect(undone(history).present).toBe('abcd');
+  });
+
+  it('join a pull that rests in between, and not the next pull of the same lever', () => {
+    let history = edited(startHistory(1), 'Rise time', 2, 0, `${GESTURE}1`);
+    history = edited(history, 'Rise time', 3, LATER_MS, `${GESTURE}1`);
+    expect(history.past).toHaveLength(1);
+    history = edited(history, 'Rise time', 4, LATER_MS + 1, `${GESTURE}2`);
+    expect(history.past.map(({ value }) => value)).toEqual([1, 3]);
   });
 
   it('do not join an edit after undo with the one before it', () => {
