@@ -3,6 +3,7 @@ import { afterAll, beforeAll, expect, it } from 'vitest';
 import { violations } from './axe.ts';
 import { chooseFiles, describeInBrowser, picture, ServedWindow } from './served-window.ts';
 import { smallBoard } from './small-board.ts';
+import { estimate, showTab, showView, tabNames } from './steps.ts';
 
 /** Oracle: WCAG 2.2 A and AA as axe-core checks them (contrast among them), and reflow at 200 %. */
 
@@ -52,16 +53,26 @@ describeInBrowser('accessibility of the window', () => {
     await page.getByRole('button', { name: /^Estimate/ }).click();
     const status = page.getByRole('contentinfo');
     await status.getByText('CISPR 32 class B at 3 m').waitFor({ timeout: 60_000 });
-    const tabs = page.getByRole('tablist', { name: 'Parts' }).getByRole('tab');
-    for (const tab of await tabs.all()) {
-      const name = (await tab.textContent())!;
-      await tab.click();
-      await page.getByRole('tabpanel').first().waitFor();
+    await page.keyboard.press('Alt+w');
+    const check = async (name: string) => {
       // Pictures and plots follow the panel.
-      await page.waitForTimeout(1500);
+      await page.waitForTimeout(1000);
       expect(await violations(page), name).toEqual([]);
       await page.screenshot({ path: picture(`${name.toLowerCase()}-${colorScheme}`) });
+    };
+    for (const name of await tabNames(page)) {
+      await showTab(page, name);
+      await page.getByRole('tabpanel').first().waitFor();
+      const views = await page.getByRole('tablist', { name, exact: true }).getByRole('tab').allTextContents();
+      if (views.length === 0) await check(name);
+      for (const view of views) {
+        await showView(page, name, view);
+        await check(`${name}-${view}`);
+      }
     }
+    await page.getByRole('button', { name: 'List', exact: true }).click();
+    await page.getByRole('button', { name: 'Layers', exact: true }).click();
+    await check('List-Layers');
     expect(complaints).toEqual([]);
   });
 
@@ -78,5 +89,24 @@ describeInBrowser('accessibility of the window', () => {
     const box = (await estimate.boundingBox())!;
     expect(box.x + box.width).toBeLessThanOrEqual(640);
     await page.screenshot({ path: picture('zoom-work') });
+    for (const name of await tabNames(page)) {
+      await showTab(page, name);
+      expect(await overflow(), name).toBeLessThanOrEqual(0);
+      expect(await violations(page), name).toEqual([]);
+      await page.screenshot({ path: picture(`zoom-${name.toLowerCase()}`) });
+    }
+  });
+
+  it('fills a screen of 3840 × 2160', async () => {
+    const { page } = await served.open({ viewport: { width: 3840, height: 2160 } });
+    await chooseFiles(page, [smallBoard()]);
+    await page.getByRole('heading', { name: 'Greenhouse lamp', exact: true }).waitFor();
+    await estimate(page);
+    await page.keyboard.press('Alt+w');
+    await page.getByRole('img', { name: /^Turntable pattern: maximum/ }).waitFor({ timeout: 30_000 });
+    const footer = (await page.getByRole('contentinfo').boundingBox())!;
+    expect(footer.y + footer.height).toBe(2160);
+    expect(footer.width).toBe(3840);
+    await page.screenshot({ path: picture('work-4k') });
   });
 });
