@@ -53,6 +53,7 @@ CREATE TABLE run (
   verdict TEXT NOT NULL,
   program_version TEXT NOT NULL,
   note TEXT NOT NULL,
+  trend BLOB NOT NULL,
   CHECK ((worst_frequency_hz IS NULL) = (worst_margin_db IS NULL))
 ) STRICT;
 
