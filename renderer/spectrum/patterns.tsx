@@ -3,7 +3,7 @@ import type { LineDetail } from '../../app/contract/line-detail.ts';
 import { degreesText } from '../../app/report/format.ts';
 import { ErrorNotice } from '../components/notes.tsx';
 import { HelpTip } from '../components/tooltip.tsx';
-import { levelText } from '../i18n/format.ts';
+import { levelText, numberText } from '../i18n/format.ts';
 import { useDetail } from '../state/hooks.ts';
 import { heightPath, polarPath, ringLevels } from './pattern-paths.ts';
 import css from './spectrum.module.css';
@@ -58,7 +58,7 @@ function Polar({ detail }: { readonly detail: LineDetail }): ReactElement {
         <g key={level}>
           <circle className={css.grid} r={radius} />
           <text className={css.tick} x={2} y={-radius + 9}>
-            {Math.round(level)}
+            {numberText(Math.round(level))}
           </text>
         </g>
       ))}
@@ -110,7 +110,7 @@ function Height({ detail }: { readonly detail: LineDetail }): ReactElement {
           <g key={below}>
             <line className={css.grid} x1={x} x2={x} y1={FRAME.top} y2={FRAME.bottom} />
             <text className={css.angle} x={x} y={FRAME.bottom + 14}>
-              {Math.round(top - below)}
+              {numberText(Math.round(top - below))}
             </text>
           </g>
         );

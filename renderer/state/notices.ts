@@ -34,6 +34,6 @@ export async function attempt(what: string, action: () => Promise<void>): Promis
     await action();
   } catch (error) {
     const text = failureText(error);
-    if (text !== null) notify({ tone: 'problem', text: `${what}: ${text}` });
+    if (text !== null) notify({ tone: 'problem', text: text.startsWith(`${what}: `) ? text : `${what}: ${text}` });
   }
 }

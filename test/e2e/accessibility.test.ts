@@ -63,6 +63,7 @@ describeInBrowser('accessibility of the window', () => {
     for (const name of await tabNames(page)) {
       await showTab(page, name);
       await page.getByRole('tabpanel').first().waitFor();
+      if (name === 'Report') await page.getByRole('img', { name: /^Page 1 of/ }).waitFor({ timeout: 90_000 });
       const views = await page.getByRole('tablist', { name, exact: true }).getByRole('tab').allTextContents();
       if (views.length === 0) await check(name);
       for (const view of views) {

@@ -62,6 +62,7 @@ describeInBrowser('files that cannot be used', () => {
       await notice.waitFor();
       const text = (await notice.textContent())!;
       expect(text, what).toMatch(words);
+      expect(text.split(file.name), what).toHaveLength(2);
       expect(text, what).not.toMatch(/Error:|undefined|null|\bat .*\.js|Unexpected/);
       await closeNotice(page);
       expect(await page.getByRole('heading', { name: 'Greenhouse lamp', exact: true }).count(), what).toBe(1);
