@@ -1,4 +1,5 @@
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import type { Input } from '../../../app/contract/procedures.ts';
 import { AppError } from '../../../app/errors.ts';
 import { prepare, startFollowing, useLevers } from '../../../renderer/levers/follow.ts';
 import { changedLayout } from '../../../renderer/levers/same-copper.ts';
@@ -22,7 +23,7 @@ const withSeries = (seriesOhm: number) =>
     ...sources,
     drives: sources.drives!.map((drive) => ({ ...drive, seriesOhm })),
   }));
-const seriesOf = (input: { sources: typeof WORK.sources }) => input.sources.drives![0]!.seriesOhm;
+const seriesOf = (input: Input<'levers.try'>): number => input.sources.drives![0]!.seriesOhm!;
 const settled = () =>
   vi.waitFor(() => expect([getState().isTrying, useLevers.getState().answered]).toEqual([false, present()]));
 
