@@ -23,6 +23,8 @@ interface Prepared {
 }
 
 export interface LeversState {
+  /** Longer than its job is listed: from the wish to the kept responses or a failure. */
+  readonly isPreparing: boolean;
   readonly prepared: Prepared | null;
   /** Why the kept responses cannot tell, and about which state of the document. */
   readonly needsSolve: { readonly reason: string; readonly work: Work } | null;
@@ -32,7 +34,7 @@ export interface LeversState {
   readonly answered: Work | null;
 }
 
-const NOTHING: LeversState = { prepared: null, needsSolve: null, failure: null, answered: null };
+const NOTHING: LeversState = { isPreparing: false, prepared: null, needsSolve: null, failure: null, answered: null };
 
 export const useLevers = create<LeversState>()(() => NOTHING);
 const levers = useLevers;
@@ -47,7 +49,7 @@ export async function prepare(): Promise<void> {
   if (project === null || history === null || model === null || model.problems.length > 0) return;
   const { projectId } = project;
   const work = history.present;
-  letGo();
+  letGo({ isPreparing: true });
   try {
     const { leversId } = await runJob('levers', 'Preparing the levers', (jobId) =>
       call('levers.prepare', { projectId, jobId, document: documentRefOf(work), settings: work.settings }),
@@ -56,21 +58,23 @@ export async function prepare(): Promise<void> {
       await call('levers.release', { leversId });
       return;
     }
-    letGo();
     levers.setState({ ...NOTHING, prepared: { leversId, projectId, work } });
     keepForComparison();
     void follow();
   } catch (error) {
     const message = failureText(error);
     if (getState().project?.projectId !== projectId || jobOf('levers') !== undefined) return;
-    levers.setState({ failure: message === null ? { kind: 'stopped' } : { kind: 'failed', message } });
+    levers.setState({
+      isPreparing: false,
+      failure: message === null ? { kind: 'stopped' } : { kind: 'failed', message },
+    });
   }
 }
 
-function letGo(): void {
+function letGo(next: Partial<LeversState> = {}): void {
   const { prepared } = levers.getState();
   if (prepared !== null) void call('levers.release', { leversId: prepared.leversId }).catch(() => {});
-  levers.setState(NOTHING);
+  levers.setState({ ...NOTHING, ...next });
 }
 
 /** One question to the kept responses about any sources; `null` when nothing is kept. */
@@ -137,7 +141,7 @@ export function startFollowing(): () => void {
   return subscribe((state, before) => {
     const { prepared } = levers.getState();
     if (state.project?.projectId !== before.project?.projectId) {
-      if (prepared !== null || levers.getState().failure !== null) letGo();
+      letGo();
     } else if (state.history !== before.history && prepared !== null) {
       void follow();
     }

@@ -85,6 +85,7 @@ function usePrepared(): void {
   const hasKept = useApp((state) => state.kept !== null);
   const canEstimate = useProblems().length === 0;
   const isWorking = useApp(({ jobs }) => jobs.some(({ kind }) => kind === 'estimate' || kind === 'levers'));
+  const isPreparing = useLevers((state) => state.isPreparing);
   const isPrepared = useLevers(({ prepared }) => prepared !== null);
   const isOfAnother = useLevers(({ needsSolve }) => needsSolve !== null);
   const hasFailed = useLevers(({ failure }) => failure !== null);
@@ -92,7 +93,8 @@ function usePrepared(): void {
     if (!isFollowing) startFollowing();
     isFollowing = true;
   }, []);
-  const isWanted = hasResult && canEstimate && !isWorking && !hasFailed && (!isPrepared || (isOfAnother && isCurrent));
+  const isWanted =
+    hasResult && canEstimate && !isWorking && !isPreparing && !hasFailed && (!isPrepared || (isOfAnother && isCurrent));
   useEffect(() => {
     if (isWanted) void prepare();
   }, [isWanted]);

@@ -3,7 +3,7 @@ import type { Input } from '../../../app/contract/procedures.ts';
 import { AppError } from '../../../app/errors.ts';
 import { prepare, startFollowing, useLevers } from '../../../renderer/levers/follow.ts';
 import { changedLayout } from '../../../renderer/levers/same-copper.ts';
-import { getState, setState } from '../../../renderer/state/app-store.ts';
+import { getState, setState, subscribe } from '../../../renderer/state/app-store.ts';
 import { editSources, undo } from '../../../renderer/state/document.ts';
 import { shownOf } from '../../../renderer/state/result.ts';
 import { sampleResult } from '../../support/sample-result.ts';
@@ -46,7 +46,7 @@ beforeEach(async () => {
 
 afterEach(() => {
   stopFollowing();
-  useLevers.setState({ prepared: null, needsSolve: null, failure: null, answered: null });
+  useLevers.setState({ isPreparing: false, prepared: null, needsSolve: null, failure: null, answered: null });
 });
 
 describe('the kept responses', () => {
@@ -95,6 +95,19 @@ describe('the kept responses', () => {
     withSeries(5);
     await vi.waitFor(() => expect(useLevers.getState()).toMatchObject({ prepared: null, failure: null }));
     expect(shownOf(getState())).toMatchObject({ source: 'result', isOutdated: true });
+  });
+
+  it('are never between being prepared and being there, where a view would ask for them once more', async () => {
+    const gaps: string[] = [];
+    const look = () => {
+      const { isPreparing, prepared, failure } = useLevers.getState();
+      if (!isPreparing && prepared === null && failure === null && getState().jobs.length === 0) gaps.push('gap');
+    };
+    const ends = [useLevers.subscribe(look), subscribe(look)];
+    await prepare();
+    for (const end of ends) end();
+    expect(gaps).toEqual([]);
+    expect(useLevers.getState()).toMatchObject({ isPreparing: false, prepared: { leversId: 'kept' } });
   });
 
   it('are not wanted after stop, and a failure says why', async () => {
