@@ -98,13 +98,20 @@ export function ReportView(): ReactElement {
         </InfoNotice>
       )}
       {preview.failure !== null && <ErrorNotice title="The pages cannot be shown">{preview.failure}</ErrorNotice>}
-      <div className={css.pages} data-own-arrows="" aria-busy={preview.isLoading}>
+      <section
+        className={css.pages}
+        data-own-arrows=""
+        aria-label="Pages"
+        aria-busy={preview.isLoading}
+        // biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reached by the keys that scroll it
+        tabIndex={0}
+      >
         {preview.pages === null && preview.failure === null && <p className={css.wait}>Setting the pages…</p>}
         {preview.pages !== null &&
           numbersTo(preview.pages.numPages).map((number) => (
             <PagePicture key={number} pages={preview.pages!} number={number} shape={SHAPES[paper]} />
           ))}
-      </div>
+      </section>
     </div>
   );
 }
