@@ -9,13 +9,13 @@ export interface ProjectOption {
 export const addProjectOption = (command: Command): Command =>
   command.requiredOption('--project <file>', 'project file (*.quietboard)');
 
-/** Opens an existing project for one piece of work and closes it whatever happens. */
+/** Opens a project for one piece of work and closes it whatever happens; only with `create` one that is absent is made. */
 export async function withProject<T>(
   file: string,
-  access: 'read' | 'write',
+  access: 'read' | 'write' | 'create',
   work: (project: Project) => T | Promise<T>,
 ): Promise<T> {
-  const project = Project.open(file, { readOnly: access === 'read' });
+  const project = Project.open(file, { readOnly: access === 'read', create: access === 'create' });
   try {
     return await work(project);
   } finally {

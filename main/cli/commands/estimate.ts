@@ -1,8 +1,10 @@
+import { existsSync } from 'node:fs';
 import { type Command, Option } from 'commander';
 import { AppError } from '../../../app/errors.ts';
 import type { EstimateResult } from '../../../app/estimate/result.ts';
 import { chooseLimits } from '../../../app/limits/choose.ts';
-import type { RunSettings } from '../../../app/project/run-settings.ts';
+import { parseLimitFile } from '../../../app/limits/limit-file.ts';
+import { limitRequestOf, type RunSettings } from '../../../app/project/run-settings.ts';
 import { visibleText } from '../../../app/report/safe-text.ts';
 import { textReport } from '../../../app/report/text-report.ts';
 import { mhzToHz } from '../../../app/units/convert.ts';
@@ -101,8 +103,7 @@ async function estimateFile(file: string, options: EstimateOptions): Promise<num
   await checkOutputs({ ...reportFiles(options), '--project': project }, inputs);
   const limitFile = await readLimitFile(options.limitFile);
   const { standard, class: limitClass } = standardAndClass(options, limitFile);
-  const loaded = await loadBoard(file, options.sources);
-  const settings: RunSettings = {
+  const wanted: RunSettings = {
     standard,
     class: limitClass,
     distanceM: options.distance,
@@ -110,15 +111,19 @@ async function estimateFile(file: string, options: EstimateOptions): Promise<num
     measuredFrom: options.measuredFrom,
     site: options.site,
     orientation: options.orientation,
-    structure: chooseStructure(options.structure, loaded.document.board.structure?.planes),
+    structure: STRUCTURE_DEFAULT,
     ...(options.maxMhz !== undefined && { maxHz: mhzToHz(options.maxMhz) }),
     requiredMarginDb: options.requiredMargin,
     ...(limitFile !== undefined && { limitFile }),
   };
+  // Limits that do not exist, and a project that cannot be opened, must not be found out after minutes of work.
+  chooseLimits(limitRequestOf(wanted), limitFile === undefined ? undefined : parseLimitFile(limitFile));
+  if (project !== undefined && existsSync(project)) Project.open(project).close();
+  const loaded = await loadBoard(file, options.sources);
+  const structure = chooseStructure(options.structure, loaded.document.board.structure?.planes);
+  const settings: RunSettings = { ...wanted, structure };
   const job = estimateJob(loaded.document, settings, programVersion());
   const chosen = chooseLimits(job.limits, job.catalogue);
-  // A project that cannot be opened must not be found out after minutes of work.
-  if (project !== undefined) Project.open(project, { create: true }).close();
   const progress = progressLine('Frequency');
   const startedAt = new Date();
   const result = await runEstimate(job, { onProgress: progress.show }).finally(progress.clear);
@@ -141,7 +146,7 @@ async function estimateFile(file: string, options: EstimateOptions): Promise<num
 }
 
 const keep = (file: string, run: NewRun & { readonly note: string }) =>
-  withProject(file, 'write', (project) => ({
+  withProject(file, 'create', (project) => ({
     project: project.info().name,
     run: project.addRun(run),
     startedAt: run.startedAt,

@@ -39,21 +39,23 @@ async function examine({ project: file, json }: DoctorOptions): Promise<void> {
   process.exitCode = report.isFine ? EXIT_DONE : EXIT_SHORT;
 }
 
+const HEAD_WIDTH = 9;
+const megabytes = (bytes: number): string => (bytes / 1e6).toFixed(2);
+
 function reportLines(report: DoctorReport, width: number): string[] {
   const counts = Object.entries(report.counts).map(([what, count]) => `${count} ${what}`);
-  const facts = [
-    `file        ${visibleText(report.file)}`,
-    `size        ${(report.sizeBytes / 1e6).toFixed(2)} MB, of which ${(report.freeBytes / 1e6).toFixed(2)} MB free`,
-    `holds       ${counts.join(', ')}`,
-    `tables      version ${report.schemaVersion}, SQLite ${report.sqliteVersion}`,
-    `made by     version ${visibleText(report.createdBy)}, last written by ${visibleText(report.writtenBy)}`,
+  const facts: readonly (readonly [string, string])[] = [
+    ['file', visibleText(report.file)],
+    ['size', `${megabytes(report.sizeBytes)} MB, of which ${megabytes(report.freeBytes)} MB free`],
+    ['holds', counts.join(', ')],
+    ['tables', `version ${report.schemaVersion}, SQLite ${report.sqliteVersion}`],
+    ['made by', `version ${visibleText(report.createdBy)}, last written by ${visibleText(report.writtenBy)}`],
   ];
+  const row = (head: string, text: string) => wrapText(text, width, head.padEnd(HEAD_WIDTH), ' '.repeat(HEAD_WIDTH));
   return [
-    ...facts.flatMap((fact) => wrapText(fact, width, '', '            ')),
+    ...facts.flatMap(([head, text]) => row(head, text)),
     '',
-    ...report.findings.flatMap(({ isFine, message }) =>
-      wrapText(`${isFine ? 'fine ' : 'AMISS'}  ${message}`, width, '', '       '),
-    ),
+    ...report.findings.flatMap(({ isFine, message }) => row(isFine ? 'fine' : 'AMISS', message)),
     '',
     report.isFine ? 'Nothing is amiss.' : 'Something is amiss: restore a backup, or export what can still be read.',
   ];
