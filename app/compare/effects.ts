@@ -1,4 +1,5 @@
 import type { ResultPoint } from '../estimate/result.ts';
+import { isNothing } from '../report/format.ts';
 import type { Draft } from './changes/draft.ts';
 import type { LinePair } from './match-lines.ts';
 import { powerOf, type Renames } from './own-levels.ts';
@@ -34,6 +35,7 @@ function ownChanges(pairs: readonly LinePair[], asked: ReadonlySet<string>, rena
       const held = best.get(key);
       if (held && held.weight >= weight) continue;
       const [beforeDbuvPerM, afterDbuvPerM] = [levelOf(one), levelOf(other)];
+      if (beforeDbuvPerM === null && afterDbuvPerM === null) continue;
       const isBoth = beforeDbuvPerM !== null && afterDbuvPerM !== null;
       const changeDb = isBoth ? afterDbuvPerM - beforeDbuvPerM : null;
       const name = key.slice(key.indexOf(' ') + 1);
@@ -43,8 +45,11 @@ function ownChanges(pairs: readonly LinePair[], asked: ReadonlySet<string>, rena
   return best;
 }
 
-const levelOf = (power: number | undefined): number | null =>
-  power === undefined || power === 0 ? null : 10 * Math.log10(power);
+/** null for next to nothing, too: dB from there on would say how well a sum cancels. */
+function levelOf(power = 0): number | null {
+  const levelDbuvPerM = 10 * Math.log10(power);
+  return isNothing(levelDbuvPerM) ? null : levelDbuvPerM;
+}
 
 function ownPowers(
   point: ResultPoint | undefined,

@@ -1,4 +1,5 @@
 import type { ResultPoint } from '../estimate/result.ts';
+import { isNothing } from '../report/format.ts';
 import type { ContributorKind } from './types.ts';
 
 /** A contributor through one of its paths. */
@@ -12,12 +13,13 @@ export interface OwnLevel {
 /** New names of nets, by their old ones. */
 export type Renames = ReadonlyMap<string, string>;
 
-/** Every contributor by path of one reading, by key; nets under their new names. */
+/** Every contributor by path of one reading, by key, except what is next to nothing; nets under their new names. */
 export function ownLevels(point: ResultPoint | undefined, renames?: Renames): Map<string, OwnLevel> {
   const levels = new Map<string, OwnLevel>();
   for (const { kind, name: oldName, viaDbuvPerM } of point?.contributors ?? []) {
     const name = kind === 'net' ? (renames?.get(oldName) ?? oldName) : oldName;
     for (const [path, levelDbuvPerM] of Object.entries(viaDbuvPerM)) {
+      if (isNothing(levelDbuvPerM)) continue;
       levels.set(JSON.stringify([kind, name, path]), { kind, name, path, levelDbuvPerM });
     }
   }

@@ -53,7 +53,7 @@ export interface ContributorChange {
   readonly name: string;
   /** "pair", "plane", "loop" or a cable's name. */
   readonly path: string;
-  /** null: did not contribute. */
+  /** null: did not contribute, or next to nothing (below −50 dBµV/m). */
   readonly beforeDbuvPerM: number | null;
   readonly afterDbuvPerM: number | null;
   /** null when it contributes on one side only. */

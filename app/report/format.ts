@@ -21,9 +21,11 @@ export function trimmed(value: number, decimals: number): string {
 /** Lower levels are nothing to a receiver, and beneath what the arithmetic of a sum that cancels can tell from zero. */
 const LOWEST_LEVEL_DB = -50;
 
+/** Whether a level is too low for any receiver: no change from it can be told in dB. */
+export const isNothing = (levelDb: number): boolean => levelDb < LOWEST_LEVEL_DB;
+
 /** A level in dB, one decimal; "< -50" for anything lower, nothing at all included. */
-export const levelText = (levelDb: number): string =>
-  levelDb < LOWEST_LEVEL_DB ? `< ${LOWEST_LEVEL_DB}` : fixed(levelDb, 1);
+export const levelText = (levelDb: number): string => (isNothing(levelDb) ? `< ${LOWEST_LEVEL_DB}` : fixed(levelDb, 1));
 
 /** A margin in dB, one decimal. The sign stays even on "-0.0": over the limit by less than the rounding. */
 export const marginText = (marginDb: number): string =>
@@ -43,6 +45,9 @@ export function frequencyText(frequencyHz: number): string {
   if (mhz >= 1) return `${trimmed(mhz, 3)} MHz`;
   return `${trimmed(frequencyHz / 1e3, 3)} kHz`;
 }
+
+/** A moment of a run, the same on every machine: "2026-12-01 14:05 UTC". */
+export const dateText = (isoUtc: string): string => `${isoUtc.slice(0, 10)} ${isoUtc.slice(11, 16)} UTC`;
 
 /** A caveat's range; 0 for both ends means every frequency. */
 export function rangeText(fromHz: number, toHz: number): string {

@@ -1,5 +1,5 @@
 import { parseLimitFile } from '../../app/limits/limit-file.ts';
-import { inFile } from '../files/load-board.ts';
+import { inFile } from '../files/in-file.ts';
 import { readJson } from '../files/read-text.ts';
 
 /** The content of a limit file, checked; undefined without one. Throws `file` and `input` with the file's name. */

@@ -22,6 +22,7 @@ export async function checkOutputs(outputs: OutputFiles, inputs: readonly (strin
       if (option === '--json') continue;
       throw new AppError('input', `${option} must be a file; received "-" (only --json writes to standard output)`);
     }
+    if (file === '') throw new AppError('input', `${option} must be the name of a file; received nothing`);
     await requireWritable(file);
     const real = await realOf(file);
     const user = usedBy.get(real);

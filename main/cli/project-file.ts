@@ -1,6 +1,6 @@
 import type { Command } from 'commander';
 import { inputError } from '../../app/errors.ts';
-import { Project } from '../db/project.ts';
+import { type OpenOptions, Project } from '../db/project.ts';
 
 export interface ProjectOption {
   readonly project: string;
@@ -9,13 +9,19 @@ export interface ProjectOption {
 export const addProjectOption = (command: Command): Command =>
   command.requiredOption('--project <file>', 'project file (*.quietboard)');
 
-/** Opens a project for one piece of work and closes it whatever happens; only with `create` one that is absent is made. */
+const OPTIONS: Readonly<Record<'read' | 'write' | 'create', OpenOptions>> = {
+  read: { readOnly: true },
+  write: {},
+  create: { create: true },
+};
+
+/** Opens a project for one piece of work and closes it whatever happens; `create` makes it when it is absent. */
 export async function withProject<T>(
   file: string,
-  access: 'read' | 'write' | 'create',
+  access: keyof typeof OPTIONS,
   work: (project: Project) => T | Promise<T>,
 ): Promise<T> {
-  const project = Project.open(file, { readOnly: access === 'read', create: access === 'create' });
+  const project = Project.open(file, OPTIONS[access]);
   try {
     return await work(project);
   } finally {

@@ -1,8 +1,8 @@
 import { type Command, Option } from 'commander';
+import { dateText } from '../../app/report/format.ts';
 import type { ReportTitle } from '../../app/report/report-title.ts';
 import { reportContent } from '../reports/report-content.ts';
 import type { ReportFormat, ReportSubject } from '../reports/report-request.ts';
-import { dateTextOf } from '../reports/reported-run.ts';
 import { type OutputFiles, writeBytesOutput, writeOutput } from './outputs.ts';
 import { programVersion } from './version.ts';
 
@@ -63,7 +63,7 @@ export async function writeReports(
 const titleOf = (stored: StoredTitle | undefined, { author, date }: ReportOptions): ReportTitle => ({
   project: stored?.project ?? '',
   author: author ?? '',
-  dateText: date ?? (stored ? dateTextOf(stored.startedAt) : ''),
+  dateText: date ?? (stored ? dateText(stored.startedAt) : ''),
   runNumber: stored?.run ?? null,
   note: stored?.note ?? '',
 });

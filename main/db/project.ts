@@ -8,6 +8,7 @@ import type { DoctorReport, ProjectInfo, RevisionSummary } from '../../app/proje
 import type { RunSummary, StoredRun } from '../../app/project/stored-run.ts';
 import { parseWith } from '../../app/schema/parse-with.ts';
 import { programVersion } from '../cli/version.ts';
+import { inFile } from '../files/in-file.ts';
 import { ProjectConnection } from './connection.ts';
 import { createProjectFile } from './create-project-file.ts';
 import type { WritableDb } from './database.ts';
@@ -20,6 +21,7 @@ import { insertMeasurement, listMeasurements, removeMeasurement } from './measur
 import type { MigrationReport } from './migrate.ts';
 import { migrations } from './migrations/migrations.ts';
 import { writeBarrier } from './open-database.ts';
+import { targetOf } from './place-file.ts';
 import { readProjectHeader } from './project-header.ts';
 import { type IfThere, putProjectFile } from './replace-file.ts';
 import { listRevisions } from './revisions-repository.ts';
@@ -72,6 +74,19 @@ export class Project {
     return new Project(new ProjectConnection(file, { readOnly, busyTimeoutMs, migrations }));
   }
 
+  /**
+   * Finds out whether a run can be kept in a file, before the work: throws as `open` would. What is not there is not made yet.
+   */
+  static requireWritable(file: string): void {
+    if (readProjectHeader(file) === undefined) targetOf(file);
+    else Project.open(file).close();
+  }
+
+  /** Throws `input` for a note that no run may have. */
+  static requireNote(note: string): void {
+    refuseLength('note', note, 0, MOST_NOTE);
+  }
+
   /** Whether an existing file and its folder let a project be written. */
   static canWrite(file: string): boolean {
     return writeBarrier(file) === undefined;
@@ -111,7 +126,7 @@ export class Project {
 
   /** Keeps a run; returns its number. Throws `input` for a document that JSON cannot hold. */
   addRun(run: NewRun): number {
-    refuseLength('note', run.note ?? '', 0, MOST_NOTE);
+    Project.requireNote(run.note ?? '');
     return this.#write((db) => {
       const number = nextNumber(db, 'run');
       insertRun(db, number, run);
@@ -135,7 +150,7 @@ export class Project {
   }
 
   setNote(run: number, note: string): void {
-    refuseLength('note', note, 0, MOST_NOTE);
+    Project.requireNote(note);
     this.#write((db) => updateNote(db, run, note) || refuseRun(run, runNumbers(db)));
   }
 
@@ -239,6 +254,13 @@ export class Project {
   /** The same from an export's file, of any size. */
   static importFile(file: string, exported: string): Project {
     return Project.#make(file, (db) => importFile(db, exported, programVersion()));
+  }
+
+  /** The same in place of a project that is there: that one is kept under the name returned. */
+  static restoreFile(file: string, exported: string): Promise<string | undefined> {
+    return putProjectFile(file, exported, 'keep-copy', async (temporary) =>
+      inFile(exported, () => Project.importFile(temporary, exported)).close(),
+    );
   }
 
   static #make(file: string, fill: (db: WritableDb) => void): Project {

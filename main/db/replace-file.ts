@@ -52,7 +52,7 @@ export async function putProjectFile(
 function refuseTarget(file: string, target: string, own: string, ifThere: IfThere): void {
   if (!existsSync(target)) return;
   if (ifThere === 'refuse') throw fileError(file, 'is there already; nothing was changed');
-  if (isSameFile(target, own)) throw fileError(file, 'must be another file than the project itself');
+  if (isSameFile(target, own)) throw fileError(file, 'must be another file than the one it is made from');
   if (isProjectFile(target)) return;
   throw fileError(file, 'is no Quietboard project and will not be replaced: remove it first, or choose another name');
 }

@@ -8,6 +8,7 @@ import { AppError, describe } from '../../app/errors.ts';
 import type { RunDocument } from '../../app/project/stored-run.ts';
 import { readCsvWaveform } from './csv-waveform.ts';
 import { type ImportOptions, importBoard } from './import-board.ts';
+import { inFile } from './in-file.ts';
 import { isJsonFile, readJson, sha256OfFile } from './read-text.ts';
 
 export interface LoadedBoard {
@@ -62,18 +63,6 @@ export async function openBoard(path: string, options: ImportOptions = {}): Prom
   const { board, summary } = await importBoard(path, options);
   const notes = summary.findings.map(({ message }) => `Import: ${message}`);
   return { file: inFile(path, () => parseBoardFile(board)), notes, sha256: await sha256OfFile(path), summary };
-}
-
-/** Runs a step on a file's content; an input error then says which file. */
-export function inFile<T>(file: string, step: () => T): T {
-  try {
-    return step();
-  } catch (error) {
-    if (!(error instanceof AppError) || error.code !== 'input') throw error;
-    const lines = error.message.split('\n');
-    const text = lines.length === 1 ? `${file}: ${lines[0]}` : [`${file}:`, ...lines].join('\n  ');
-    throw new AppError('input', text, error.path, { cause: error });
-  }
 }
 
 async function readSamples(file: BoardFile, folders: readonly string[]): Promise<Map<string, SampleColumns>> {

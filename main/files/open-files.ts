@@ -6,7 +6,8 @@ import { AppError, describe, fileError } from '../../app/errors.ts';
 import type { RunDocument } from '../../app/project/stored-run.ts';
 import { readCsvWaveform } from './csv-waveform.ts';
 import type { ImportOptions } from './import-board.ts';
-import { inFile, type OpenedBoard, openBoard } from './load-board.ts';
+import { inFile } from './in-file.ts';
+import { type OpenedBoard, openBoard } from './load-board.ts';
 import { isJsonFile, readBeginning, readJson } from './read-text.ts';
 import { encodingOf, isArchive, rootElementName } from './sniff.ts';
 

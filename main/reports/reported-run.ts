@@ -8,6 +8,3 @@ export function reportedRun({ result, document, settings, startedAt, programVers
   const { board, limits, catalogue } = estimateJob(document, settings, programVersion);
   return { result, board, limitLines: chooseLimits(limits, catalogue).lines, startedAt };
 }
-
-/** "2026-12-01 14:05 UTC": a run's own date, the same on every machine. */
-export const dateTextOf = (isoUtc: string): string => `${isoUtc.slice(0, 10)} ${isoUtc.slice(11, 16)} UTC`;

@@ -328,3 +328,30 @@ describe('the sample', () => {
     expect(changeDb).toBeCloseTo(20 * Math.log10(envelope(3e-9) / envelope(1e-9)), 6);
   });
 });
+
+it('next to nothing is nothing: how well a sum cancels is no change in dB', () => {
+  const at = (levelDbuvPerM: number) => {
+    const points = sampleResult().points.map((point) => ({
+      ...point,
+      contributors: [{ kind: 'net' as const, name: 'CLK_25M', levelDbuvPerM, viaDbuvPerM: { pair: levelDbuvPerM } }],
+    }));
+    return resultWith(points);
+  };
+  const [quiet, heard] = [storedRun(someBoard, at(-180)), storedRun(otherBoard, at(12))];
+  const effectsOf = (one: typeof quiet, other: typeof quiet) => {
+    const { changes, lines } = compareRuns(one, other);
+    const own = changes.filter(({ nets }) => nets.includes('CLK_25M')).map(({ effect }) => effect);
+    expect(own.length).toBeGreaterThan(0);
+    return { own, contributors: lines.flatMap((line) => line.contributors) };
+  };
+  const louder = effectsOf(quiet, heard);
+  for (const each of [...louder.own, ...louder.contributors]) {
+    expect(each).toMatchObject({
+      beforeDbuvPerM: null,
+      afterDbuvPerM: expect.closeTo(12, 9) as number,
+      changeDb: null,
+    });
+  }
+  const never = effectsOf(quiet, storedRun(otherBoard, at(-60)));
+  expect(never).toEqual({ own: never.own.map(() => null), contributors: [] });
+});

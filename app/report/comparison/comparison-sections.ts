@@ -16,7 +16,7 @@ import {
   table,
 } from '../blocks.ts';
 import { changeFigure } from '../figures/change-figure.ts';
-import { levelText, marginText, mhzText, trimmed } from '../format.ts';
+import { dateText, levelText, marginText, mhzText, trimmed } from '../format.ts';
 import { shortName } from '../markup.ts';
 import { printed } from '../number.ts';
 import { DETECTOR_SHORT } from '../text-table.ts';
@@ -43,20 +43,24 @@ export const comparisonSections = (comparison: Comparison, length = FULL): Secti
   linesSection(comparison, length.lines),
 ];
 
-/** Title block: which runs, of what, against what. `dateText` only when the caller has a date. */
-export function comparisonFacts({ before, after }: Comparison, dateText: string | undefined): Fact[] {
+/** Title block: which runs, of what, against what. `ownDate` only when the caller has a date. */
+export function comparisonFacts({ before, after }: Comparison, ownDate: string | undefined): Fact[] {
   const side = (term: string, run: ComparedRun): Fact[] => [
     {
       term,
-      value: [`run ${run.run}`, run.revision !== '' && [', revision ', name(run.revision)], `, ${run.startedAt}`],
+      value: [
+        `run ${run.run}`,
+        run.revision !== '' && [', revision ', name(run.revision)],
+        `, ${dateText(run.startedAt)}`,
+      ],
     },
     { term: 'Limit', value: `${run.limit}, required margin ${trimmed(run.requiredMarginDb, 1)} dB` },
     { term: 'Program', value: `quietboard ${shortName(run.programVersion, 24)}` },
     { term: 'Layout', value: code(run.layoutSha256.slice(0, 16)) },
   ];
   return [
-    { term: 'Board', value: name(after.board, 80), isWide: dateText === undefined },
-    ...(dateText === undefined ? [] : [{ term: 'Date', value: dateText }]),
+    { term: 'Board', value: name(after.board, 80), isWide: ownDate === undefined },
+    ...(ownDate === undefined ? [] : [{ term: 'Date', value: ownDate }]),
     ...side('Before', before),
     ...side('Now', after),
   ];

@@ -1,4 +1,3 @@
-import { existsSync } from 'node:fs';
 import { type Command, Option } from 'commander';
 import { AppError } from '../../../app/errors.ts';
 import type { EstimateResult } from '../../../app/estimate/result.ts';
@@ -26,6 +25,7 @@ import {
   type ReportOptions,
   type ReportOutputs,
   reportFiles,
+  type StoredTitle,
   writeReports,
 } from '../report-outputs.ts';
 import { chooseStructure, STRUCTURE_DEFAULT } from '../structure-choice.ts';
@@ -99,6 +99,7 @@ async function estimateFile(file: string, options: EstimateOptions): Promise<num
   if (options.note !== undefined && project === undefined) {
     throw new AppError('input', '--note must go with --project; received no project', '--note');
   }
+  Project.requireNote(options.note ?? '');
   const inputs = [file, options.sources, options.limitFile];
   await checkOutputs({ ...reportFiles(options), '--project': project }, inputs);
   const limitFile = await readLimitFile(options.limitFile);
@@ -118,7 +119,7 @@ async function estimateFile(file: string, options: EstimateOptions): Promise<num
   };
   // Limits that do not exist, and a project that cannot be opened, must not be found out after minutes of work.
   chooseLimits(limitRequestOf(wanted), limitFile === undefined ? undefined : parseLimitFile(limitFile));
-  if (project !== undefined && existsSync(project)) Project.open(project).close();
+  if (project !== undefined) Project.requireWritable(project);
   const loaded = await loadBoard(file, options.sources);
   const structure = chooseStructure(options.structure, loaded.document.board.structure?.planes);
   const settings: RunSettings = { ...wanted, structure };
@@ -127,10 +128,10 @@ async function estimateFile(file: string, options: EstimateOptions): Promise<num
   const progress = progressLine('Frequency');
   const startedAt = new Date();
   const result = await runEstimate(job, { onProgress: progress.show }).finally(progress.clear);
-  const run = { startedAt: startedAt.toISOString(), document: loaded.document, settings, result };
   const durationS = (Date.now() - startedAt.getTime()) / 1000;
-  const stored =
-    project === undefined ? undefined : await keep(project, { ...run, durationS, note: options.note ?? '' });
+  const run = { startedAt: startedAt.toISOString(), document: loaded.document, settings, result, durationS };
+  const { stored, failure } =
+    project === undefined ? NOT_KEPT : await keep(project, { ...run, note: options.note ?? '' });
   const reported = {
     result,
     board: job.board,
@@ -138,20 +139,36 @@ async function estimateFile(file: string, options: EstimateOptions): Promise<num
     ...(stored && { startedAt: stored.startedAt }),
   };
   await writeReports({ kind: 'run', run: reported }, stored, options);
-  if (json !== STDOUT) {
-    process.stdout.write(textReport(result, { top: options.top, width: outputWidth() }));
-    if (stored) process.stdout.write(`\nKept as run #${stored.run} in ${visibleText(project!)}.\n`);
+  if (json !== STDOUT) process.stdout.write(textReport(result, { top: options.top, width: outputWidth() }));
+  if (failure !== undefined) throw failure;
+  if (stored) {
+    const text = `Kept as run #${stored.run} in ${visibleText(project!)}.\n`;
+    if (json === STDOUT) process.stderr.write(text);
+    else process.stdout.write(`\n${text}`);
   }
   return exitCodeOf(result);
 }
 
-const keep = (file: string, run: NewRun & { readonly note: string }) =>
-  withProject(file, 'create', (project) => ({
-    project: project.info().name,
-    run: project.addRun(run),
-    startedAt: run.startedAt,
-    note: run.note,
-  }));
+interface Kept {
+  readonly stored?: StoredTitle;
+  /** Why the run could not be kept: told last, so that the work of minutes is shown and written all the same. */
+  readonly failure?: unknown;
+}
+const NOT_KEPT: Kept = {};
+
+async function keep(file: string, run: NewRun & { readonly note: string }): Promise<Kept> {
+  try {
+    const stored = await withProject(file, 'create', (project) => ({
+      project: project.info().name,
+      run: project.addRun(run),
+      startedAt: run.startedAt,
+      note: run.note,
+    }));
+    return { stored };
+  } catch (failure) {
+    return { failure };
+  }
+}
 
 /** By the worst margin: every one must reach the required one. */
 const exitCodeOf = ({ worst, limit }: EstimateResult): number =>

@@ -44,8 +44,8 @@ describe('printed comparison', () => {
   it('says headline, both runs, every warning and caution, and has a place to sign', () => {
     const text = textOf(definition);
     expect(text).toContain(comparison.headline);
-    expect(text).toContain('run 1, revision A, 2031-04-05T06:07:08Z');
-    expect(text).toContain('run 2, revision B, 2031-04-06T06:07:08Z');
+    expect(text).toContain('run 1, revision A, 2031-04-05 06:07 UTC');
+    expect(text).toContain('run 2, revision B, 2031-04-06 06:07 UTC');
     for (const { message } of comparison.warnings) expect(text).toContain(message);
     for (const caution of CAUTIONS) expect(text).toContain(caution);
     expect(text).toContain('Approved');

@@ -57,7 +57,7 @@ async function exportTo(json: string, { project: file }: ProjectOption): Promise
 }
 
 async function restore(from: string, { project: file }: ProjectOption): Promise<void> {
-  const kept = isProjectFile(from) ? await restoreBackup(from, file) : restoreExport(from, file);
+  const kept = await (isProjectFile(from) ? restoreBackup(from, file) : Project.restoreFile(file, from));
   const runs = await withProject(file, 'read', (project) => project.info().runs);
   const counted = `${runs} ${runs === 1 ? 'run' : 'runs'}`;
   process.stdout.write(`${visibleText(file)} made, with ${counted}.\n`);
@@ -72,7 +72,3 @@ const restoreBackup = (from: string, file: string): Promise<string | undefined> 
     if (amiss) throw fileError(from, `is damaged and was not restored: ${amiss.message}`);
     return project.backupTo(file, 'keep-copy');
   });
-
-function restoreExport(from: string, file: string): undefined {
-  Project.importFile(file, from).close();
-}

@@ -1,7 +1,8 @@
 import type { Command } from 'commander';
 import type { DoctorReport } from '../../../../app/project/project-info.ts';
+import { countText } from '../../../../app/report/format.ts';
 import { visibleText } from '../../../../app/report/safe-text.ts';
-import { wrapText } from '../../../../app/report/wrap.ts';
+import { padEnd, wrapText } from '../../../../app/report/wrap.ts';
 import { jsonText } from '../../../files/json-text.ts';
 import { EXIT_DONE, EXIT_SHORT } from '../../exit.ts';
 import { checkOutputs, outputWidth, STDOUT, writeOutput } from '../../outputs.ts';
@@ -39,24 +40,46 @@ async function examine({ project: file, json }: DoctorOptions): Promise<void> {
   process.exitCode = report.isFine ? EXIT_DONE : EXIT_SHORT;
 }
 
-const HEAD_WIDTH = 9;
-const megabytes = (bytes: number): string => (bytes / 1e6).toFixed(2);
+/** Tables by what is in them, one and many. */
+const CONTENTS: ReadonlyMap<string, readonly [one: string, many: string]> = new Map([
+  ['run', ['run', 'runs']],
+  ['layout', ['layout', 'layouts']],
+  ['sources', ['set of sources', 'sets of sources']],
+  ['samples', ['measured waveform', 'measured waveforms']],
+  ['settings', ['set-up', 'set-ups']],
+  ['result', ['result', 'results']],
+  ['measurement', ['measurement', 'measurements']],
+  ['draft', ['draft', 'drafts']],
+]);
+
+function contentsText(counts: DoctorReport['counts']): string {
+  const parts = [...CONTENTS].flatMap(([table, [one, many]]) =>
+    counts[table] ? [countText(counts[table], one, many)] : [],
+  );
+  return parts.length === 0 ? 'no runs yet' : parts.join(', ');
+}
+
+const megabytes = (bytes: number): string => `${(bytes / 1e6).toFixed(2)} MB`;
 
 function reportLines(report: DoctorReport, width: number): string[] {
-  const counts = Object.entries(report.counts).map(([what, count]) => `${count} ${what}`);
-  const facts: readonly (readonly [string, string])[] = [
-    ['file', visibleText(report.file)],
-    ['size', `${megabytes(report.sizeBytes)} MB, of which ${megabytes(report.freeBytes)} MB free`],
-    ['holds', counts.join(', ')],
-    ['tables', `version ${report.schemaVersion}, SQLite ${report.sqliteVersion}`],
-    ['made by', `version ${visibleText(report.createdBy)}, last written by ${visibleText(report.writtenBy)}`],
+  const facts: [term: string, text: string][] = [
+    ['File', report.file],
+    ['Size', `${megabytes(report.sizeBytes)}, of which ${megabytes(report.freeBytes)} free`],
+    ['Holds', contentsText(report.counts)],
+    ['Tables', `version ${report.schemaVersion}, SQLite ${report.sqliteVersion}`],
+    ['Made by', `version ${report.createdBy}, last written by version ${report.writtenBy}`],
   ];
-  const row = (head: string, text: string) => wrapText(text, width, head.padEnd(HEAD_WIDTH), ' '.repeat(HEAD_WIDTH));
+  const findings = report.findings.map(({ isFine, message }) => [isFine ? 'fine' : 'AMISS', message] as const);
   return [
-    ...facts.flatMap(([head, text]) => row(head, text)),
+    ...facts.flatMap((fact) => hanging(fact, width)),
     '',
-    ...report.findings.flatMap(({ isFine, message }) => row(isFine ? 'fine' : 'AMISS', message)),
+    ...findings.flatMap((finding) => hanging(finding, width)),
     '',
     report.isFine ? 'Nothing is amiss.' : 'Something is amiss: restore a backup, or export what can still be read.',
   ];
 }
+
+const TERM_WIDTH = 9;
+
+const hanging = ([term, text]: readonly [string, string], width: number): string[] =>
+  wrapText(visibleText(text), width, padEnd(term, TERM_WIDTH), ' '.repeat(TERM_WIDTH));

@@ -14,5 +14,7 @@ export function addNote(program: Command): void {
 }
 
 async function writeNote(run: string, text: string, { project: file }: ProjectOption): Promise<void> {
-  await withProject(file, 'write', (project) => project.setNote(runNumber(run), text));
+  const number = runNumber(run);
+  await withProject(file, 'write', (project) => project.setNote(number, text));
+  process.stdout.write(`Note of run #${number} ${text === '' ? 'taken away' : 'written'}.\n`);
 }

@@ -1,12 +1,13 @@
 import type { Command } from 'commander';
 import { compareResults, type ResultDifference } from '../../../../app/compare/result-difference.ts';
+import { frequencyText } from '../../../../app/report/format.ts';
 import { visibleText } from '../../../../app/report/safe-text.ts';
-import { hzToMhz } from '../../../../app/units/convert.ts';
+import { wrapText } from '../../../../app/report/wrap.ts';
 import { jsonText } from '../../../files/json-text.ts';
 import { estimateJob } from '../../../jobs/estimate-job.ts';
 import { runEstimate } from '../../../jobs/run-estimate.ts';
 import { EXIT_DONE, EXIT_SHORT } from '../../exit.ts';
-import { checkOutputs, STDOUT, writeOutput } from '../../outputs.ts';
+import { checkOutputs, outputWidth, STDOUT, writeOutput } from '../../outputs.ts';
 import { progressLine } from '../../progress.ts';
 import { addProjectOption, type ProjectOption, runNumber, withProject } from '../../project-file.ts';
 import { programVersion } from '../../version.ts';
@@ -56,7 +57,10 @@ async function rerun(run: number, { project: file, json }: RerunOptions): Promis
       ...difference,
     }),
   );
-  if (json !== STDOUT) process.stdout.write(`${sentence(run, stored.programVersion, difference)}\n`);
+  if (json !== STDOUT) {
+    const text = sentence(run, stored.programVersion, difference);
+    process.stdout.write(`${wrapText(text, outputWidth()).join('\n')}\n`);
+  }
   return difference.isIdentical ? EXIT_DONE : EXIT_SHORT;
 }
 
@@ -66,7 +70,7 @@ function sentence(run: number, storedVersion: string, difference: ResultDifferen
   const levels =
     difference.largestDb === null
       ? 'no reading is in both'
-      : `levels differ by up to ${difference.largestDb.toPrecision(2)} dB (${hzToMhz(difference.largestAtHz ?? 0)} MHz)`;
+      : `levels differ by up to ${difference.largestDb.toPrecision(2)} dB (at ${frequencyText(difference.largestAtHz ?? 0)})`;
   const counts = `${difference.onlyStored} readings only in the stored result, ${difference.onlyNew} only in the new one`;
   const other = difference.otherKeys.length === 0 ? '' : `; also different: ${difference.otherKeys.join(', ')}`;
   return `${who}: another result: ${levels}; ${counts}${other}.`;

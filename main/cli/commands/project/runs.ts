@@ -34,12 +34,15 @@ export function addRuns(program: Command): void {
 
 async function listRuns({ project: file, revision, json }: RunsOptions): Promise<void> {
   await checkOutputs({ '--json': json }, [file]);
-  const { name, runs } = await withProject(file, 'read', (project) => ({
+  const { name, runs, revisions } = await withProject(file, 'read', (project) => ({
     name: project.info().name,
     runs: project.runs(revision === undefined ? {} : { revision }),
+    revisions: project.revisions().map((each) => each.revision),
   }));
   await writeOutput(json, () => jsonText({ runs: runs.map(listed) }));
-  if (json !== STDOUT) process.stdout.write(`${runLines(name, runs, outputWidth()).join('\n')}\n`);
+  if (json === STDOUT) return;
+  const lines = runs.length === 0 ? noRunLines(revisions, outputWidth()) : runLines(name, runs, outputWidth());
+  process.stdout.write(`${lines.join('\n')}\n`);
 }
 
 /** A run as the JSON contract lists it. */
@@ -49,8 +52,13 @@ const listed = ({ layoutSha256, sourcesSha256, ...summary }: RunSummary) => ({
   sourcesSha256,
 });
 
+function noRunLines(revisions: readonly string[], width: number): string[] {
+  if (revisions.length === 0) return ['No runs yet. Keep one with: quietboard estimate BOARD --project FILE'];
+  const names = [...new Set(revisions.map((revision) => (revision === '' ? '(none)' : revision)))];
+  return wrapText(visibleText(`No runs of this revision. There are runs of: ${names.join(', ')}.`), width);
+}
+
 function runLines(name: string, runs: readonly RunSummary[], width: number): string[] {
-  if (runs.length === 0) return ['No runs yet. Keep one with: quietboard estimate BOARD --project FILE'];
   const notes = runs.filter(({ note }) => note !== '');
   const boards = new Set(runs.map(({ board }) => board));
   const columns = COLUMNS.filter(({ head }) => head !== 'board' || boards.size > 1);
