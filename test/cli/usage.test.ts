@@ -62,8 +62,8 @@ describe('usage errors end with code 2 and a sentence on stderr', () => {
 
 describe('unexpected failures end with code 3', () => {
   it.each([
-    ['thrown beside the command', 'setTimeout(() => { throw new Error("planted") }, 2000)'],
-    ['a promise nobody awaits', 'setTimeout(() => Promise.reject(new Error("planted")), 2000)'],
+    ['thrown beside the command', 'setTimeout(() => { throw new Error("planted") }, 8000)'],
+    ['a promise nobody awaits', 'setTimeout(() => Promise.reject(new Error("planted")), 8000)'],
     ['thrown in the command', 'JSON.stringify = () => { throw new Error("planted") }'],
   ])('%s', async (_what, script) => {
     // The timers keep the process alive after the command: the planted failure is what ends it.
