@@ -124,7 +124,7 @@ describe('Ctrl-C', () => {
     };
     const file = write('slow.board.json', board);
     const before = readdirSync(folder);
-    const out = join(folder, 'slow.json');
+    const [out, project] = [join(folder, 'slow.json'), join(folder, 'slow.quietboard')];
     // The program's own listener is there once it has loaded; the worker starts right after.
     const probe = 'setInterval(() => { if (process.listenerCount("SIGINT") > 0) console.error("ready") }, 500).unref()';
     const child = spawn(process.execPath, [
@@ -135,6 +135,8 @@ describe('Ctrl-C', () => {
       file,
       '--json',
       out,
+      '--project',
+      project,
     ]);
     child.stderr.once('data', () => child.kill('SIGINT'));
     const code = await new Promise((resolve) => child.on('close', resolve));

@@ -15,7 +15,8 @@ import {
 const HELP = `
 Examples:
   quietboard show --project valve.quietboard 7
-  quietboard show --project valve.quietboard 7 --pdf review.pdf --author "A. Designer"
+  quietboard show --project valve.quietboard 7 --pdf review.pdf \\
+      --author "A. Designer"
 `;
 
 interface ShowOptions extends ProjectOption, ReportOptions, ReportOutputs {

@@ -13,7 +13,8 @@ import {
 
 const HELP = `
 Runs are grouped by set-up (standard, class, distance, site, orientation): only
-margins of the same set-up are put in a row. A revision counts with its latest run.
+margins of the same set-up are put in a row. A revision counts with its latest
+run.
 
 Examples:
   quietboard trend --project valve.quietboard
