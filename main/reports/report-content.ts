@@ -9,11 +9,13 @@ import { trendCsv } from '../../app/report/trend/trend-csv.ts';
 import { trendHtml } from '../../app/report/trend/trend-html.ts';
 import { BUILT_IN_CHECKS } from '../../app/validate/built-in-summary.ts';
 import { jsonText } from '../files/json-text.ts';
-import { comparisonPdf, trendPdf } from '../pdf/comparison-pdf.ts';
-import { runPdf } from '../pdf/run-pdf.ts';
 import type { ReportedRun, ReportRequest } from './report-request.ts';
 
 type Content = string | Promise<Uint8Array>;
+
+/** Loading the printing library takes a quarter of a command's start: only who prints waits for it. */
+const comparisonPrinter = () => import('../pdf/comparison-pdf.ts');
+const runPrinter = () => import('../pdf/run-pdf.ts');
 
 /** A report's text or bytes. The same request gives the same bytes. Throws `input` for a format the subject does not have. */
 export function reportContent(request: ReportRequest): Content {
@@ -24,7 +26,7 @@ export function reportContent(request: ReportRequest): Content {
     const { comparison } = subject;
     switch (format) {
       case 'pdf':
-        return comparisonPdf(comparison, title, paper);
+        return comparisonPrinter().then(({ comparisonPdf }) => comparisonPdf(comparison, title, paper));
       case 'html':
         return comparisonHtml(comparison, title);
       case 'csv':
@@ -36,7 +38,7 @@ export function reportContent(request: ReportRequest): Content {
   const { trend } = subject;
   switch (format) {
     case 'pdf':
-      return trendPdf(trend, title, paper);
+      return comparisonPrinter().then(({ trendPdf }) => trendPdf(trend, title, paper));
     case 'html':
       return trendHtml(trend, title);
     case 'csv':
@@ -62,7 +64,8 @@ function runContent(run: ReportedRun, { format, title, paper, programVersion }: 
       return htmlReport(result, board, labelledLimits(limitLines), { title });
     case 'pdf': {
       const validation = { programVersion, groups: BUILT_IN_CHECKS };
-      return runPdf({ result, board, limitLines: labelledLimits(limitLines), title, paper, validation });
+      const report = { result, board, limitLines: labelledLimits(limitLines), title, paper, validation };
+      return runPrinter().then(({ runPdf }) => runPdf(report));
     }
   }
 }
