@@ -58,7 +58,7 @@ describe('backup, export and restore', () => {
     expect(exported.stdout).toBe(readFileSync(at('copy.json'), 'utf8'));
   });
 
-  it.each(['backup', 'export'])('restored over a project (%s), that one is kept under another name', async (command) => {
+  it.each(['backup', 'export'])('over a project keeps that one under another name: %s', async (command) => {
     const { file, at } = projectOf(2);
     const copy = at('copy');
     await runCli([command, '--project', file, copy]);
