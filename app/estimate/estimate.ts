@@ -1,36 +1,19 @@
 import type { Board } from '../board/board.ts';
-import { AppError } from '../errors.ts';
+import { eachLine } from './each-line.ts';
 import type { EstimateHooks, EstimateRequest } from './estimate-request.ts';
 import { finishEstimate } from './finish.ts';
 import { type LineLevel, lineLevel } from './line-level.ts';
 import { type EstimatePlan, planEstimate } from './plan.ts';
 import type { EstimateResult } from './result.ts';
-import { StructureResponder } from './structure-responder.ts';
 import { type WorkUnit, workUnits } from './work-units.ts';
 
 /** The level at every frequency of a unit, null where nothing radiates. Throws `cancelled` on stop. */
 export function solveUnit({ scene, table }: EstimatePlan, unit: WorkUnit, hooks: EstimateHooks = {}): UnitLevels {
-  const own = table.slice(unit.from, unit.to);
-  const throwIfStopped = () => {
-    if (hooks.stop?.()) throw new AppError('cancelled', 'stopped by the user');
-  };
-  const responder = scene.structure
-    ? new StructureResponder(
-        scene,
-        scene.structure,
-        own.map(({ frequencyHz }) => frequencyHz),
-        throwIfStopped,
-      )
-    : null;
-  const levels = own.map((lines, done) => {
-    throwIfStopped();
-    hooks.onProgress?.(done, own.length);
+  return eachLine(scene, table.slice(unit.from, unit.to), hooks, (lines, responder) => {
     const level = lineLevel(scene, lines, responder);
     if (level) hooks.onLevel?.(level);
     return level;
   });
-  hooks.onProgress?.(own.length, own.length);
-  return levels;
 }
 
 export type UnitLevels = readonly (LineLevel | null)[];

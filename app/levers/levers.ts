@@ -1,5 +1,6 @@
 import type { Board } from '../board/board.ts';
-import { AppError, inputError } from '../errors.ts';
+import { inputError } from '../errors.ts';
+import { eachLine } from '../estimate/each-line.ts';
 import type { EstimateHooks, EstimateRequest } from '../estimate/estimate-request.ts';
 import { judgement } from '../estimate/finish.ts';
 import type { LineLevel } from '../estimate/line-level.ts';
@@ -7,7 +8,6 @@ import { type JudgedRange, judgedRange, requireSources } from '../estimate/plan.
 import type { EstimateResult } from '../estimate/result.ts';
 import { buildScene, drivenNets, type Scene } from '../estimate/scene.ts';
 import { type FrequencyLines, spectrumTable } from '../estimate/spectrum-table.ts';
-import { StructureResponder } from '../estimate/structure-responder.ts';
 import { checkNetwork } from '../network/network.ts';
 import { keptBytes } from './kept-bytes.ts';
 import { KeptLine, type UnitLines } from './kept-line.ts';
@@ -177,23 +177,7 @@ export function prepareLevers(
       `${mb(bytes)} for ${table.length} frequencies: fewer driven nets, data of a shorter sequence or a lower upper end need less`,
     );
   }
-  const throwIfStopped = () => {
-    if (hooks.stop?.()) throw new AppError('cancelled', 'stopped by the user');
-  };
-  const responder = scene.structure
-    ? new StructureResponder(
-        scene,
-        scene.structure,
-        table.map(({ frequencyHz }) => frequencyHz),
-        throwIfStopped,
-      )
-    : null;
-  const lines = table.map((unitLines, done) => {
-    throwIfStopped();
-    hooks.onProgress?.(done, table.length);
-    return new KeptLine(scene, unitLines, responder);
-  });
-  hooks.onProgress?.(table.length, table.length);
+  const lines = eachLine(scene, table, hooks, (unitLines, responder) => new KeptLine(scene, unitLines, responder));
   const levers = new Levers({ board, request, range, scene, ports, lines, bytes });
   // The board as it is: what cannot be estimated is refused here, and the first change starts from its maxima.
   levers.try(board, request);

@@ -1,5 +1,6 @@
 import { type ReactElement, useState } from 'react';
 import type { BandChange, Change, Comparison, Crossing, LineChange } from '../../app/compare/types.ts';
+import { DETECTOR_SHORT } from '../../app/report/text-table.ts';
 import { call } from '../api/api.ts';
 import { Button } from '../components/button.tsx';
 import { EmptyState, ErrorNotice, InfoNotice } from '../components/notes.tsx';
@@ -107,8 +108,6 @@ const ChangeList = ({ changes }: { readonly changes: readonly Change[] }): React
   </ul>
 );
 
-const DETECTOR_WORDS = { 'quasi-peak': 'QP', average: 'AV', peak: 'PK' } as const;
-
 const BandTable = ({ bands }: { readonly bands: readonly BandChange[] }): ReactElement => (
   <Table label="Worst margins by band, dB">
     <thead>
@@ -124,7 +123,7 @@ const BandTable = ({ bands }: { readonly bands: readonly BandChange[] }): ReactE
       {bands.map((band) => (
         <Row key={`${band.detector} ${band.fromHz}`}>
           <Cell>
-            {DETECTOR_WORDS[band.detector]} {frequencyText(band.fromHz)} to {frequencyText(band.toHz)}
+            {DETECTOR_SHORT[band.detector]} {frequencyText(band.fromHz)} to {frequencyText(band.toHz)}
           </Cell>
           <Cell isNumber>{band.before.worst === null ? '–' : marginText(band.before.worst.marginDb)}</Cell>
           <Cell isNumber>{band.after.worst === null ? '–' : marginText(band.after.worst.marginDb)}</Cell>
@@ -178,7 +177,7 @@ function LineTable({
                 {frequencyText(line.frequencyHz)}
               </Button>
             </Cell>
-            <Cell>{DETECTOR_WORDS[line.detector]}</Cell>
+            <Cell>{DETECTOR_SHORT[line.detector]}</Cell>
             <Cell isNumber>{line.before === null ? 'new' : levelText(line.before.levelDbuvPerM)}</Cell>
             <Cell isNumber>{line.after === null ? 'gone' : levelText(line.after.levelDbuvPerM)}</Cell>
             <Cell isNumber>{line.levelChangeDb === null ? '–' : signed(line.levelChangeDb)}</Cell>

@@ -1,5 +1,5 @@
 import type { ReactElement } from 'react';
-import { nsToS, sToNs } from '../../app/units/convert.ts';
+import { fToPf, nsToS, pfToF, sToNs } from '../../app/units/convert.ts';
 import { Button, IconButton } from '../components/button.tsx';
 import { Checkbox } from '../components/checkbox.tsx';
 import { Icon } from '../components/icons.tsx';
@@ -12,8 +12,6 @@ import { addLoad, driveNets, editDrive, editLoad, leaveNets, removeDrive, remove
 import css from './sources.module.css';
 
 const OHM = { unit: 'Ω' } as const;
-/** The file's picofarads as the field's farads. */
-const PF_PER_F = 1e12;
 
 /** Driver and loads of the chosen net. */
 export function NetEditor(): ReactElement {
@@ -148,11 +146,11 @@ export function NetEditor(): ReactElement {
           />
           <QuantityField
             label="Capacitance"
-            value={(load.capacitancePf ?? 0) / PF_PER_F}
+            value={pfToF(load.capacitancePf ?? 0)}
             form={{ unit: 'F', barePrefix: 'p' }}
             min={0}
             onCommit={(farad) =>
-              farad !== null && editLoad(index, `Load of ${net.name}`, { capacitancePf: farad * PF_PER_F })
+              farad !== null && editLoad(index, `Load of ${net.name}`, { capacitancePf: fToPf(farad) })
             }
           />
         </fieldset>

@@ -4,6 +4,7 @@ import { countText } from '../../app/report/format.ts';
 import { Button } from '../components/button.tsx';
 import { Checkbox } from '../components/checkbox.tsx';
 import { EmptyState } from '../components/notes.tsx';
+import { RowSpacer } from '../components/row-spacer.tsx';
 import { Select } from '../components/select.tsx';
 import { Cell, HeadCell, Row, Table } from '../components/table.tsx';
 import { TextField } from '../components/text-field.tsx';
@@ -106,7 +107,7 @@ export function NetTable(): ReactElement {
               </tr>
             </thead>
             <tbody>
-              {above > 0 && <Spacer heightPx={above} />}
+              {above > 0 && <RowSpacer columns={6} heightPx={above} />}
               {items.map(({ index }) => {
                 const row = shown[index]!;
                 return (
@@ -148,7 +149,7 @@ export function NetTable(): ReactElement {
                   </Row>
                 );
               })}
-              {below > 0 && <Spacer heightPx={below} />}
+              {below > 0 && <RowSpacer columns={6} heightPx={below} />}
             </tbody>
           </Table>
         )}
@@ -156,9 +157,3 @@ export function NetTable(): ReactElement {
     </section>
   );
 }
-
-const Spacer = ({ heightPx }: { readonly heightPx: number }): ReactElement => (
-  <tr>
-    <td colSpan={6} style={{ height: heightPx, padding: 0 }} />
-  </tr>
-);

@@ -2,7 +2,7 @@ import type { Waveform } from '../../app/board/board.ts';
 import { fundamentalHz } from '../../app/sources/clock.ts';
 import { spectrumOf } from '../../app/sources/spectrum.ts';
 import { waveformFunction } from '../../app/sources/waveform-value.ts';
-import { amplitudeToDb } from '../../app/units/convert.ts';
+import { rmsToMicroDb } from '../../app/units/convert.ts';
 
 export interface Curve {
   readonly x: number;
@@ -38,7 +38,7 @@ export function lineCurve(waveform: Waveform): Curve[] {
   const lines: Curve[] = [];
   for (let i = 0; i < Math.min(frequenciesHz.length, MOST_LINES); i++) {
     const peak = Math.hypot(phasors[2 * i]!, phasors[2 * i + 1]!);
-    if (peak > 0) lines.push({ x: frequenciesHz[i]!, y: amplitudeToDb(peak / Math.SQRT2 / 1e-6) });
+    if (peak > 0) lines.push({ x: frequenciesHz[i]!, y: rmsToMicroDb(peak / Math.SQRT2) });
   }
   const strongest = lines.reduce((level, { y }) => Math.max(level, y), -Infinity);
   return lines.filter(({ y }) => y >= strongest - DEEPEST_DB);

@@ -14,7 +14,6 @@ import css from './sources.module.css';
 import { WaveformPlot } from './waveform-plot.tsx';
 
 const TIME = { unit: 's', barePrefix: 'n' } as const;
-const MHZ_PER_MBPS = 1;
 
 /** The waveforms, and one of them as time and spectrum while it is changed. */
 export function WaveformEditor(): ReactElement {
@@ -130,11 +129,11 @@ function KindFields({ waveform, index }: { readonly waveform: WaveformFile; read
         <div className={css.fields}>
           <QuantityField
             label="Bit rate"
-            value={mhzToHz(waveform.bitRateMbps * MHZ_PER_MBPS)}
+            value={mhzToHz(waveform.bitRateMbps)}
             form={{ unit: 'bit/s', barePrefix: 'M' }}
             min={1}
             message={problemAt('bitRateMbps')}
-            onCommit={(rate) => rate !== null && change('Bit rate', { bitRateMbps: hzToMhz(rate) / MHZ_PER_MBPS })}
+            onCommit={(rate) => rate !== null && change('Bit rate', { bitRateMbps: hzToMhz(rate) })}
           />
           <Select
             label="Sequence"

@@ -23,7 +23,7 @@ export function WaveformPlot({ waveform }: { readonly waveform: Waveform }): Rea
   const palette = usePalette();
   const time = useMemo(() => timeCurve(waveform), [waveform]);
   const lines = useMemo(() => lineCurve(waveform), [waveform]);
-  const unit = 'unit' in waveform && waveform.unit === 'A' ? 'A' : 'V';
+  const unit = waveform.quantity;
   return (
     <div className={css.plots}>
       <Plot

@@ -1,4 +1,5 @@
 import type { ResultPoint } from '../../app/estimate/result.ts';
+import { hzToMhz } from '../../app/units/convert.ts';
 import type { Palette } from '../theme/palette.ts';
 
 /** Puts a canvas on the clipboard as a picture, on paper of the theme. */
@@ -31,7 +32,7 @@ export const pointsTable = (points: readonly ResultPoint[]): string =>
   [
     HEADS,
     ...points.map((point) => [
-      point.frequencyHz / 1e6,
+      hzToMhz(point.frequencyHz),
       point.detector,
       point.levelDbuvPerM,
       point.limitDbuvPerM,

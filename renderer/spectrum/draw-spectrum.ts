@@ -6,6 +6,7 @@ import { standingOf } from '../../app/report/verdict.ts';
 import { drawMark } from '../components/marks/draw-mark.ts';
 import type { Measurement } from '../state/app-store.ts';
 import type { Palette } from '../theme/palette.ts';
+import { vertical } from './strokes.ts';
 
 export interface SpectrumScene {
   readonly points: readonly ResultPoint[];
@@ -179,22 +180,6 @@ function drawShare(
     vertical(ctx, palette.color('category-1'), 2, x(point.frequencyHz), Math.min(top, bottom), bottom);
     ctx.fillRect(x(point.frequencyHz) - 3, top - 1, 6, 2);
   }
-}
-
-function vertical(
-  ctx: CanvasRenderingContext2D,
-  color: string,
-  width: number,
-  x: number,
-  y1: number,
-  y2: number,
-): void {
-  ctx.strokeStyle = color;
-  ctx.lineWidth = width;
-  ctx.beginPath();
-  ctx.moveTo(x, y1);
-  ctx.lineTo(x, y2);
-  ctx.stroke();
 }
 
 function dash(ctx: CanvasRenderingContext2D, color: string, x: number, y: number): void {

@@ -5,6 +5,7 @@ import { drawMark } from '../components/marks/draw-mark.ts';
 import { frequencyText, marginText } from '../i18n/format.ts';
 import type { Palette } from '../theme/palette.ts';
 import type { StripTick } from './strip-ticks.ts';
+import { vertical } from './strokes.ts';
 import type { Zoom } from './zoom.ts';
 
 export interface StripScene {
@@ -151,22 +152,6 @@ function drawShown(
   context.fillRect(isLeft ? x - width - 10 : x + 6, 0, width + 4, 13);
   context.fillStyle = palette.color('ink');
   context.fillText(text, isLeft ? x - width - 8 : x + 8, 10);
-}
-
-function vertical(
-  context: CanvasRenderingContext2D,
-  color: string,
-  width: number,
-  x: number,
-  y1: number,
-  y2: number,
-): void {
-  context.strokeStyle = color;
-  context.lineWidth = width;
-  context.beginPath();
-  context.moveTo(x, y1);
-  context.lineTo(x, y2);
-  context.stroke();
 }
 
 function horizontal(context: CanvasRenderingContext2D, color: string, x1: number, x2: number, y: number): void {

@@ -2,9 +2,11 @@ import { useVirtualizer } from '@tanstack/react-virtual';
 import { type ReactElement, useMemo, useRef, useState } from 'react';
 import type { ResultPoint } from '../../app/estimate/result.ts';
 import { countText, degreesText } from '../../app/report/format.ts';
+import { DETECTOR_SHORT } from '../../app/report/text-table.ts';
 import { standingOf } from '../../app/report/verdict.ts';
 import { Button } from '../components/button.tsx';
 import { StandingMark } from '../components/marks/standing-mark.tsx';
+import { RowSpacer } from '../components/row-spacer.tsx';
 import { Cell, HeadCell, Row, Table } from '../components/table.tsx';
 import { frequencyText, levelText, marginText } from '../i18n/format.ts';
 import { useSelection } from '../state/hooks.ts';
@@ -16,7 +18,6 @@ import { useLimits } from './use-limits.ts';
 import { useZoom } from './zoom.ts';
 
 const ROW_PX = 31;
-const DETECTOR_WORDS = { 'quasi-peak': 'QP', average: 'AV', peak: 'PK' } as const;
 type Order = 'frequency' | 'margin';
 
 export interface LineListProps {
@@ -73,7 +74,7 @@ export function LineList({ points, onSaid }: LineListProps): ReactElement {
           </tr>
         </thead>
         <tbody>
-          {above > 0 && <Spacer heightPx={above} />}
+          {above > 0 && <RowSpacer columns={9} heightPx={above} />}
           {items.map(({ index }) => {
             const point = rows[index]!;
             return (
@@ -86,7 +87,7 @@ export function LineList({ points, onSaid }: LineListProps): ReactElement {
                     {frequencyText(point.frequencyHz)}
                   </Button>
                 </Cell>
-                <Cell>{DETECTOR_WORDS[point.detector]}</Cell>
+                <Cell>{DETECTOR_SHORT[point.detector]}</Cell>
                 <Cell isNumber>{levelText(point.levelDbuvPerM)}</Cell>
                 <Cell isNumber>{levelText(point.limitDbuvPerM)}</Cell>
                 <Cell isNumber>
@@ -99,7 +100,7 @@ export function LineList({ points, onSaid }: LineListProps): ReactElement {
               </Row>
             );
           })}
-          {below > 0 && <Spacer heightPx={below} />}
+          {below > 0 && <RowSpacer columns={9} heightPx={below} />}
         </tbody>
       </Table>
       <Button
@@ -115,9 +116,3 @@ export function LineList({ points, onSaid }: LineListProps): ReactElement {
     </div>
   );
 }
-
-const Spacer = ({ heightPx }: { readonly heightPx: number }): ReactElement => (
-  <tr>
-    <td colSpan={9} style={{ height: heightPx, padding: 0 }} />
-  </tr>
-);

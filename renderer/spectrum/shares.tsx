@@ -148,7 +148,7 @@ const Bar = ({
   readonly strongest: number;
   readonly isPath?: boolean;
 }): ReactElement => (
-  <span className={css.bar2} data-path={isPath || undefined}>
+  <span className={css.level} data-path={isPath || undefined}>
     <span className={css.track}>
       <span
         className={css.fill}

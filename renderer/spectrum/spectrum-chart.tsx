@@ -10,7 +10,7 @@ import {
 } from 'chart.js';
 import { type MouseEvent, type ReactElement, useEffect, useMemo, useRef, useState, type WheelEvent } from 'react';
 import { Scatter } from 'react-chartjs-2';
-import type { Detector, ResultPoint } from '../../app/estimate/result.ts';
+import type { ResultPoint } from '../../app/estimate/result.ts';
 import { frequencyTicks } from '../../app/report/figures/axis.ts';
 import { countText } from '../../app/report/format.ts';
 import { ContextMenu } from '../components/menu.tsx';
@@ -173,12 +173,6 @@ function labelOf(points: readonly ResultPoint[], chosen: ResultPoint | null): st
   return `Spectrum of ${countText(points.length, 'reading')}. ${chosen === null ? 'Worst' : 'Chosen'}: ${frequencyText(about.frequencyHz)}, ${levelText(about.levelDbuvPerM)} dBµV/m, margin ${marginText(about.marginDb)} dB`;
 }
 
-const DETECTOR_WORDS: Readonly<Record<Detector, string>> = {
-  'quasi-peak': 'quasi-peak',
-  average: 'average',
-  peak: 'peak',
-};
-
 function optionsOf(
   palette: Palette,
   [fromHz, toHz]: readonly [number, number],
@@ -221,7 +215,7 @@ function optionsOf(
             if (point === undefined) return '';
             const [main] = point.contributors;
             return [
-              `${frequencyText(point.frequencyHz)}, ${DETECTOR_WORDS[point.detector]}`,
+              `${frequencyText(point.frequencyHz)}, ${point.detector}`,
               `${levelText(point.levelDbuvPerM)} dBµV/m, margin ${marginText(point.marginDb)} dB`,
               ...(main === undefined ? [] : [`mainly ${main.name}`]),
             ];

@@ -72,23 +72,28 @@ const BOARDS: readonly Expected[] = [
   },
 ];
 
-describe.each(BOARDS)('$file', (expected) => {
-  const url = new URL(expected.file, FOLDER);
-  if (!existsSync(url)) {
-    console.warn(`not tested, example data is absent: ${expected.file}`);
-    it.todo('needs the example data');
-    return;
-  }
-  const imported = importBoard(url.pathname);
+for (const expected of BOARDS) {
+  const { pathname } = new URL(expected.file, FOLDER);
+  const isMissing = !existsSync(pathname);
+  if (isMissing) console.warn(`not tested, example data is absent: ${expected.file}`);
+  describe.skipIf(isMissing)(expected.file, () => checkBoard(pathname, expected));
+}
+
+function checkBoard(pathname: string, expected: (typeof BOARDS)[number]): void {
+  let once: ReturnType<typeof importBoard> | undefined;
+  const imported = () => {
+    once ??= importBoard(pathname);
+    return once;
+  };
 
   it('has the counts of the README', async () => {
-    const { summary } = await imported;
+    const { summary } = await imported();
     expect(summary).toMatchObject({ ...expected.counts, source: { format: 'IPC-2581', ...expected.source } });
     expect(summary.boardMm).toEqual(expected.boardMm);
   });
 
   it('has the lengths of the README, longest first', async () => {
-    const { summary } = await imported;
+    const { summary } = await imported();
     expect(Math.abs(summary.traceLengthMm - expected.traceLengthMm)).toBeLessThanOrEqual(0.05);
     const lengths = new Map(summary.netLengths.map(({ name, lengthMm }) => [name, lengthMm]));
     for (const [name, lengthMm] of Object.entries(expected.netLengthsMm)) {
@@ -100,7 +105,7 @@ describe.each(BOARDS)('$file', (expected) => {
   });
 
   it('keeps every segment on its layer', async () => {
-    const { board } = await imported;
+    const { board } = await imported();
     const traces = board.nets.flatMap((net) => net.traces ?? []);
     const lengthByLayer = new Map<string, number>();
     for (const { layer, pointsMm } of traces)
@@ -116,7 +121,7 @@ describe.each(BOARDS)('$file', (expected) => {
   });
 
   it('has the stackup of the README', async () => {
-    const { board } = await imported;
+    const { board } = await imported();
     const coppers = board.stackup.filter(({ kind }) => kind === 'copper').map(({ thicknessMm }) => thicknessMm);
     expect(coppers).toEqual(expected.coppersMm);
     const dielectrics = board.stackup.flatMap((row) =>
@@ -126,7 +131,7 @@ describe.each(BOARDS)('$file', (expected) => {
   });
 
   it('is a valid board file that lies in its outline', async () => {
-    const { board } = await imported;
+    const { board } = await imported();
     expect(toBoard(boardFileSchema.parse(board)).board.nets).toHaveLength(expected.counts.nets!);
     const coppers = new Set(board.stackup.filter(({ kind }) => kind === 'copper').map(({ name }) => name));
     const placed = [...board.nets.flatMap((net) => [...(net.traces ?? []), ...(net.pins ?? [])]), ...board.planes!];
@@ -142,4 +147,4 @@ describe.each(BOARDS)('$file', (expected) => {
       expect(y).toBeLessThanOrEqual(Math.max(...ys));
     }
   });
-});
+}
